@@ -1,0 +1,101 @@
+/**
+ * How results show themselves: decimal text from a logarithm, and the bundles that notebooks draw.
+ *
+ * A number whose logarithm is L with error e has about -log10(e) digits, so text never shows more
+ * digits than the result has, and at most twelve.
+ */
+
+/** Representations of one value, keyed by media type. */
+export interface DisplayBundle {
+  /** Plain text. */
+  readonly 'text/plain': string;
+  /** Markdown. */
+  readonly 'text/markdown': string;
+  /** HTML. */
+  readonly 'text/html': string;
+}
+
+/** Most significant digits ever shown. */
+const MAX_DIGITS = 12;
+
+/** Digits that a relative error leaves, from 1 to 12. */
+function digitsFor(relativeError: number): number {
+  if (!(relativeError > 0)) return MAX_DIGITS;
+  const digits = Math.floor(-Math.log(relativeError) / Math.LN10);
+  return Math.max(1, Math.min(MAX_DIGITS, digits));
+}
+
+/** A double to at most twelve significant digits, without trailing zeros. */
+export function formatNumber(value: number, relativeError = 0): string {
+  const text = value.toPrecision(digitsFor(relativeError));
+  if (!text.includes('.')) return text;
+  return text.replace(/\.?0+(?=e|$)/, '');
+}
+
+/** The positive number with natural logarithm `log`, in decimal, far beyond the range of doubles. */
+export function formatExponential(log: number, logError = 0): string {
+  if (log === Number.NEGATIVE_INFINITY) return '0';
+  if (log === Number.POSITIVE_INFINITY) return 'Infinity';
+  const error = logError + Math.abs(log) * 2.3e-16;
+  if (Math.abs(log) < 700) return formatNumber(Math.exp(log), error);
+  // Beyond 1e15 not even the exponent's last digit is known.
+  if (!(error < 1)) return `exp(${formatNumber(log)})`;
+  const decimal = log / Math.LN10;
+  let exponent = Math.floor(decimal);
+  const digits = digitsFor(error);
+  let mantissa = Math.exp((decimal - exponent) * Math.LN10).toPrecision(digits);
+  if (mantissa.startsWith('10')) {
+    mantissa = (1).toPrecision(digits);
+    exponent++;
+  }
+  if (mantissa.includes('.')) mantissa = mantissa.replace(/\.?0+$/, '');
+  return `${mantissa}e${exponent < 0 ? '-' : '+'}${Math.abs(exponent)}`;
+}
+
+/** A named quantity in the table that a notebook shows. */
+export type DisplayRow = readonly [name: string, value: string];
+
+/** A bundle with a one-line text and, in Markdown and HTML, a table of named quantities. */
+function displayTable(text: string, rows: readonly DisplayRow[]): DisplayBundle {
+  const markdown = rows.map(([name, value]) => `| ${name} | ${value} |`).join('\n');
+  const html = rows.map(([name, value]) => `<tr><th>${name}</th><td>${value}</td></tr>`).join('');
+  return {
+    'text/plain': text,
+    'text/markdown': `| | ${text} |\n| --- | --- |\n${markdown}`,
+    'text/html': `<table><caption>${text}</caption><tbody>${html}</tbody></table>`,
+  };
+}
+
+abstract class ShownResult {
+  abstract toString(): string;
+
+  /** @internal The rows of the table that a notebook shows. */
+  abstract displayRows(): readonly DisplayRow[];
+
+  /** Text for a string hint; any arithmetic or comparison throws, so that no tail is lost by accident. */
+  [Symbol.toPrimitive](hint: string): string {
+    if (hint === 'string') return this.toString();
+    throw new TypeError('not a plain number: read a field such as .value, .complement or .log');
+  }
+}
+
+// A notebook kernel finds the method under a registered symbol, which a class body cannot name with
+// explicit types; attaching it inside a pure call keeps unused classes out of bundles.
+function withNotebookDisplay(base: typeof ShownResult): typeof ShownResult {
+  Object.defineProperty(base.prototype, Symbol.for('Jupyter.display'), {
+    value(this: ShownResult): DisplayBundle {
+      return displayTable(this.toString(), this.displayRows());
+    },
+  });
+  return base;
+}
+
+/**
+ * A result that shows itself in notebooks and refuses to be used as a plain number.
+ */
+export const Displayable: typeof ShownResult = /* @__PURE__ */ withNotebookDisplay(ShownResult);
+
+/** A number as JSON can hold it: infinities become strings. */
+export function toPlainNumber(value: number): number | string {
+  return Number.isFinite(value) ? value : String(value);
+}

@@ -1,0 +1,314 @@
+/**
+ * A probability with both tails.
+ *
+ * The four numbers are stored, none is derived from another where that would lose digits: a
+ * probability of 1 - 1e-300 keeps its complement, and one of e^-1000000 its logarithm.
+ */
+import {
+  Displayable,
+  type DisplayRow,
+  formatExponential,
+  formatNumber,
+  toPlainNumber,
+} from './display.ts';
+import { checkNumber, DomainError } from './domain.ts';
+
+/** The data of a {@link Probability}, as JSON holds it: `-Infinity` is the string `"-Infinity"`. */
+export interface PlainProbability {
+  /** Always `'probability'`. */
+  readonly kind: 'probability';
+  /** The probability. */
+  readonly value: number;
+  /** One minus the probability. */
+  readonly complement: number;
+  /** Natural logarithm of the probability. */
+  readonly log: number | string;
+  /** Natural logarithm of the complement. */
+  readonly logComplement: number | string;
+  /** Bound on the absolute error of the logarithm of the smaller tail. */
+  readonly logError: number | string;
+}
+
+/** What {@link Probability.of} takes: the four numbers and, if known, their error. */
+export interface ProbabilityFields {
+  /** The probability, from 0 to 1. */
+  readonly value: number;
+  /** One minus the probability, from 0 to 1. */
+  readonly complement: number;
+  /** Natural logarithm of the probability, at most 0. */
+  readonly log: number;
+  /** Natural logarithm of the complement, at most 0. */
+  readonly logComplement: number;
+  /** Bound on the absolute error of the logarithm of the smaller tail; 0 if left out. */
+  readonly logError?: number;
+}
+
+/**
+ * A probability that keeps both tails and their logarithms.
+ *
+ * Compare on a field (`p.value < 0.05`, `p.complement <= 1e-12`, `p.log < -1000`): the object
+ * itself refuses arithmetic and comparison, so no tail is lost by accident.
+ *
+ * @example
+ * ```ts
+ * import { originInHull } from 'hullgauge';
+ * const p = originInHull({ n: 10, d: 3 });
+ * p.value; // => 0.91015625
+ * p.complement; // => 0.08984375
+ * `${originInHull({ n: 4000, d: 3 })}`; // => '1 - 1.21300519733e-1197'
+ * ```
+ */
+export class Probability extends Displayable {
+  /** Always `'probability'`; tells the type without `instanceof`. */
+  readonly kind = 'probability' as const;
+  /** The probability. */
+  readonly value: number;
+  /** One minus the probability, not computed by subtraction where that loses digits. */
+  readonly complement: number;
+  /** Natural logarithm of the probability; `-Infinity` for 0. */
+  readonly log: number;
+  /** Natural logarithm of the complement; `-Infinity` for a certain event. */
+  readonly logComplement: number;
+  /**
+   * Bound on the absolute error of the logarithm of the smaller tail: when small, the relative
+   * error of that tail. `Infinity` where the tail is known to be below every double's logarithm.
+   */
+  readonly logError: number;
+
+  /** @internal Checks nothing: outside this file use the static methods. */
+  constructor(
+    value: number,
+    complement: number,
+    log: number,
+    logComplement: number,
+    logError: number,
+  ) {
+    super();
+    this.value = value;
+    this.complement = complement;
+    this.log = log;
+    this.logComplement = logComplement;
+    this.logError = logError;
+  }
+
+  /**
+   * Builds a probability from its four numbers.
+   *
+   * @param fields - value and complement in [0, 1], their logarithms at most 0, `logError` >= 0
+   * @returns the probability
+   * @throws A {@link DomainError} if a field is out of range or the four contradict each other
+   */
+  static of(fields: ProbabilityFields): Probability {
+    const fn = 'Probability.of';
+    if (typeof fields !== 'object' || fields === null) {
+      throw new DomainError(fn, 'fields', 'an object with the four numbers', fields);
+    }
+    const { value, complement, log, logComplement, logError = 0 } = fields;
+    checkNumber(fn, 'value', value, 0, 1);
+    checkNumber(fn, 'complement', complement, 0, 1);
+    checkNumber(fn, 'log', log, Number.NEGATIVE_INFINITY, 0);
+    checkNumber(fn, 'logComplement', logComplement, Number.NEGATIVE_INFINITY, 0);
+    checkNumber(fn, 'logError', logError, 0);
+    const slack = 1e-9;
+    if (Math.abs(value + complement - 1) > slack) {
+      throw new DomainError(fn, 'complement', `1 - value (value is ${value})`, complement);
+    }
+    if (Math.abs(Math.exp(log) - value) > slack * value + Number.MIN_VALUE) {
+      throw new DomainError(fn, 'log', `the logarithm of value (value is ${value})`, log);
+    }
+    if (Math.abs(Math.exp(logComplement) - complement) > slack * complement + Number.MIN_VALUE) {
+      const requirement = `the logarithm of complement (complement is ${complement})`;
+      throw new DomainError(fn, 'logComplement', requirement, logComplement);
+    }
+    return new Probability(value, complement, log, logComplement, logError);
+  }
+
+  /**
+   * The probability whose natural logarithm is given.
+   *
+   * @param log - at most 0; `-Infinity` for an impossible event
+   * @param logError - bound on the absolute error of the logarithm of the smaller tail; 0 if left out
+   * @returns the probability, with the complement to full relative accuracy
+   * @throws A {@link DomainError} if `log` is positive or NaN, or `logError` negative or NaN
+   *
+   * @example
+   * ```ts
+   * import { Probability } from 'hullgauge';
+   * Probability.fromLog(-2000).value; // => 0
+   * `${Probability.fromLog(-2000)}`; // => '2.58153722149e-869'
+   * ```
+   */
+  static fromLog(log: number, logError = 0): Probability {
+    checkNumber('Probability.fromLog', 'log', log, Number.NEGATIVE_INFINITY, 0);
+    checkNumber('Probability.fromLog', 'logError', logError, 0);
+    return new Probability(
+      Math.exp(log),
+      -Math.expm1(log) || 0,
+      log,
+      logOfComplement(log),
+      logError,
+    );
+  }
+
+  /**
+   * The probability whose complement has the given natural logarithm.
+   *
+   * @param logComplement - at most 0; `-Infinity` for a certain event
+   * @param logError - bound on the absolute error of the logarithm of the smaller tail; 0 if left out
+   * @returns the probability, with the value to full relative accuracy
+   * @throws A {@link DomainError} if `logComplement` is positive or NaN, or `logError` negative or NaN
+   */
+  static fromLogComplement(logComplement: number, logError = 0): Probability {
+    const fn = 'Probability.fromLogComplement';
+    checkNumber(fn, 'logComplement', logComplement, Number.NEGATIVE_INFINITY, 0);
+    checkNumber(fn, 'logError', logError, 0);
+    return complementOf(Probability.fromLog(logComplement, logError));
+  }
+
+  /**
+   * The probability equal to a double.
+   *
+   * @param value - a number from 0 to 1
+   * @param logError - bound on the absolute error of the logarithm of the smaller tail; 0 if left out
+   * @returns the probability
+   * @throws A {@link DomainError} if `value` is outside [0, 1] or NaN, or `logError` negative or NaN
+   */
+  static fromValue(value: number, logError = 0): Probability {
+    checkNumber('Probability.fromValue', 'value', value, 0, 1);
+    checkNumber('Probability.fromValue', 'logError', logError, 0);
+    return new Probability(value, 1 - value, Math.log(value), Math.log1p(-value) || 0, logError);
+  }
+
+  /**
+   * The probability whose complement equals a double: the way to write 1 - 1e-300.
+   *
+   * @param complement - a number from 0 to 1
+   * @param logError - bound on the absolute error of the logarithm of the smaller tail; 0 if left out
+   * @returns the probability
+   * @throws A {@link DomainError} if `complement` is outside [0, 1] or NaN, or `logError` negative or NaN
+   *
+   * @example
+   * ```ts
+   * import { Probability } from 'hullgauge';
+   * import { normalQuantile } from 'hullgauge/special';
+   * normalQuantile(Probability.fromComplement(1e-300)).toPrecision(12); // => '37.0470964993'
+   * ```
+   */
+  static fromComplement(complement: number, logError = 0): Probability {
+    checkNumber('Probability.fromComplement', 'complement', complement, 0, 1);
+    return complementOf(Probability.fromValue(complement, logError));
+  }
+
+  /**
+   * Restores a probability from JSON, a structured clone or another copy of this library.
+   *
+   * @param plain - an object with `kind: 'probability'` and the five numbers
+   * @returns the probability
+   * @throws A {@link DomainError} if `plain` is not such an object
+   *
+   * @example
+   * ```ts
+   * import { Probability } from 'hullgauge';
+   * const text = JSON.stringify(Probability.fromLog(-Infinity));
+   * Probability.from(JSON.parse(text)).complement; // => 1
+   * ```
+   */
+  static from(plain: PlainProbability | Probability): Probability {
+    if (!isProbability(plain)) {
+      throw new DomainError('Probability.from', 'plain', "an object of kind 'probability'", plain);
+    }
+    return Probability.of({
+      value: plain.value,
+      complement: plain.complement,
+      log: Number(plain.log),
+      logComplement: Number(plain.logComplement),
+      logError: Number(plain.logError),
+    });
+  }
+
+  /** Up to twelve digits; a probability within a millionth of 1 is written as `1 - complement`. */
+  override toString(): string {
+    if (this.complement < 1e-6) {
+      if (this.logComplement === Number.NEGATIVE_INFINITY && this.logError === 0) return '1';
+      return `1 - ${tailText(this.complement, this.logComplement, this.logError)}`;
+    }
+    return this.value <= 0.5
+      ? tailText(this.value, this.log, this.logError)
+      : formatNumber(this.value);
+  }
+
+  /** The stored numbers, with `-Infinity` as a string. */
+  toJSON(): PlainProbability {
+    return {
+      kind: this.kind,
+      value: this.value,
+      complement: this.complement,
+      log: toPlainNumber(this.log),
+      logComplement: toPlainNumber(this.logComplement),
+      logError: toPlainNumber(this.logError),
+    };
+  }
+
+  /** @internal */
+  override displayRows(): readonly DisplayRow[] {
+    return [
+      ['value', tailText(this.value, this.log, this.value <= 0.5 ? this.logError : 0)],
+      [
+        'complement',
+        tailText(this.complement, this.logComplement, this.value > 0.5 ? this.logError : 0),
+      ],
+      ['log', formatNumber(this.log)],
+      ['log of complement', formatNumber(this.logComplement)],
+      ['error of the smaller log', formatNumber(this.logError, 1e-2)],
+    ];
+  }
+}
+
+function tailText(value: number, log: number, logError: number): string {
+  return value > 1e-300 ? formatNumber(value, logError) : formatExponential(log, logError);
+}
+
+/** Whether a value is a probability, from this copy of the library or another, or its plain data. */
+export function isProbability(value: unknown): value is Probability {
+  return (
+    typeof value === 'object' && value !== null && (value as Probability).kind === 'probability'
+  );
+}
+
+/** The probability of the complementary event. */
+export function complementOf(p: Probability): Probability {
+  return new Probability(p.complement, p.value, p.logComplement, p.log, p.logError);
+}
+
+/**
+ * $\ln(1 - e^x)$ for x <= 0, without cancellation and without a check.
+ *
+ * The branches meet at -ln 2: above it 1 - e^x is small and expm1 keeps its digits, below it e^x is
+ * small and log1p does.
+ */
+export function logOfComplement(x: number): number {
+  return x > -Math.LN2 ? Math.log(-Math.expm1(x)) : Math.log1p(-Math.exp(x)) || 0;
+}
+
+/**
+ * Builds a probability from its small tail, which a kernel computed both as a number and as a
+ * logarithm.
+ *
+ * @param tail - value of the small tail; 0 where it underflows
+ * @param logTail - its logarithm, the authority where `tail` underflows
+ * @param side - whether the small tail is the probability itself ('lower') or its complement ('upper')
+ * @param logError - bound on the absolute error of `logTail`
+ */
+export function probabilityFromTail(
+  tail: number,
+  logTail: number,
+  side: 'lower' | 'upper',
+  logError: number,
+): Probability {
+  const other = 1 - tail;
+  // From the number, not its logarithm: exp(logTail) would lose |logTail| ulps.
+  const logOther = Math.log1p(-tail) || 0;
+  return side === 'lower'
+    ? new Probability(tail, other, logTail, logOther, logError)
+    : new Probability(other, tail, logOther, logTail, logError);
+}
