@@ -1,0 +1,177 @@
+/**
+ * Laws of the points: rotation-invariant distributions on R^d, named independently of d.
+ *
+ * A law is plain frozen data, so it survives JSON and structured clones; the functions that take one
+ * say which families they have a formula for.
+ */
+import { checkFinite, checkOptions, checkPositive, DomainError } from './domain.ts';
+
+/**
+ * A law of independent, identically distributed points. Made by {@link gaussian},
+ * {@link uniformBall}, {@link uniformSphere}, {@link betaLaw}, {@link betaPrimeLaw} or
+ * {@link studentT}.
+ */
+export type Law = GaussianLaw | BetaLaw | BetaPrimeLaw | StudentTLaw;
+
+/** The standard normal law; any mean and covariance where a question is affinely invariant. */
+export interface GaussianLaw {
+  /** Always `'law'`. */
+  readonly kind: 'law';
+  /** Always `'gaussian'`. */
+  readonly family: 'gaussian';
+}
+
+/** Density proportional to (1 - |x|^2)^b in the unit ball; b = -1 is the uniform unit sphere. */
+export interface BetaLaw {
+  /** Always `'law'`. */
+  readonly kind: 'law';
+  /** Always `'beta'`. */
+  readonly family: 'beta';
+  /** The exponent, at least -1. */
+  readonly b: number;
+}
+
+/** Density proportional to (1 + |x|^2)^-b on R^d, for b > d/2. */
+export interface BetaPrimeLaw {
+  /** Always `'law'`. */
+  readonly kind: 'law';
+  /** Always `'betaPrime'`. */
+  readonly family: 'betaPrime';
+  /** The exponent, above d/2 in every dimension d in which the law is used. */
+  readonly b: number;
+}
+
+/** Multivariate t: in dimension d the beta-prime law with b = (degreesOfFreedom + d)/2. */
+export interface StudentTLaw {
+  /** Always `'law'`. */
+  readonly kind: 'law';
+  /** Always `'studentT'`. */
+  readonly family: 'studentT';
+  /** Degrees of freedom, positive. */
+  readonly degreesOfFreedom: number;
+}
+
+/** The standard normal law N(0, I) on R^d. */
+export function gaussian(): GaussianLaw {
+  return Object.freeze({ kind: 'law', family: 'gaussian' });
+}
+
+/** The uniform law on the unit ball of R^d. */
+export function uniformBall(): BetaLaw {
+  return betaLaw(0);
+}
+
+/** The uniform law on the unit sphere of R^d. */
+export function uniformSphere(): BetaLaw {
+  return betaLaw(-1);
+}
+
+/**
+ * The law on the unit ball of R^d with density proportional to $(1 - |x|^2)^b$.
+ *
+ * @param b - exponent, finite and at least -1; 0 is the uniform ball, -1 means the uniform sphere
+ * @returns the law
+ * @throws A {@link DomainError} if `b` is out of range
+ *
+ * @example
+ * ```ts
+ * import { betaLaw, uniformSphere } from 'hullgauge';
+ * betaLaw(-1); // => uniformSphere()
+ * ```
+ */
+export function betaLaw(b: number): BetaLaw {
+  checkFinite('betaLaw', 'b', b, -1);
+  return Object.freeze({ kind: 'law', family: 'beta', b });
+}
+
+/**
+ * The law on R^d with density proportional to $(1 + |x|^2)^{-b}$.
+ *
+ * @param b - exponent, finite and positive; every function that takes the law asks for b > d/2
+ * @returns the law
+ * @throws A {@link DomainError} if `b` is out of range
+ */
+export function betaPrimeLaw(b: number): BetaPrimeLaw {
+  checkPositive('betaPrimeLaw', 'b', b);
+  return Object.freeze({ kind: 'law', family: 'betaPrime', b });
+}
+
+/**
+ * The multivariate t law: heavier tails than the Gaussian, which is its limit.
+ *
+ * @param options - `degreesOfFreedom`: positive and finite
+ * @returns the law; in dimension d it is the beta-prime law with b = (degreesOfFreedom + d)/2
+ * @throws A {@link DomainError} if an option is unknown or out of range
+ */
+export function studentT(options: { readonly degreesOfFreedom: number }): StudentTLaw {
+  checkOptions('studentT', options, ['degreesOfFreedom']);
+  const { degreesOfFreedom } = options;
+  checkPositive('studentT', 'degreesOfFreedom', degreesOfFreedom);
+  return Object.freeze({ kind: 'law', family: 'studentT', degreesOfFreedom });
+}
+
+/**
+ * Refuses anything but a valid law of one of the families for which `fn` has a formula in R^d.
+ *
+ * @returns the law with `studentT` resolved to the beta-prime law that it is in R^d
+ */
+export function checkLaw(
+  fn: string,
+  law: unknown,
+  families: readonly ('gaussian' | 'beta' | 'betaPrime')[],
+  d: number,
+): GaussianLaw | BetaLaw | BetaPrimeLaw {
+  if (typeof law !== 'object' || law === null || (law as Law).kind !== 'law') {
+    throw new DomainError(fn, 'law', 'a law such as gaussian() or uniformBall()', law);
+  }
+  const given = law as Law;
+  const resolved: Law =
+    given.family === 'studentT'
+      ? { kind: 'law', family: 'betaPrime', b: (given.degreesOfFreedom + d) / 2 }
+      : given;
+  if (!families.includes(resolved.family as 'gaussian')) {
+    const list = families.map((family) => FAMILY_NAMES[family]).join(' or ');
+    throw new DomainError(
+      fn,
+      'law',
+      `${list} (no formula for other laws here)`,
+      describeLaw(given),
+    );
+  }
+  if (resolved.family === 'beta') checkFinite(fn, 'law.b', resolved.b, -1);
+  if (resolved.family === 'betaPrime' && !(resolved.b > d / 2 && Number.isFinite(resolved.b))) {
+    const parameter = given.family === 'studentT' ? 'law.degreesOfFreedom' : 'law.b';
+    const requirement =
+      given.family === 'studentT' ? 'finite and > 0' : `finite and > d/2 = ${d / 2}`;
+    throw new DomainError(
+      fn,
+      parameter,
+      requirement,
+      given.family === 'studentT' ? given.degreesOfFreedom : resolved.b,
+    );
+  }
+  return resolved as GaussianLaw | BetaLaw | BetaPrimeLaw;
+}
+
+const FAMILY_NAMES = {
+  gaussian: 'gaussian()',
+  beta: 'a beta law (uniformBall(), uniformSphere(), betaLaw(b))',
+  betaPrime: 'a beta-prime law (betaPrimeLaw(b), studentT(...))',
+} as const;
+
+/** A law in words, for titles and error messages. */
+export function describeLaw(law: Law): string {
+  switch (law.family) {
+    case 'gaussian':
+      return 'Gaussian';
+    case 'beta':
+      if (law.b === 0) return 'uniform ball';
+      return law.b === -1 ? 'uniform sphere' : `beta law with b = ${law.b}`;
+    case 'betaPrime':
+      return `beta-prime law with b = ${law.b}`;
+    case 'studentT':
+      return `Student t with ${law.degreesOfFreedom} degrees of freedom`;
+    default:
+      return `law of the unknown family ${String((law as Law).family)}`;
+  }
+}
