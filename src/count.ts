@@ -33,9 +33,9 @@ export function resolveCount(
   }
   if (isLogNumber(value)) {
     const log = Number(value.log);
-    if (log > EXACT_LOG) return { n: Math.exp(log), log };
+    if (log > EXACT_LOG && log < Number.POSITIVE_INFINITY) return { n: Math.exp(log), log };
     const n = Math.round(Math.exp(log));
-    if (n >= min) return { n, log: Math.log(n) };
+    if (n >= min && n <= 2 ** 53) return { n, log: Math.log(n) };
   }
   const shown = isLogNumber(value) ? `a LogNumber with log ${value.log}` : value;
   throw new DomainError(fn, parameter, `an integer >= ${min}`, shown);

@@ -1,0 +1,6 @@
+/**
+ * Intrinsic volumes of convex bodies, ball volumes, the Steiner polynomial.
+ *
+ * @module
+ */
+export {};

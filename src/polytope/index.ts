@@ -1,0 +1,6 @@
+/**
+ * Convex hulls of random points at finite n and d: volume, facets, heights, faces, membership.
+ *
+ * @module
+ */
+export {};
