@@ -1,0 +1,171 @@
+/**
+ * Equicorrelated orthant probabilities and their relatives, as logarithms with error bounds.
+ *
+ * xi, xi_1, xi_2, ... are independent standard normal variables. Every kernel returns the natural
+ * logarithm and writes a bound on its absolute error to `error[0]`; arguments are not checked.
+ *
+ *   logNegativeOrthantKernel(k, kappa, error)      A_k(kappa) = P(all xi_i - mean-like part < 0):
+ *       orthant probability of k variables, Var = 1 + r, Cov = r, r = -1/(k + kappa)
+ *   logPositiveOrthantKernel(N, lambda, error)     B_N(lambda): the same with r = +1/lambda
+ *                                                  = P(all xi_i < xi / sqrt(lambda))
+ *   logHalfOrthantKernel(N, lambda, error)         G+_N = P(all xi_i < xi / sqrt(lambda), xi > 0)
+ *   logAbsoluteOrthantKernel(N, lambda, error)     G+-_N = P(all |xi_i| < xi / sqrt(lambda))
+ *   logAbsoluteSumKernel(M, kappa, error)          C_M = P(|xi_1| + .. + |xi_M| <= sqrt(kappa) xi)
+ *   logOrthantTermKernel(n, logN, j, kappa, kind, error)
+ *       c^j C(n, j) A_j(kappa) E_{n-j}(j + kappa), with E = B, G+ or G+- for the kind 'line', 'half',
+ *       'absolute' and c = 1, 1, 2: assembled so that nothing large cancels, for any n. With kind
+ *       'line' these are, over j = 0..n, two probability vectors of mass 1/2: one on the even j and
+ *       one on the odd.
+ *
+ * k, M, j are integers >= 0 up to about 1e4, kappa and lambda positive reals, N >= 0 an integer.
+ * Sources: Absorption probabilities for Gaussian polytopes and regular spherical simplices, Advances
+ * in Applied Probability 52 (2020), arXiv:1704.04968; The exponentially convergent trapezoidal rule,
+ * SIAM Review 56 (2014), doi 10.1137/130932132.
+ */
+import { log1pmxKernel } from '../special/log-domain.ts';
+import { logNormalCdfKernel } from '../special/normal.ts';
+import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
+import { contourKernel, logScaledTail } from './orthant-contour.ts';
+import { logGaussianFactor, type PeakKind, peakKernel } from './orthant-peak.ts';
+
+export type { PeakKind } from './orthant-peak.ts';
+
+const LOG_TWO_PI = 1.8378770664093455;
+const EPSILON = 2 ** -52;
+
+const CONTOUR: Float64Array = /* @__PURE__ */ new Float64Array(4);
+const PEAK: Float64Array = /* @__PURE__ */ new Float64Array(6);
+
+/** log A_k(kappa). */
+export function logNegativeOrthantKernel(k: number, kappa: number, error: Float64Array): number {
+  error[0] = 0;
+  if (k === 0) return 0;
+  contourKernel(k, kappa, false, CONTOUR);
+  return contourLog(k, kappa, CONTOUR[1] as number, error) + logGaussianFactor(k + kappa);
+}
+
+/** log C_M(kappa). */
+export function logAbsoluteSumKernel(M: number, kappa: number, error: Float64Array): number {
+  error[0] = 0;
+  if (M === 0) return -Math.LN2;
+  contourKernel(M, kappa, true, CONTOUR);
+  return contourLog(M, kappa, (CONTOUR[1] as number) + Math.LN2, error) - LOG_TWO_PI;
+}
+
+/** log of the contour integral in CONTOUR, with the given logarithm in place of log M(-a). */
+function contourLog(k: number, kappa: number, logBase: number, error: Float64Array): number {
+  const a = CONTOUR[0] as number;
+  const power = k * logBase;
+  const square = 0.5 * kappa * a * a;
+  error[0] = (CONTOUR[3] as number) + EPSILON * (4 + 2 * k + 2 * Math.abs(power) + 2 * square);
+  return power + square + (CONTOUR[2] as number);
+}
+
+/** log B_N(lambda). */
+export function logPositiveOrthantKernel(N: number, lambda: number, error: Float64Array): number {
+  return peakLog(N, lambda, 'line', error);
+}
+
+/** log G+_N(lambda). */
+export function logHalfOrthantKernel(N: number, lambda: number, error: Float64Array): number {
+  return peakLog(N, lambda, 'half', error);
+}
+
+/** log G+-_N(lambda). */
+export function logAbsoluteOrthantKernel(N: number, lambda: number, error: Float64Array): number {
+  return peakLog(N, lambda, 'absolute', error);
+}
+
+function peakLog(N: number, lambda: number, kind: PeakKind, error: Float64Array): number {
+  error[0] = 0;
+  if (N === 0) return kind === 'line' ? 0 : -Math.LN2;
+  peakKernel(N, Math.log(N), lambda, kind, PEAK);
+  const y0 = PEAK[0] as number;
+  const power = N * (PEAK[5] as number);
+  const square = 0.5 * lambda * y0 * y0;
+  error[0] = (PEAK[2] as number) + EPSILON * (4 + 3 * Math.abs(power) + 2 * square);
+  return power - square + (PEAK[1] as number) + logGaussianFactor(lambda);
+}
+
+/**
+ * log of c^j C(n, j) A_j(kappa) E_{n-j}(j + kappa) for 0 <= j <= n, see the top of this file.
+ *
+ * At the peak y0 of E with tail q = 1 - F(y0), the factor c^j C(n, j) F(y0)^(n-j) becomes a binomial
+ * probability of the parameter q, and what is left over are ratios of quantities near 1.
+ */
+export function logOrthantTermKernel(
+  n: number,
+  logN: number,
+  j: number,
+  kappa: number,
+  kind: PeakKind,
+  error: Float64Array,
+): number {
+  const lambda = j + kappa;
+  if (j === n) {
+    const log =
+      logNegativeOrthantKernel(j, kappa, error) + (kind === 'absolute' ? j * Math.LN2 : 0);
+    return kind === 'line' ? log : log - Math.LN2;
+  }
+  const rest = n - j;
+  peakKernel(rest, j === 0 || n > 1e290 ? logN : Math.log(rest), lambda, kind, PEAK);
+  const y0 = PEAK[0] as number;
+  const external = PEAK[1] as number;
+  const tail = PEAK[3] as number;
+  const logF0 = PEAK[5] as number;
+  if (j === 0) {
+    const power = n < 1e290 ? n * logF0 : -(PEAK[4] as number);
+    const square = 0.5 * kappa * y0 * y0;
+    error[0] = (PEAK[2] as number) + EPSILON * (4 + 3 * Math.abs(power) + 2 * square);
+    return power - square + external + logGaussianFactor(kappa);
+  }
+  contourKernel(j, kappa, false, CONTOUR);
+  const a = CONTOUR[0] as number;
+  const ratio = j * ((CONTOUR[1] as number) - logScaledTail(y0));
+  const square = 0.5 * kappa * (a - y0) * (a + y0);
+  const binomial = logBinomialWeight(n, logN, j, tail, y0, kind === 'absolute', error);
+  error[0] =
+    (error[0] as number) +
+    (PEAK[2] as number) +
+    (CONTOUR[3] as number) +
+    EPSILON * (8 + 4 * j + 2 * Math.abs(ratio) + 3 * Math.abs(square));
+  return (
+    binomial + ratio + square + external + (CONTOUR[2] as number) + (Math.log(lambda) - LOG_TWO_PI)
+  );
+}
+
+/**
+ * log of C(n, j) q^j (1-q)^(n-j) for 0 < j < n, where q = Q(y0) or 2 Q(y0), in the saddle-point form
+ * that subtracts no large logarithms; n may be `Infinity` with only its logarithm known. Source:
+ * Fast and accurate computation of binomial probabilities (2000).
+ */
+function logBinomialWeight(
+  n: number,
+  logN: number,
+  j: number,
+  q: number,
+  y0: number,
+  doubled: boolean,
+  error: Float64Array,
+): number {
+  const huge = !(n < 1e290);
+  const logMean = huge
+    ? logN + logNormalCdfKernel(-y0) + (doubled ? Math.LN2 : 0)
+    : Math.log(n) + Math.log(q);
+  const mean = huge ? Math.exp(logMean) : n * q;
+  const rest = n - j;
+  const excess = (mean - j) / j;
+  const below = excess < -0.5 ? j * (Math.log(j) - logMean) + mean - j : -j * log1pmxKernel(excess);
+  const above = huge ? 0 : -rest * log1pmxKernel((j - mean) / rest);
+  const meanError = huge ? Math.abs(logN) : 4;
+  error[0] = EPSILON * (8 + 3 * Math.abs(below) + 3 * above + meanError * Math.abs(mean - j));
+  return (
+    stirlingRemainderKernel(n) -
+    stirlingRemainderKernel(j) -
+    stirlingRemainderKernel(rest) -
+    below -
+    above -
+    0.5 * (LOG_TWO_PI + Math.log(j)) -
+    0.5 * (huge ? 0 : Math.log1p(-j / n))
+  );
+}

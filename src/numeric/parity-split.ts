@@ -1,0 +1,103 @@
+/**
+ * Probabilities that are twice every other term of a positive sequence.
+ *
+ * A sequence v_0, v_1, .. whose even and whose odd terms each sum to 1/2 (the intrinsic volumes of a
+ * cone that is not a subspace) splits at an index d into
+ *
+ *   2 (v_(d+1) + v_(d+3) + ..)  and  2 (v_(d-1) + v_(d-3) + ..),
+ *
+ * which sum to 1. Only the smaller side is summed, from the split outwards and in logarithms, until
+ * the terms have fallen by e^-41: a handful to a few hundred terms, whatever the length. The other side
+ * is one minus it, which costs no digits.
+ */
+import { type Probability, probabilityFromTail } from '../probability.ts';
+
+/** Writes a bound on the absolute error of the returned logarithm to `error[0]`. */
+export type LogTerm = (index: number, error: Float64Array) => number;
+
+const EPSILON = 2 ** -52;
+const CUT = 41;
+
+/**
+ * Logarithm of the sum of the terms at start, start + step, .. as far as `end`, for a sequence that
+ * rises at most once and then falls; writes a bound on its absolute error to `error[0]`.
+ */
+export function logOutwardSum(
+  term: LogTerm,
+  start: number,
+  step: number,
+  end: number,
+  error: Float64Array,
+): number {
+  let top = Number.NEGATIVE_INFINITY;
+  let sum = 0;
+  let weightedError = 0;
+  let count = 0;
+  for (let index = start; step > 0 ? index <= end : index >= end; index += step) {
+    const log = term(index, error);
+    count++;
+    if (log > top) {
+      const scale = Math.exp(top - log);
+      sum = sum * scale + 1;
+      weightedError = weightedError * scale + (error[0] as number);
+      top = log;
+      continue;
+    }
+    if (log < top - CUT) break;
+    const share = Math.exp(log - top);
+    sum += share;
+    weightedError += share * (error[0] as number);
+  }
+  if (sum === 0) {
+    error[0] = 0;
+    return Number.NEGATIVE_INFINITY;
+  }
+  error[0] = weightedError / sum + EPSILON * (4 + 0.5 * count);
+  return top + Math.log(sum);
+}
+
+/**
+ * The probability with value 2 (v_(d+1) + v_(d+3) + ..) and complement 2 (v_(d-1) + v_(d-3) + ..).
+ *
+ * @param term - log v_i for first <= i <= last
+ * @param d - the index at which the sequence is split; the value is 0 for d >= last, 1 for d <= first
+ * @param last - last index, `Infinity` allowed
+ */
+export function paritySplit(term: LogTerm, d: number, first: number, last: number): Probability {
+  if (d >= last) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
+  if (d <= first) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  const error = new Float64Array(1);
+  const below = term(d - 1, error) < term(d + 1, error);
+  let side: 'lower' | 'upper' = below ? 'upper' : 'lower';
+  let log = logSide(term, d, first, last, side, error);
+  if (log > MOSTLY) {
+    // the neighbours of the split misled
+    side = side === 'upper' ? 'lower' : 'upper';
+    log = logSide(term, d, first, last, side, error);
+  }
+  // Rounding may lift a sum of nearly everything above 1.
+  log = Math.min(log, 0);
+  const tail = Math.exp(log);
+  // Above 1/2 the tail that was summed is not the small one, and its error counts for more there.
+  const inflation = tail > 0.5 ? tail / (1 - tail) : 1;
+  return probabilityFromTail(tail, log, side, inflation * (error[0] as number));
+}
+
+/** log 0.75 */
+const MOSTLY = -0.2876820724517809;
+
+function logSide(
+  term: LogTerm,
+  d: number,
+  first: number,
+  last: number,
+  side: 'lower' | 'upper',
+  error: Float64Array,
+): number {
+  return (
+    Math.LN2 +
+    (side === 'lower'
+      ? logOutwardSum(term, d + 1, 2, last, error)
+      : logOutwardSum(term, d - 1, -2, first, error))
+  );
+}
