@@ -124,6 +124,17 @@ export function checkPositive(
   throw new DomainError(fn, parameter, requirement, value);
 }
 
+/** Refuses anything but a number above `min`; `Infinity` passes. */
+export function checkAbove(
+  fn: string,
+  parameter: string,
+  value: unknown,
+  min: number,
+): asserts value is number {
+  if (typeof value === 'number' && value > min) return;
+  throw new DomainError(fn, parameter, `a number > ${min}`, value);
+}
+
 /** Refuses anything but `true` or `false`. */
 export function checkBoolean(
   fn: string,

@@ -1,12 +1,16 @@
 /**
- * Error functions of a real argument.
+ * The error function of a real argument, its complement, the scaled complement and Mills' ratio.
  */
 
+import { checkNumber } from '../domain.ts';
 import { productError } from './double-double.ts';
+import { evaluatePolynomial } from './polynomial.ts';
 
-const SQRT_HALF = Math.SQRT1_2;
-
-/** exp(-x^2) with x^2 carried to twice the precision. */
+/**
+ * exp(-x^2), with x^2 carried to twice the precision.
+ *
+ * Squaring in plain double precision would lose x^2 units in the last place: three digits at x = 26.
+ */
 export function expOfMinusSquare(x: number): number {
   const square = x * x;
   if (!(square < 760)) return 0;
@@ -14,7 +18,7 @@ export function expOfMinusSquare(x: number): number {
   return value - value * productError(x, x, square);
 }
 
-/** exp(-x^2/2) with x^2 carried to twice the precision. */
+/** exp(-x^2/2), with x^2 carried to twice the precision. */
 export function expOfMinusHalfSquare(x: number): number {
   const square = x * x;
   if (!(square < 1520)) return 0;
@@ -22,80 +26,89 @@ export function expOfMinusHalfSquare(x: number): number {
   return value - value * (0.5 * productError(x, x, square));
 }
 
-/** exp(x^2) with x^2 carried to twice the precision; Infinity where it overflows. */
-function expOfSquare(x: number): number {
+/** exp(factor x^2) for factor 1 or 1/2; Infinity where it overflows. */
+function expOfSquare(x: number, factor: number): number {
   const square = x * x;
-  if (square > 710) return Number.POSITIVE_INFINITY;
-  const value = Math.exp(square);
-  return value < Number.POSITIVE_INFINITY ? value + value * productError(x, x, square) : value;
+  const value = Math.exp(factor * square);
+  if (value === Number.POSITIVE_INFINITY) return value;
+  return value + value * (factor * productError(x, x, square));
 }
 
-/** exp(x^2) erfc(x). */
-export function erfcxKernel(x: number): number {
-  if (x < 0) return 2 * expOfSquare(x) - erfcxKernel(-x);
-  if (x > 50) {
-    const q = 1 / (x * x);
-    return (
-      (1 -
-        (q / 2) *
-          (1 - ((3 * q) / 2) * (1 - ((5 * q) / 2) * (1 - ((7 * q) / 2) * (1 - (9 * q) / 2))))) /
-      (x * 1.7724538509055160273)
-    );
-  }
-  const t = (x - 3.75) / (x + 3.75);
-  const t2 = 2 * t;
-  let b1 = 0;
-  let b2 = 0;
-  for (let i = CHEBYSHEV.length - 1; i > 0; i--) {
-    const b = t2 * b1 - b2 + (CHEBYSHEV[i] as number);
-    b2 = b1;
-    b1 = b;
-  }
-  return (t * b1 - b2 + (CHEBYSHEV[0] as number)) / (1 + 2 * x);
+export function erf(x: number): number {
+  checkNumber('erf', 'x', x);
+  return erfKernel(x);
 }
 
-const CHEBYSHEV: readonly number[] = [
-  1.177578934567401754080459, -0.004590054580646477330853356, -0.08424913336651791558350624,
-  0.05920993819998189049807705, -0.02665866843530575227738735, 0.009074997670705265093878874,
-  -0.002413163540417608190942522, 0.00049077583652580863228587, -0.00006916973302501206367095533,
-  0.000004139027986073010167533729, 7.740383066198490668632915e-7, -2.188640104923439566148978e-7,
-  1.07649994656709103771365e-8, 4.521959811218286897930918e-9, -7.754400208831351106474482e-10,
-  -6.318088340886684494384997e-11, 2.868795010930669898142463e-11, 1.945586854577734722952947e-13,
-  -9.654696748433438905851145e-13, 3.252548148148739841541959e-14, 3.347811948286805387827033e-14,
-  -1.864562880419313101543793e-15, -1.250795053068864708532095e-15, 7.418235256624043463048281e-17,
-  5.068148904796111316806933e-17, -2.237056659435999597369047e-18, -2.187342944303017664994983e-18,
+/** {@link erf} without checks. */
+export function erfKernel(x: number): number {
+  if (x > 0.5) return 1 - erfcKernel(x);
+  if (x < -0.5) return erfcKernel(-x) - 1;
+  return x * evaluatePolynomial(ERF, x * x);
+}
+
+/** erf(x)/x in powers of x^2, |x| <= 1/2, relative error 4.1e-18. */
+const ERF: readonly number[] = [
+  1.1283791670955126, -0.37612638903183476, 0.11283791670925457, -0.026866170632921085,
+  0.005223977373542183, -0.0008548297798086192, 0.00012053337222877719, -1.4845900896375835e-5,
+  1.4726381680017032e-6,
 ];
 
-/** erf(x). */
-export function erfKernel(x: number): number {
-  if (x >= 0.5) return 1 - erfcKernel(x);
-  if (x <= -0.5) return erfcKernel(-x) - 1;
-  const q = x * x;
-  let s = 0;
-  let factorial = 1;
-  let power = 1;
-  for (let n = 0; n < 14; n++) {
-    s += power / (factorial * (2 * n + 1));
-    power *= -q;
-    factorial *= n + 1;
-  }
-  return 1.1283791670955125739 * x * s;
+export function erfc(x: number): number {
+  checkNumber('erfc', 'x', x);
+  return erfcKernel(x);
 }
 
-/** erfc(x) = 1 - erf(x). */
+/** {@link erfc} without checks. */
 export function erfcKernel(x: number): number {
-  if (x < 0.5) return 1 - erfKernel(x);
+  if (x <= 0.5) return 1 - erfKernel(x);
   return expOfMinusSquare(x) * erfcxKernel(x);
 }
 
-/** Mills' ratio: upper tail of the standard normal law over its density. */
-export function millsRatioKernel(x: number): number {
-  if (x >= 0) return 1.2533141373155002512 * erfcxKernel(x * SQRT_HALF);
-  const square = x * x;
-  if (square > 1420) return Number.POSITIVE_INFINITY;
-  const value = Math.exp(0.5 * square);
-  return (
-    2.5066282746310005024 * (value + value * (0.5 * productError(x, x, square))) -
-    millsRatioKernel(-x)
-  );
+export function erfcx(x: number): number {
+  checkNumber('erfcx', 'x', x);
+  return erfcxKernel(x);
 }
+
+/** {@link erfcx} without checks. */
+export function erfcxKernel(x: number): number {
+  if (x < 0) return 2 * expOfSquare(x, 1) - erfcxKernel(-x);
+  if (x < 12) return evaluatePolynomial(ERFCX, (x - 3.75) / (x + 3.75)) / (1 + 2 * x);
+  const u = 1 / x;
+  return u * INVERSE_SQRT_PI * evaluatePolynomial(ERFCX_LARGE, u * u);
+}
+
+const INVERSE_SQRT_PI = 0.56418958354775628695;
+
+/**
+ * exp(x^2) erfc(x) (1 + 2 x) in powers of (x - 3.75)/(x + 3.75), 0 <= x <= 12, relative error
+ * 5.1e-19. Form: Chebyshev approximation of (1 + 2x) exp(x^2) erfc x in 0 <= x < infinity,
+ * Mathematics of Computation 36 (1981), doi 10.1090/S0025-5718-1981-0595058-X.
+ */
+const ERFCX: readonly number[] = [
+  1.2375126308378275, -0.14024059858554702, 0.0035854154854638902, 0.08227673849015306,
+  -0.10880393014172385, 0.0923043211600852, -0.05869339859006808, 0.028362277424519057,
+  -0.00974657955373895, 0.0017556257884328785, 0.00029371362309187413, -0.00029015360445909153,
+  5.1649524505124445e-5, 2.2382071532850278e-5, -1.1447023976668176e-5, -9.68201174350346e-7,
+  1.7626710854405256e-6, -6.110828632277939e-8, -2.799436531682954e-7, 1.3097928199503119e-8,
+  5.2479178605158024e-8, 1.3747543692327758e-8, 9.127363422029618e-10,
+];
+
+/** exp(x^2) erfc(x) x sqrt(pi) in powers of 1/x^2, x >= 12, relative error 1e-18. */
+const ERFCX_LARGE: readonly number[] = [
+  1.0, -0.499999999999981, 0.7499999999422798, -1.8749999330738412, 6.5624617919801524,
+  -29.519349896661897, 160.34946343231252, -863.4188986947296,
+];
+
+export function millsRatio(x: number): number {
+  checkNumber('millsRatio', 'x', x);
+  return millsRatioKernel(x);
+}
+
+/** {@link millsRatio} without checks. */
+export function millsRatioKernel(x: number): number {
+  if (x >= 0) return SQRT_HALF_PI * erfcxKernel(x * Math.SQRT1_2);
+  return 2 * SQRT_HALF_PI * expOfSquare(x, 0.5) - millsRatioKernel(-x);
+}
+
+/** sqrt(pi/2). */
+const SQRT_HALF_PI = 1.2533141373155002512;

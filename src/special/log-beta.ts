@@ -1,7 +1,10 @@
 /**
  * Logarithms of the beta function, of binomial coefficients and of factorials.
+ *
+ * None is a difference of values of log Gamma: log B(1/1000, 1e15) would be wrong in its first digit.
  */
 
+import { checkAbove, checkFinite, checkInteger, DomainError } from '../domain.ts';
 import { logGamma1pKernel, logGammaKernel, logGammaRatioKernel } from './log-gamma.ts';
 import {
   HALF_LOG_TWO_PI,
@@ -9,12 +12,19 @@ import {
   stirlingRemainderKernel,
 } from './stirling-remainder.ts';
 
-/** log B(a, b) for a, b > 0. */
+export function logBeta(a: number, b: number): number {
+  checkAbove('logBeta', 'a', a, 0);
+  checkAbove('logBeta', 'b', b, 0);
+  return logBetaKernel(a, b);
+}
+
+/** {@link logBeta} without checks. */
 export function logBetaKernel(first: number, second: number): number {
   const a = Math.min(first, second);
   const b = Math.max(first, second);
+  if (b === Number.POSITIVE_INFINITY) return Number.NEGATIVE_INFINITY;
   if (a < 1) return logGamma1pKernel(a) - Math.log(a) - logGammaRatioKernel(b, a);
-  if (a < 10) return logGammaKernel(a) - logGammaRatioKernel(b, a);
+  if (a < 8) return logGammaKernel(a) - logGammaRatioKernel(b, a);
   return (
     HALF_LOG_TWO_PI -
     0.5 * Math.log(a) -
@@ -25,11 +35,20 @@ export function logBetaKernel(first: number, second: number): number {
   );
 }
 
-/** log of the binomial coefficient n over k for 0 <= k <= n, reals. */
+export function logBinomial(n: number, k: number): number {
+  checkFinite('logBinomial', 'n', n, 0);
+  checkFinite('logBinomial', 'k', k, 0);
+  if (k > n) throw new DomainError('logBinomial', 'k', `at most n (n is ${n})`, k);
+  return logBinomialKernel(n, k);
+}
+
+/** {@link logBinomial} without checks. */
 export function logBinomialKernel(n: number, k: number): number {
   const h = Math.min(k, n - k);
   if (h === 0) return 0;
+  if (h === 1) return Math.log(n);
   const g = n - h;
+  // The expansion below has -log(h)/2 and D(h), which cancel for small h.
   if (h < 1) return logGammaRatioKernel(g + 1, h) - logGamma1pKernel(h);
   return (
     h * Math.log(n / h) -
@@ -41,7 +60,16 @@ export function logBinomialKernel(n: number, k: number): number {
   );
 }
 
-/** log n! for an integer n >= 0. */
+export function logFactorial(n: number): number {
+  checkInteger('logFactorial', 'n', n, 0);
+  return logFactorialKernel(n);
+}
+
+/** {@link logFactorial} without checks. */
 export function logFactorialKernel(n: number): number {
-  return logGammaKernel(n + 1);
+  if (n > 22) return logGammaKernel(n + 1);
+  // exact: 22! is the largest factorial that is a double
+  let product = 1;
+  for (let i = 2; i <= n; i++) product *= i;
+  return Math.log(product);
 }

@@ -5,27 +5,64 @@
  * of a non-negative number, so `-Infinity` stands for 0.
  */
 
+import { checkAbove, checkNumber, DomainError } from '../domain.ts';
 import { logOfComplement as log1mExpKernel } from '../probability.ts';
+import { evaluatePolynomial } from './polynomial.ts';
 
 export { log1mExpKernel };
 
-/** log(e^a + e^b). */
+export function log1mExp(x: number): number {
+  checkNumber('log1mExp', 'x', x, Number.NEGATIVE_INFINITY, 0);
+  return log1mExpKernel(x);
+}
+
+export function logAddExp(a: number, b: number): number {
+  checkNumber('logAddExp', 'a', a);
+  checkNumber('logAddExp', 'b', b);
+  return logAddExpKernel(a, b);
+}
+
+/** {@link logAddExp} without checks. */
 export function logAddExpKernel(a: number, b: number): number {
   const larger = Math.max(a, b);
   const smaller = Math.min(a, b);
-  // equal infinities would give NaN in the difference
+  // Two equal infinities would leave NaN as their difference.
   if (smaller === Number.NEGATIVE_INFINITY || larger === Number.POSITIVE_INFINITY) return larger;
   return larger + Math.log1p(Math.exp(smaller - larger));
 }
 
-/** log(e^a - e^b) for a >= b. */
+export function logSubExp(a: number, b: number): number {
+  checkNumber('logSubExp', 'a', a);
+  checkNumber('logSubExp', 'b', b);
+  if (b > a) throw new DomainError('logSubExp', 'b', `at most a (a is ${a})`, b);
+  if (b === Number.POSITIVE_INFINITY) {
+    throw new DomainError('logSubExp', 'b', 'below Infinity', b);
+  }
+  return logSubExpKernel(a, b);
+}
+
+/** {@link logSubExp} without checks. */
 export function logSubExpKernel(a: number, b: number): number {
   if (a === b) return Number.NEGATIVE_INFINITY;
-  if (b === Number.NEGATIVE_INFINITY || a === Number.POSITIVE_INFINITY) return a;
+  if (a === Number.POSITIVE_INFINITY) return a;
   return a + log1mExpKernel(b - a);
 }
 
-/** log(sum of e^v) over an array; -Infinity for an empty one. */
+export function logSumExp(values: ArrayLike<number>): number {
+  const fn = 'logSumExp';
+  if (typeof values !== 'object' || values === null || !Number.isInteger(values.length)) {
+    throw new DomainError(fn, 'values', 'an array of numbers', values);
+  }
+  for (let i = 0; i < values.length; i++) {
+    const value: unknown = values[i];
+    if (typeof value !== 'number' || Number.isNaN(value)) {
+      throw new DomainError(fn, `values[${i}]`, 'a number', value);
+    }
+  }
+  return logSumExpKernel(values);
+}
+
+/** {@link logSumExp} without checks. */
 export function logSumExpKernel(values: ArrayLike<number>): number {
   let largest = Number.NEGATIVE_INFINITY;
   let position = -1;
@@ -37,6 +74,7 @@ export function logSumExpKernel(values: ArrayLike<number>): number {
     }
   }
   if (position < 0 || largest === Number.POSITIVE_INFINITY) return largest;
+  // The largest term is exactly 1 and stays out of the compensated sum of the others.
   let sum = 0;
   let carry = 0;
   for (let i = 0; i < values.length; i++) {
@@ -49,21 +87,45 @@ export function logSumExpKernel(values: ArrayLike<number>): number {
   return largest + Math.log1p(sum);
 }
 
-/** log(1 + t) - t. */
-export function log1pmxKernel(t: number): number {
-  if (t < -0.5 || t > 1) return Math.log1p(t) - t;
-  const r = t / (2 + t);
-  const q = r * r;
-  const terms = q < 1e-4 ? 5 : q < 0.01 ? 9 : q < 0.05 ? 14 : 19;
-  let s = 0;
-  for (let k = terms - 1; k >= 0; k--) s = s * q + 1 / (2 * k + 3);
-  return r * (2 * q * s - t);
+export function log1pmx(x: number): number {
+  checkAbove('log1pmx', 'x', x, -1);
+  return log1pmxKernel(x);
 }
 
-/** e^t - 1 - t. */
-export function expm1mxKernel(t: number): number {
-  if (t <= -0.5 || t >= 0.5) return Math.expm1(t) - t;
-  let s = 0;
-  for (let k = 17; k >= 3; k--) s = ((1 + s) * t) / k;
-  return t * t * 0.5 * (1 + s);
+/** {@link log1pmx} without checks. */
+export function log1pmxKernel(x: number): number {
+  if (x < -0.5 || x > 1) return x < Number.POSITIVE_INFINITY ? Math.log1p(x) - x : -x;
+  const r = x / (2 + x);
+  const q = r * r;
+  // 0 - ... so that the result at -0 is 0, too
+  return 0 - r * (x - 2 * q * evaluatePolynomial(LOG1PMX, q));
 }
+
+/**
+ * (atanh(r)/r - 1)/r^2 in powers of q = r^2, 0 <= q <= 1/9. Its relative error of 1.2e-16 weighs at
+ * most 8 % in log1pmx.
+ */
+const LOG1PMX: readonly number[] = [
+  0.3333333333333333, 0.20000000000007456, 0.1428571428351453, 0.11111111362409382,
+  0.09090894546491375, 0.07692789505129312, 0.06657003641335145, 0.060011469977136564,
+  0.04397433369474833, 0.08087903454072548,
+];
+
+export function expm1mx(x: number): number {
+  checkNumber('expm1mx', 'x', x);
+  return expm1mxKernel(x);
+}
+
+/** {@link expm1mx} without checks. */
+export function expm1mxKernel(x: number): number {
+  if (x >= -1 && x <= 1) return x * x * evaluatePolynomial(EXPM1MX, x);
+  return x < Number.POSITIVE_INFINITY ? Math.expm1(x) - x : x;
+}
+
+/** (e^x - 1 - x)/x^2 in powers of x, |x| <= 1, relative error 1.6e-17. */
+const EXPM1MX: readonly number[] = [
+  0.5, 0.16666666666666666, 0.04166666666666609, 0.008333333333333236, 0.0013888888888981446,
+  0.00019841269841374776, 2.4801587246079535e-5, 2.7557319174038892e-6, 2.7557335072267237e-7,
+  2.5052120586633744e-8, 2.087443527953241e-9, 1.605744835014058e-10, 1.16392040024203e-11,
+  7.753295105383928e-13,
+];

@@ -1,37 +1,30 @@
 /**
- * Logarithm of the gamma function, its ratio, and the ratio without its leading term.
+ * Logarithm of the gamma function and of ratios of two of its values.
+ *
+ * log Gamma keeps its relative accuracy through the zeros 1 and 2, and a ratio is computed as such:
+ * the difference of two rounded values of log Gamma would have no digit where a is far smaller than x.
  */
 
+import { checkAbove, checkFinite, checkPositive, DomainError } from '../domain.ts';
 import { log1pmxKernel } from './log-domain.ts';
+import { evaluatePolynomial } from './polynomial.ts';
 import {
   HALF_LOG_TWO_PI,
+  SMALL,
   stirlingRemainderDifference,
   stirlingRemainderKernel,
 } from './stirling-remainder.ts';
 
-/** log Gamma(2 + z) for |z| <= 1/2. */
-function logGammaAroundTwo(z: number): number {
-  let s = 0;
-  for (let i = ZETA.length - 1; i >= 0; i--) s = s * z + (ZETA[i] as number);
-  return z * (0.42278433509846713939 + z * s);
+export function logGamma(x: number): number {
+  checkAbove('logGamma', 'x', x, 0);
+  return logGammaKernel(x);
 }
 
-const ZETA: readonly number[] = [
-  0.3224670334241132182362, -0.06735230105319809513325, 0.020580808427784547879,
-  -0.007385551028673985266273, 0.002890510330741523285753, -0.001192753911703260977114,
-  0.0005096695247430424223357, -0.0002231547584535793797614, 0.0000994575127818085337146,
-  -0.00004492623673813314170021, 0.00002050721277567069155317, -0.000009439488275268395903987,
-  0.000004374866789907487804182, -0.000002039215753801366236782, 9.551412130407419832857e-7,
-  -4.492469198764566043294e-7, 2.120718480555466586923e-7, -1.004322482396809960872e-7,
-  4.76981016936398056576e-8, -2.271109460894316491032e-8, 1.083865921489695409107e-8,
-  -5.183475041970046655121e-9, 2.483674543802478317185e-9, -1.192140140586091207443e-9,
-  5.73136724167886201333e-10, -2.759522885124233145178e-10, 1.33047643742444894815e-10,
-];
-
-/** log Gamma(x) for x > 0. */
+/** {@link logGamma} without checks. */
 export function logGammaKernel(x: number): number {
-  if (x >= 10)
-    return (x - 0.5) * (Math.log(x) - 1) - 0.5 + HALF_LOG_TWO_PI + stirlingRemainderKernel(x);
+  if (x >= 7) {
+    return (x - 0.5) * (Math.log(x) - 1) + (HALF_LOG_TWO_PI - 0.5) + stirlingRemainderKernel(x);
+  }
   if (x < 0.5) return logGamma1pKernel(x) - Math.log(x);
   if (x < 1.5) return logGammaAroundTwo(x - 1) - Math.log(x);
   let product = 1;
@@ -43,7 +36,26 @@ export function logGammaKernel(x: number): number {
   return Math.log(product) + logGammaAroundTwo(y - 2);
 }
 
-/** log Gamma(1 + x) for x > -1. */
+/** log Gamma(2 + z) for |z| <= 1/2. */
+function logGammaAroundTwo(z: number): number {
+  return z * evaluatePolynomial(AROUND_TWO, z);
+}
+
+/** log Gamma(2 + z)/z in powers of z, |z| <= 1/2, relative error 1.8e-17. */
+const AROUND_TWO: readonly number[] = [
+  0.42278433509846713, 0.32246703342411326, -0.0673523010531956, 0.020580808427780335,
+  -0.007385551028937974, 0.002890510331036772, -0.0011927539009204018, 0.0005096695153484373,
+  -0.00022315497868931946, 9.945767440096764e-5, -4.492371708374659e-5, 2.0505584372896933e-5,
+  -9.456338120610123e-6, 4.3847319318293745e-6, -1.9741884532905586e-6, 9.199898075671394e-7,
+  -5.812501250599261e-7, 2.7880013392491846e-7,
+];
+
+export function logGamma1p(x: number): number {
+  checkAbove('logGamma1p', 'x', x, -1);
+  return logGamma1pKernel(x);
+}
+
+/** {@link logGamma1p} without checks. */
 export function logGamma1pKernel(x: number): number {
   if (x >= -0.5 && x <= 0.5) return logGammaAroundTwo(x) - Math.log1p(x);
   if (x < -0.5) return logGammaKernel(1 + x);
@@ -51,43 +63,56 @@ export function logGamma1pKernel(x: number): number {
   return logGammaKernel(x) + Math.log(x);
 }
 
-/** log Gamma(x + a) - log Gamma(x) for x > 0 and x + a > 0. */
-export function logGammaRatioKernel(x: number, a: number): number {
-  if (a < 0) return -logGammaRatioKernel(x + a, -a);
-  if (x < 10 && a >= 2) return logGammaKernel(x + a) - logGammaKernel(x);
-  let sum = 0;
-  let y = x;
-  while (y < 10) {
-    sum -= Math.log1p(a / y);
-    y += 1;
-  }
-  const t = a / y;
-  if (t < 1) {
-    return (
-      a * Math.log(y) +
-      y * log1pmxKernel(t) +
-      (a - 0.5) * Math.log1p(t) +
-      stirlingRemainderDifference(y, a) +
-      sum
-    );
-  }
-  return (
-    (y + a - 0.5) * Math.log1p(t) + a * (Math.log(y) - 1) + stirlingRemainderDifference(y, a) + sum
-  );
+export function logGammaRatio(x: number, a: number): number {
+  checkPositive('logGammaRatio', 'x', x);
+  checkFinite('logGammaRatio', 'a', a);
+  if (!(x + a > 0)) throw new DomainError('logGammaRatio', 'a', `above -x (x is ${x})`, a);
+  return logGammaRatioKernel(x, a);
 }
 
-/** log Gamma(x + a) - log Gamma(x) - a log x, to full accuracy when a/x is small. */
-export function logGammaRatioExcess(x: number, a: number): number {
-  if (a < 0) return -logGammaRatioExcess(x + a, -a) - a * (Math.log(x) - Math.log(x + a));
-  let sum = 0;
-  let y = x;
-  while (y < 10) {
-    sum -= Math.log1p(a / y);
-    y += 1;
+/** {@link logGammaRatio} without checks. */
+export function logGammaRatioKernel(x: number, a: number): number {
+  if (a < 0) return -logGammaRatioKernel(x + a, -a);
+  if (a <= 8 && x < 1e30 && Number.isInteger(a)) return logRisingFactorial(x, a);
+  if (x < SMALL) return logGammaRatioKernel(x + 1, a) - logOnePlusQuotient(a, x);
+  const t = a / x;
+  const difference = stirlingRemainderDifference(x, a);
+  if (t < 1) {
+    return a * Math.log(x) + (x * log1pmxKernel(t) + (a - 0.5) * Math.log1p(t) + difference);
   }
-  if (y > x) sum += a * Math.log(y / x);
-  const t = a / y;
-  const difference = stirlingRemainderDifference(y, a) + sum;
-  if (t < 1) return y * log1pmxKernel(t) + (a - 0.5) * Math.log1p(t) + difference;
-  return (y + a - 0.5) * Math.log1p(t) - a + difference;
+  return (x + a - 0.5) * Math.log1p(t) + a * (Math.log(x) - 1) + difference;
+}
+
+/**
+ * log Gamma(x + a) - log Gamma(x) - a log x for x > 0, x + a > 0.
+ *
+ * Of the order of a (a - 1)/(2 x) for large x, and to full relative accuracy when a is small, so that
+ * it may be multiplied or divided by a.
+ */
+export function logGammaRatioExcess(x: number, a: number): number {
+  if (a < 0) {
+    const y = x + a;
+    return -logGammaRatioExcess(y, -a) - a * logOnePlusQuotient(-a, y);
+  }
+  if (x < SMALL) {
+    const shift = a * (Math.log1p(x) - Math.log(x));
+    return logGammaRatioExcess(x + 1, a) + shift - logOnePlusQuotient(a, x);
+  }
+  const t = a / x;
+  const difference = stirlingRemainderDifference(x, a);
+  if (t < 1) return x * log1pmxKernel(t) + (a - 0.5) * Math.log1p(t) + difference;
+  return (x + a - 0.5) * Math.log1p(t) - a + difference;
+}
+
+/** log(x (x + 1) ... (x + a - 1)). */
+function logRisingFactorial(x: number, a: number): number {
+  let product = 1;
+  for (let i = 0; i < a; i++) product *= x + i;
+  return Math.log(product);
+}
+
+/** log(1 + a/x), also where the quotient overflows. */
+function logOnePlusQuotient(a: number, x: number): number {
+  const t = a / x;
+  return t < Number.POSITIVE_INFINITY ? Math.log1p(t) : Math.log(a) - Math.log(x);
 }
