@@ -67,7 +67,7 @@ export function peakKernel(
   const line = kind === 'line';
   const h = line
     ? 1 / (1.5 * rootCurvature + 4.2 * y0)
-    : Math.min(0.12, 0.3 / (y0 * rootCurvature));
+    : Math.min(0.08, 1 / (y0 * (2.8 * rootCurvature + 4.2 * y0)));
   let fourth = line ? 1 : y0;
   let second = 0;
   let odd = 0;
