@@ -1,23 +1,25 @@
 /**
  * Equicorrelated orthant probabilities and their relatives, as logarithms with error bounds.
  *
- * xi, xi_1, xi_2, ... are independent standard normal variables. Every kernel returns the natural
- * logarithm and writes a bound on its absolute error to `error[0]`; arguments are not checked.
+ * xi, xi_1, xi_2, .. are independent standard normal variables, eta_1, .., eta_k normal with mean 0,
+ * variance 1 + r and covariance r. Every kernel returns a natural logarithm and writes a bound on its
+ * absolute error to `error[0]`; arguments are not checked.
  *
- *   logNegativeOrthantKernel(k, kappa, error)      A_k(kappa) = P(all xi_i - mean-like part < 0):
- *       orthant probability of k variables, Var = 1 + r, Cov = r, r = -1/(k + kappa)
- *   logPositiveOrthantKernel(N, lambda, error)     B_N(lambda): the same with r = +1/lambda
- *                                                  = P(all xi_i < xi / sqrt(lambda))
- *   logHalfOrthantKernel(N, lambda, error)         G+_N = P(all xi_i < xi / sqrt(lambda), xi > 0)
- *   logAbsoluteOrthantKernel(N, lambda, error)     G+-_N = P(all |xi_i| < xi / sqrt(lambda))
- *   logAbsoluteSumKernel(M, kappa, error)          C_M = P(|xi_1| + .. + |xi_M| <= sqrt(kappa) xi)
- *   logOrthantTermKernel(n, logN, j, kappa, kind, error)
- *       c^j C(n, j) A_j(kappa) E_{n-j}(j + kappa), with E = B, G+ or G+- for the kind 'line', 'half',
- *       'absolute' and c = 1, 1, 2: assembled so that nothing large cancels, for any n. With kind
- *       'line' these are, over j = 0..n, two probability vectors of mass 1/2: one on the even j and
- *       one on the odd.
+ * | kernel | logarithm of |
+ * |---|---|
+ * | logNegativeOrthantKernel(k, kappa, error) | A_k(kappa) = P(all eta_i < 0) at r = -1/(k + kappa) |
+ * | logPositiveOrthantKernel(N, lambda, error) | B_N(lambda) = P(all eta_i < 0) at r = 1/lambda, or P(all xi_i < xi / sqrt(lambda)) |
+ * | logHalfOrthantKernel(N, lambda, error) | G+_N(lambda) = P(all xi_i < xi / sqrt(lambda), xi > 0) |
+ * | logAbsoluteOrthantKernel(N, lambda, error) | G+-_N(lambda) = P(all abs(xi_i) < xi / sqrt(lambda)) |
+ * | logAbsoluteSumKernel(M, kappa, error) | C_M(kappa) = P(sum of abs(xi_i), i = 1..M, <= sqrt(kappa) xi) |
+ * | logOrthantTermKernel(n, logN, j, kappa, kind, error) | c^j C(n, j) A_j(kappa) E_(n-j)(j + kappa) |
  *
- * k, M, j are integers >= 0 up to about 1e4, kappa and lambda positive reals, N >= 0 an integer.
+ * In the last, E = B, G+, G+- and c = 1, 1, 2 for the kinds 'line', 'half', 'absolute'; it is
+ * assembled so that nothing large cancels, for any n. With 'line' the terms over j = 0..n are a parity
+ * sequence (parity-split.ts); orthant-sequences.ts has the three that occur in sparse recovery.
+ *
+ * k, M, j are integers >= 0 up to about 1e4, N an integer >= 0, kappa and lambda positive reals, n an
+ * integer or `Infinity` with only its logarithm logN known.
  * Sources: Absorption probabilities for Gaussian polytopes and regular spherical simplices, Advances
  * in Applied Probability 52 (2020), arXiv:1704.04968; The exponentially convergent trapezoidal rule,
  * SIAM Review 56 (2014), doi 10.1137/130932132.
