@@ -1,0 +1,371 @@
+/**
+ * Tails of long sums of Bernoulli variables by a contour integral.
+ *
+ * With G(t) = E t^K = prod (1 + (t - 1)/(step j)), a ratio of gamma functions of (t - 1)/step,
+ *
+ *   P(K <= k) = mean over |t| = r of G(t) t^-k / (1 - t),   0 < r < 1,
+ *   P(K > k)  = mean over |t| = r of G(t) t^-k / (t - 1),   r > 1.
+ *
+ * The trapezoidal rule with M nodes adds sum over l of P(K <= k + l M) r^(l M), l not 0, and its upper
+ * counterpart; at the saddle these are far below a rounding error once M exceeds 42 standard
+ * deviations of the tilted law. |G(r e^(i theta))| decreases on 0 < theta < pi, so only the nodes
+ * before it has decayed are visited: about 60 whatever the length of the runs. Source: The
+ * exponentially convergent trapezoidal rule, SIAM Review 56 (2014), doi 10.1137/130932132.
+ */
+import { logFactorialKernel } from '../special/log-beta.ts';
+import { logGammaRatioKernel } from '../special/log-gamma.ts';
+import type { BernoulliRun, SumTail } from './poisson-binomial.ts';
+
+const EPSILON = 2 ** -52;
+/** Modulus, relative to the largest, at which nodes are dropped. */
+const NEGLIGIBLE = 1e-19;
+/** Tilts beyond this decay before the contour reaches the left half plane; below, j up to it is enumerated. */
+const ENUMERATED_TILT = 200;
+/** Longest run that may be enumerated at every node, in the far corner where most variables are 1. */
+const LONGEST_PRODUCT = 1e4;
+/** Largest number of variables equal to 0 that Newton's identities handle. */
+const MOST_FAILURES = 1e6;
+
+/** psi(x + length) - psi(x) for x > 0 and length >= 16, to about 1e-14: good enough to place contours. */
+function digammaDifference(x: number, length: number): number {
+  let sum = 0;
+  let y = x;
+  let left = length;
+  while (y < 12) {
+    sum += 1 / y;
+    y += 1;
+    left -= 1;
+  }
+  const z = y + left;
+  const u = 1 / (y * y);
+  const v = 1 / (z * z);
+  const lower = u * (1 / 12 - u * (1 / 120 - u * (1 / 252 - u / 240)));
+  const upper = v * (1 / 12 - v * (1 / 120 - v * (1 / 252 - v / 240)));
+  return sum + Math.log1p(left / y) + (0.5 * left) / (y * z) + lower - upper;
+}
+
+/** Mean of the law tilted by r^K, r > 0: r G'(r)/G(r), between 0 and the number of variables. */
+export function tiltedMean(runs: readonly BernoulliRun[], r: number): number {
+  let mean = 0;
+  for (const { step, from, to, count } of runs) {
+    if (to - from < 16) {
+      for (let j = from; j <= to; j++) mean += (count * r) / (step * j - 1 + r);
+    } else {
+      const first = from + (r - 1) / step;
+      mean += ((count * r) / step) * digammaDifference(first, to + 1 - from);
+    }
+  }
+  return mean;
+}
+
+/** log G(r) for r > 0, and a bound of its rounding error in `error[0]`. */
+function logMoment(runs: readonly BernoulliRun[], r: number, error: Float64Array): number {
+  let sum = 0;
+  let size = 0;
+  for (const { step, from, to, count } of runs) {
+    const a = (r - 1) / step;
+    if (to - from < 16) {
+      for (let j = from; j <= to; j++) {
+        const term = count * Math.log1p((r - 1) / (step * j));
+        sum += term;
+        size += Math.abs(term);
+      }
+    } else {
+      // Whichever pair of gamma ratios is small and does not cancel.
+      const length = to + 1 - from;
+      const upper =
+        count * (a > to ? logGammaRatioKernel(from + a, length) : logGammaRatioKernel(to + 1, a));
+      const lower =
+        count * (a > to ? logGammaRatioKernel(from, length) : logGammaRatioKernel(from, a));
+      sum += upper - lower;
+      size += Math.abs(upper) + Math.abs(lower);
+    }
+  }
+  error[0] = EPSILON * (2 + 2 * size);
+  return sum;
+}
+
+/** The saddle: the minimum over r of G(r) r^-(k + 1/2) / |1 - r| on one side of 1. */
+function saddle(runs: readonly BernoulliRun[], k: number, side: 'lower' | 'upper'): number {
+  // r = 1 -+ e^s covers both ends; the balance is monotone in s.
+  const lower = side === 'lower';
+  let low = lower ? Math.log(1e-20) : -36;
+  let high = lower ? 36 : 90;
+  for (let i = 0; i < 60; i++) {
+    const s = 0.5 * (low + high);
+    // lower: r/(1 - r) = e^s
+    const r = lower ? 1 / (1 + Math.exp(-s)) : 1 + Math.exp(s);
+    const balance = lower ? Math.exp(s) : -r / (r - 1);
+    if (tiltedMean(runs, r) + balance < k + 0.5) low = s;
+    else high = s;
+    if (high - low < 1e-4) break;
+  }
+  const s = 0.5 * (low + high);
+  return lower ? 1 / (1 + Math.exp(-s)) : 1 + Math.exp(s);
+}
+
+const ERROR: Float64Array = /* @__PURE__ */ new Float64Array(1);
+const POINT: Float64Array = /* @__PURE__ */ new Float64Array(2);
+
+/** The smaller of P(K <= k) and P(K > k) for 0 <= k < size. */
+export function contourTail(runs: readonly BernoulliRun[], size: number, k: number): SumTail {
+  const side = k < tiltedMean(runs, 1) ? 'lower' : 'upper';
+  const failures = size - 1 - k;
+  if (side === 'upper' && failures <= Math.min(0.01 * size, MOST_FAILURES)) {
+    return fewFailures(runs, failures);
+  }
+  const r = saddle(runs, k, side);
+  const lift = 1e-3;
+  const deviation = Math.sqrt(
+    (tiltedMean(runs, r * Math.exp(lift)) - tiltedMean(runs, r * Math.exp(-lift))) / (2 * lift),
+  );
+  const moment = logMoment(runs, r, ERROR);
+  const power = k * Math.log(r);
+  const pole = Math.log(Math.abs(1 - r));
+  const base = moment - power - pole;
+  const rounding = (ERROR[0] as number) + EPSILON * (4 + 2 * Math.abs(power) + Math.abs(pole));
+  // Phases of size k theta lose digits that matter only where log P is astronomically large.
+  const phaseError = EPSILON * (8 + (4 * (k + r)) / Math.max(1, deviation));
+  const mean = phaseError < 1e-4 ? circleMean(runs, k, r, deviation) : Number.NaN;
+  const normalised = mean > 0 ? mean : gaussianMean(r, deviation);
+  const far = deviation * Math.abs(1 - r) > 10 * r;
+  const methodError = mean > 0 ? phaseError : (far ? 2 : 0.2 * deviation) / deviation;
+  const log = base + Math.log(normalised);
+  return { tail: Math.exp(log), log, side, logError: rounding + methodError };
+}
+
+/**
+ * P(K > k) where nearly all variables are 1: P(K = size - i) = prod p times the elementary symmetric
+ * polynomial e_i of the odds against, x = step j - 1. Newton's identities, with e_i = P_1^i c_i / i!:
+ * c_i = sum over l of (-1)^(l-1) (P_l/P_1^l) (i-1)!/(i-l)! c_(i-l); terms fall like (i/size)^l.
+ */
+function fewFailures(runs: readonly BernoulliRun[], failures: number): SumTail {
+  let log = 0;
+  let bulk = 0;
+  for (const { step, from, to, count } of runs) {
+    const length = to + 1 - from;
+    const ratio = count * logGammaRatioKernel(from, length);
+    log -= ratio + (step === 2 ? count * length * Math.LN2 : 0);
+    bulk += ratio;
+  }
+  const total = powerSum(runs, 1, 1);
+  const sums = [0, 1];
+  for (let l = 2; l <= 24; l++) sums[l] = powerSum(runs, l, total);
+  const c = new Float64Array(failures + 1);
+  c[0] = 1;
+  for (let i = 1; i <= failures; i++) {
+    let weight = 1;
+    let sum = 0;
+    for (let l = 1; l <= Math.min(i, 24); l++) {
+      const term = weight * (sums[l] as number) * (c[i - l] as number);
+      sum += l % 2 === 1 ? term : -term;
+      if (Math.abs(term) < 1e-18) break;
+      weight *= i - l;
+    }
+    c[i] = sum;
+  }
+  // e_(i-1)/e_i = i c_(i-1)/(P_1 c_i), tiny: the sum over fewer failures is short.
+  let tail = 1;
+  for (let i = failures, term = 1; i > 0; i--) {
+    term *= (i * (c[i - 1] as number)) / (total * (c[i] as number));
+    tail += term;
+    if (term < 1e-17) break;
+  }
+  const logFactor = failures * Math.log(total) - logFactorialKernel(failures);
+  log += logFactor + Math.log((c[failures] as number) * tail);
+  const logError = EPSILON * (8 + 2 * failures + 3 * Math.abs(bulk) + 2 * Math.abs(logFactor));
+  return { tail: Math.exp(log), log, side: 'upper', logError };
+}
+
+/** Sum of (step j - 1)^power / total^power over all variables. */
+function powerSum(runs: readonly BernoulliRun[], power: number, total: number): number {
+  let sum = 0;
+  for (const { step, from, to, count } of runs) {
+    if (to - from < LONGEST_PRODUCT) {
+      for (let j = from; j <= to; j++) sum += count * ((step * j - 1) / total) ** power;
+      continue;
+    }
+    // midpoint rule with its first correction, exact for power 1 and 2; the rest is (to)^-4
+    const low = (step * (from - 0.5) - 1) / total;
+    const high = (step * (to + 0.5) - 1) / total;
+    const size = step / total;
+    const integral = (high ** (power + 1) - low ** (power + 1)) / ((power + 1) * size);
+    const slope = power * size * (high ** (power - 1) - low ** (power - 1));
+    sum += count * (integral + slope / 24);
+  }
+  return sum;
+}
+
+/** Leading order of the mean over the circle at the saddle of a law with a large spread. */
+function gaussianMean(r: number, deviation: number): number {
+  const pole = r / ((1 - r) * (1 - r));
+  return 1 / Math.sqrt(2 * Math.PI * (deviation * deviation + pole));
+}
+
+/** Mean of [G(t)/G(r)] (r/t)^k (1 - r)/(1 - t) over the circle; NaN where it would take too long. */
+function circleMean(
+  runs: readonly BernoulliRun[],
+  k: number,
+  r: number,
+  deviation: number,
+): number {
+  const nodes = 2 * Math.ceil(0.5 * Math.max(64, 42 * deviation, 48 / Math.abs(Math.log(r))));
+  let sum = 1;
+  for (let j = 1; 2 * j <= nodes; j++) {
+    const theta = (2 * Math.PI * j) / nodes;
+    const half = Math.sin(0.5 * theta);
+    const sine = Math.sin(theta);
+    // t - r without cancellation near the real axis
+    const re = -2 * r * half * half;
+    const im = r * sine;
+    if (!addLogRatios(runs, r, re, im, POINT)) return Number.NaN;
+    const modulus = Math.exp(POINT[0] as number);
+    if (modulus < NEGLIGIBLE) break;
+    const phase = (POINT[1] as number) - k * theta;
+    // (1 - r)/(1 - t) = 1/(1 - (t - r)/(1 - r))
+    const poleRe = 1 - re / (1 - r);
+    const poleIm = -im / (1 - r);
+    const term =
+      (modulus * (Math.cos(phase) * poleRe + Math.sin(phase) * poleIm)) /
+      (poleRe * poleRe + poleIm * poleIm);
+    sum += 2 * j === nodes ? term : 2 * term;
+  }
+  return sum / nodes;
+}
+
+/** Writes log [G(r + re + i im)/G(r)], up to multiples of 2 pi i, to out; false if a product would be too long to enumerate. */
+function addLogRatios(
+  runs: readonly BernoulliRun[],
+  r: number,
+  re: number,
+  im: number,
+  out: Float64Array,
+): boolean {
+  out[0] = 0;
+  out[1] = 0;
+  for (const { step, from, to, count } of runs) {
+    const a = (r - 1) / step;
+    const hRe = re / step;
+    const hIm = im / step;
+    const margin = 20 + (r < ENUMERATED_TILT ? Math.ceil((2 * r) / step) : 0);
+    let last = Math.min(to, from + margin);
+    if (last < to && last + a + hRe < 12) last = to;
+    if (last - from > LONGEST_PRODUCT) return false;
+    // the product of 1 + h/(j + a); its logarithm is taken when it has grown or shrunk enough, and at
+    // every factor where many copies would magnify the rounding of a product near 1
+    const often = count > 8;
+    let productRe = 1;
+    let productIm = 0;
+    let logRe = 0;
+    // whole turns do not matter: count is an integer and only cos and sin of the argument are used
+    let argument = 0;
+    for (let j = from; j <= last; j++) {
+      const inverse = 1 / (j + a);
+      const wRe = hRe * inverse;
+      const wIm = hIm * inverse;
+      if (often) {
+        logRe += 0.5 * Math.log1p(wRe * (2 + wRe) + wIm * wIm);
+        argument += Math.atan2(wIm, 1 + wRe);
+        continue;
+      }
+      const nextRe = productRe + (productRe * wRe - productIm * wIm);
+      productIm = productIm + (productRe * wIm + productIm * wRe);
+      productRe = nextRe;
+      const size = Math.abs(productRe) + Math.abs(productIm);
+      if (size < 1e-100 || size > 1e100) {
+        logRe += Math.log(size);
+        productRe /= size;
+        productIm /= size;
+      }
+    }
+    if (!often) {
+      logRe += 0.5 * Math.log(productRe * productRe + productIm * productIm);
+      argument = Math.atan2(productIm, productRe);
+    }
+    out[0] = (out[0] as number) + count * logRe;
+    out[1] = (out[1] as number) + count * argument;
+    if (last < to) {
+      addGammaRatio(last + 1 + a, hRe, hIm, -count, out);
+      addGammaRatio(to + 1 + a, hRe, hIm, count, out);
+      const spread = count * Math.log((to + 1 + a) / (last + 1 + a));
+      out[0] = (out[0] as number) + spread * hRe;
+      out[1] = (out[1] as number) + spread * hIm;
+    }
+  }
+  return true;
+}
+
+/**
+ * Adds factor * [log Gamma(y + h) - log Gamma(y) - h log y] for real y >= 12 and complex h with
+ * |y + h| >= 12 in the right half plane:
+ * y (log(1 + w) - w) + (h - 1/2) log(1 + w) + R(y + h) - R(y), w = h/y, R Stirling's remainder.
+ */
+function addGammaRatio(
+  y: number,
+  hRe: number,
+  hIm: number,
+  factor: number,
+  out: Float64Array,
+): void {
+  const wRe = hRe / y;
+  const wIm = hIm / y;
+  const logRe = 0.5 * Math.log1p(wRe * (2 + wRe) + wIm * wIm);
+  const logIm = Math.atan2(wIm, 1 + wRe);
+  let excessRe: number;
+  let excessIm: number;
+  if (Math.abs(wRe) + Math.abs(wIm) > 0.4) {
+    excessRe = logRe - wRe;
+    excessIm = logIm - wIm;
+  } else {
+    // log(1 + w) - w = -w^2 (1/2 - w/3 + w^2/4 - ...)
+    let sRe = 0;
+    let sIm = 0;
+    for (let m = wRe * wRe + wIm * wIm < 1e-4 ? 10 : 44; m >= 2; m--) {
+      const nextRe = 1 / m - (sRe * wRe - sIm * wIm);
+      sIm = -(sRe * wIm + sIm * wRe);
+      sRe = nextRe;
+    }
+    const squareRe = wRe * wRe - wIm * wIm;
+    const squareIm = 2 * wRe * wIm;
+    excessRe = -(squareRe * sRe - squareIm * sIm);
+    excessIm = -(squareRe * sIm + squareIm * sRe);
+  }
+  // R(y + h) - R(y), R(z) = 1/(12 z) - 1/(360 z^3) + ...
+  const zRe = y + hRe;
+  const norm = zRe * zRe + hIm * hIm;
+  const uRe = zRe / norm;
+  const uIm = -hIm / norm;
+  const vRe = uRe * uRe - uIm * uIm;
+  const vIm = 2 * uRe * uIm;
+  let sRe = 0;
+  let sIm = 0;
+  let real = 0;
+  const v = 1 / (y * y);
+  for (let m = REMAINDER.length - 1; m >= 0; m--) {
+    const coefficient = REMAINDER[m] as number;
+    const nextRe = coefficient + sRe * vRe - sIm * vIm;
+    sIm = sRe * vIm + sIm * vRe;
+    sRe = nextRe;
+    real = coefficient + real * v;
+  }
+  const remainderRe = sRe * uRe - sIm * uIm - real / y;
+  const remainderIm = sRe * uIm + sIm * uRe;
+  const reFactor = hRe - 0.5;
+  out[0] =
+    (out[0] as number) + factor * (y * excessRe + reFactor * logRe - hIm * logIm + remainderRe);
+  out[1] =
+    (out[1] as number) + factor * (y * excessIm + reFactor * logIm + hIm * logRe + remainderIm);
+}
+
+/** B_2m / (2m (2m - 1)), m = 1..9: Stirling's series. */
+const REMAINDER: readonly number[] = [
+  1 / 12,
+  -1 / 360,
+  1 / 1260,
+  -1 / 1680,
+  1 / 1188,
+  -691 / 360360,
+  1 / 156,
+  -3617 / 122400,
+  43867 / 244188,
+];

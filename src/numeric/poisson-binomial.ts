@@ -1,0 +1,185 @@
+/**
+ * Tails of a sum K of independent Bernoulli variables with success probabilities 1/(step j).
+ *
+ * Random walks, bridges and reflection groups all lead to such sums. The variables come in runs of
+ * consecutive j, a run may be repeated, and it may be far longer than anything that can be
+ * enumerated (10^15 steps). Two engines, chosen by the number of variables:
+ *
+ * - up to {@link ENUMERATED} variables: the convolution recurrence, all of whose terms are positive,
+ *   under an exponential tilt where the tail would underflow;
+ * - beyond: the trapezoidal rule on a circle for the generating function (a ratio of gamma
+ *   functions), in `poisson-binomial-contour.ts`.
+ *
+ * The smaller of P(K <= k) and P(K > k) is the one computed, never a difference from 1.
+ */
+import { contourTail, tiltedMean } from './poisson-binomial-contour.ts';
+
+/** `count` copies of independent Bernoulli variables with probabilities 1/(step j), from <= j <= to. */
+export interface BernoulliRun {
+  readonly step: 1 | 2;
+  readonly from: number;
+  readonly to: number;
+  readonly count: number;
+}
+
+/** The smaller tail of a sum at k, and which one it is: P(K <= k) is 'lower', P(K > k) 'upper'. */
+export interface SumTail {
+  readonly tail: number;
+  readonly log: number;
+  readonly side: 'lower' | 'upper';
+  readonly logError: number;
+}
+
+/** Largest number of variables that are enumerated; there the two engines cost about the same. */
+export const ENUMERATED = 300;
+
+/** Tail probabilities below e^-600 are computed under a tilt; above, nothing underflows. */
+const SAFE_LOG = -600;
+const EPSILON = 2 ** -52;
+
+/** Number of variables in the runs. */
+export function runSize(runs: readonly BernoulliRun[]): number {
+  let size = 0;
+  for (const run of runs) size += run.count * Math.max(0, run.to - run.from + 1);
+  return size;
+}
+
+/** The smaller of P(K <= k) and P(K > k) for an integer k. */
+export function poissonBinomialTail(runs: readonly BernoulliRun[], k: number): SumTail {
+  const parts = runs.filter((run) => run.to >= run.from && run.count > 0);
+  const size = runSize(parts);
+  if (k < 0) return { tail: 0, log: Number.NEGATIVE_INFINITY, side: 'lower', logError: 0 };
+  if (k >= size) return { tail: 0, log: Number.NEGATIVE_INFINITY, side: 'upper', logError: 0 };
+  return size <= ENUMERATED ? enumeratedTail(parts, k) : contourTail(parts, size, k);
+}
+
+/** The same by the recurrence; cost quadratic in the number of variables. */
+export function enumeratedTail(runs: readonly BernoulliRun[], k: number): SumTail {
+  const size = runSize(runs);
+  const side = k < tiltedMean(runs, 1) ? 'lower' : 'upper';
+  const plain = tiltedSum(runs, size, k, side, 1);
+  if (plain.log > SAFE_LOG) return plain;
+  // Beyond the extreme values 0 and size the tilt would be 0 or infinite; half a unit away it is not.
+  const target = Math.min(side === 'lower' ? Math.max(k, 0.5) : k + 1, size - 0.5);
+  return tiltedSum(runs, size, k, side, tiltFor(runs, target));
+}
+
+/** The r > 0 at which the tilted mean r G'(r)/G(r) equals the target, to about six digits. */
+function tiltFor(runs: readonly BernoulliRun[], target: number): number {
+  let low = -40;
+  let high = 40;
+  while (high - low > 1e-6) {
+    const middle = 0.5 * (low + high);
+    if (tiltedMean(runs, Math.exp(middle)) < target) low = middle;
+    else high = middle;
+  }
+  return Math.exp(0.5 * (low + high));
+}
+
+/**
+ * P(K <= k) or P(K > k) from the law tilted by r^K. With G(r) = E r^K and b the tilted weights,
+ * P(K = i) = G(r) r^-i b_i.
+ */
+function tiltedSum(
+  runs: readonly BernoulliRun[],
+  size: number,
+  k: number,
+  side: 'lower' | 'upper',
+  r: number,
+): SumTail {
+  const top = side === 'lower' ? k : size;
+  const weights = new Float64Array(top + 1);
+  weights[0] = 1;
+  let filled = 0;
+  let logMoment = 0;
+  let carry = 0;
+  for (const { step, from, to, count } of runs) {
+    for (let j = from; j <= to; j++) {
+      const unlikely = step * j - 1;
+      const success = r / (unlikely + r);
+      const failure = unlikely / (unlikely + r);
+      const term = r === 1 ? 0 : Math.log1p((r - 1) / (step * j)) - carry;
+      for (let copy = 0; copy < count; copy++) {
+        if (filled < top) filled++;
+        for (let i = filled; i > 0; i--) {
+          weights[i] = (weights[i] as number) * failure + (weights[i - 1] as number) * success;
+        }
+        weights[0] = (weights[0] as number) * failure;
+        const next = logMoment + term;
+        carry = next - logMoment - term;
+        logMoment = next;
+      }
+    }
+  }
+  let sum = 0;
+  if (side === 'lower') {
+    for (let i = 0; i <= k; i++) sum = sum * r + (weights[i] as number);
+  } else {
+    for (let i = size; i > k; i--) sum = sum / r + (weights[i] as number);
+  }
+  // sum = sum over i of b_i r^(k-i) on the lower side, of b_i r^(k+1-i) on the upper
+  const shift = r === 1 ? 0 : (side === 'lower' ? k : k + 1) * Math.log(r);
+  const log = logMoment - shift + Math.log(sum);
+  const rounding = EPSILON * (4 + 1.5 * Math.sqrt(size));
+  const logError = rounding + (r === 1 ? 0 : EPSILON * (Math.abs(logMoment) + 2 * Math.abs(shift)));
+  return { tail: r === 1 ? sum : Math.exp(log), log, side, logError };
+}
+
+/**
+ * Logarithms of P(K = i) for i = 0..size, also far beyond the range of doubles.
+ *
+ * The recurrence on significands with a power of two per entry; the scale factor between neighbours is
+ * kept as a number so that the inner loop stays free of logarithms. Cost quadratic in the size.
+ */
+export function logProbabilities(runs: readonly BernoulliRun[]): Float64Array {
+  const size = runSize(runs);
+  const significand = new Float64Array(size + 1);
+  const exponent = new Float64Array(size + 1);
+  /** 2^(exponent[i - 1] - exponent[i]) */
+  const ratio = new Float64Array(size + 1).fill(1);
+  significand[0] = 1;
+  let filled = 0;
+  for (const { step, from, to, count } of runs) {
+    for (let j = from; j <= to; j++) {
+      const success = 1 / (step * j);
+      const failure = (step * j - 1) / (step * j);
+      for (let copy = 0; copy < count; copy++) {
+        filled++;
+        exponent[filled] = exponent[filled - 1] as number;
+        for (let i = filled; i > 0; i--) {
+          significand[i] =
+            (significand[i] as number) * failure +
+            (significand[i - 1] as number) * (ratio[i] as number) * success;
+        }
+        significand[0] = (significand[0] as number) * failure;
+        // An entry shrinks by at most 1/2 per step (the first variable may be certain), so 16 steps
+        // are far from any limit; the newest entry takes its scale at once.
+        if (filled % 16 === 0 || filled === size) rescale(significand, exponent, ratio, filled);
+        else rescale(significand, exponent, ratio, filled, filled);
+      }
+    }
+  }
+  for (let i = 0; i <= size; i++) {
+    significand[i] = Math.log(significand[i] as number) + (exponent[i] as number) * Math.LN2;
+  }
+  return significand;
+}
+
+/** Brings the significands of `first..last` back to [1, 2) and recomputes the ratios. */
+function rescale(
+  significand: Float64Array,
+  exponent: Float64Array,
+  ratio: Float64Array,
+  last: number,
+  first = 0,
+): void {
+  for (let i = first; i <= last; i++) {
+    const value = significand[i] as number;
+    if (value > 0) {
+      const shift = Math.floor(Math.log2(value));
+      significand[i] = value * 2 ** -shift;
+      exponent[i] = (exponent[i] as number) + shift;
+    }
+    if (i > 0) ratio[i] = 2 ** ((exponent[i - 1] as number) - (exponent[i] as number));
+  }
+}
