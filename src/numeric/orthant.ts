@@ -24,6 +24,7 @@
  * in Applied Probability 52 (2020), arXiv:1704.04968; The exponentially convergent trapezoidal rule,
  * SIAM Review 56 (2014), doi 10.1137/130932132.
  */
+import { logBinomialKernel } from '../special/log-beta.ts';
 import { log1pmxKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel } from '../special/normal.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
@@ -34,6 +35,8 @@ export type { PeakKind } from './orthant-peak.ts';
 
 const LOG_TWO_PI = 1.8378770664093455;
 const EPSILON = 2 ** -52;
+/** From here on n is taken from its logarithm. */
+const HUGE_COUNT = 1e290;
 
 const CONTOUR: Float64Array = /* @__PURE__ */ new Float64Array(4);
 const PEAK: Float64Array = /* @__PURE__ */ new Float64Array(6);
@@ -110,13 +113,13 @@ export function logOrthantTermKernel(
     return kind === 'line' ? log : log - Math.LN2;
   }
   const rest = n - j;
-  peakKernel(rest, j === 0 || n > 1e290 ? logN : Math.log(rest), lambda, kind, PEAK);
+  peakKernel(rest, j === 0 || n > HUGE_COUNT ? logN : Math.log(rest), lambda, kind, PEAK);
   const y0 = PEAK[0] as number;
   const external = PEAK[1] as number;
   const tail = PEAK[3] as number;
   const logF0 = PEAK[5] as number;
   if (j === 0) {
-    const power = n < 1e290 ? n * logF0 : -(PEAK[4] as number);
+    const power = n < HUGE_COUNT ? n * logF0 : -(PEAK[4] as number);
     const square = 0.5 * kappa * y0 * y0;
     error[0] = (PEAK[2] as number) + EPSILON * (4 + 3 * Math.abs(power) + 2 * square);
     return power - square + external + logGaussianFactor(kappa);
@@ -137,6 +140,50 @@ export function logOrthantTermKernel(
 }
 
 /**
+ * log of c^m C(n, m) C(m, v) A_(m-v)(v) E_(n-m)(m) for 1 <= v <= m <= n: the terms of expected numbers
+ * of faces, which are c^v C(n, v) times those above but far larger than either factor's rounding.
+ */
+export function logFaceTermKernel(
+  n: number,
+  logN: number,
+  m: number,
+  v: number,
+  kind: PeakKind,
+  error: Float64Array,
+): number {
+  const choices = logBinomialKernel(m, v);
+  const j = m - v;
+  if (m === n) {
+    const log = logNegativeOrthantKernel(j, v, error) + choices;
+    error[0] = (error[0] as number) + EPSILON * (2 + 2 * choices);
+    return kind === 'line' ? log : log + (kind === 'absolute' ? m - 1 : -1) * Math.LN2;
+  }
+  peakKernel(n - m, n > HUGE_COUNT ? logN : Math.log(n - m), m, kind, PEAK);
+  const y0 = PEAK[0] as number;
+  const external = PEAK[1] as number;
+  const logTail = logScaledTail(y0);
+  let internal = 0.5 * (LOG_TWO_PI - Math.log(m));
+  let internalBound = 0;
+  let ratio = -v * logTail;
+  let square = 0;
+  if (j > 0) {
+    contourKernel(j, v, false, CONTOUR);
+    const a = CONTOUR[0] as number;
+    ratio += j * ((CONTOUR[1] as number) - logTail);
+    square = 0.5 * v * a * a;
+    internal = CONTOUR[2] as number;
+    internalBound = CONTOUR[3] as number;
+  }
+  const binomial = logBinomialWeight(n, logN, m, PEAK[3] as number, y0, kind === 'absolute', error);
+  error[0] =
+    (error[0] as number) +
+    (PEAK[2] as number) +
+    internalBound +
+    EPSILON * (8 + 4 * m + 2 * choices + 2 * Math.abs(ratio) + 2 * square);
+  return binomial + choices + ratio + square + external + internal + (Math.log(m) - LOG_TWO_PI);
+}
+
+/**
  * log of C(n, j) q^j (1-q)^(n-j) for 0 < j < n, where q = Q(y0) or 2 Q(y0), in the saddle-point form
  * that subtracts no large logarithms; n may be `Infinity` with only its logarithm known. Source:
  * Fast and accurate computation of binomial probabilities (2000).
@@ -150,7 +197,7 @@ function logBinomialWeight(
   doubled: boolean,
   error: Float64Array,
 ): number {
-  const huge = !(n < 1e290);
+  const huge = !(n < HUGE_COUNT);
   const logMean = huge
     ? logN + logNormalCdfKernel(-y0) + (doubled ? Math.LN2 : 0)
     : Math.log(n) + Math.log(q);
