@@ -290,20 +290,13 @@ function squaredNorm(v: Float64Array, from: number, to: number): number {
   return sum;
 }
 
-/** Rows of a matrix minus a shift, as a set of atoms: row i minus `shift`. */
-export function rowAtoms(
-  rows: Float64Array,
-  count: () => number,
-  d: number,
-  shift: Float64Array,
-): AtomSet {
+/** The first n rows of a matrix with d columns, as atoms. */
+export function rowAtoms(rows: Float64Array, n: number, d: number): AtomSet {
   return {
     dimension: d,
-    lowest: (direction) => lowestRow(rows, count(), d, direction),
+    lowest: (direction) => lowestRow(rows, n, d, direction),
     read: (index, out, start) => {
-      for (let j = 0; j < d; j++) {
-        out[start + j] = (rows[index * d + j] as number) - (shift[j] as number);
-      }
+      for (let j = 0; j < d; j++) out[start + j] = rows[index * d + j] as number;
     },
   };
 }

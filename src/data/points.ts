@@ -1,0 +1,124 @@
+/**
+ * The user's rows as one typed array, with what each column's numbers can resolve.
+ */
+import { DomainError } from '../domain.ts';
+
+/** Points as rows: arrays or typed arrays of numbers, all of one length. */
+export type Points = readonly ArrayLike<number>[];
+
+/** Rows one after the other in one array. */
+export interface Matrix {
+  readonly rows: Float64Array;
+  /** Number of rows. */
+  readonly n: number;
+  /** Number of columns. */
+  readonly d: number;
+}
+
+/** Largest size of a coordinate: squares and their sums stay far from overflow. */
+const MAX_SIZE = 1e150;
+
+/** Refuses anything but rows of one length that hold finite numbers; names the row and the column. */
+export function checkPoints(fn: string, points: unknown): Matrix {
+  if (!Array.isArray(points) || points.length === 0) {
+    throw new DomainError(fn, 'points', 'an array of at least one row', points);
+  }
+  const n = points.length;
+  const d = rowLength(points[0]);
+  if (!(d > 0)) {
+    throw new DomainError(fn, 'points[0]', 'an array of at least one number', points[0]);
+  }
+  const rows = new Float64Array(n * d);
+  for (let i = 0; i < n; i++) {
+    copyRow(fn, `points[${i}]`, points[i], d, rows, i * d, 'as points[0] has');
+  }
+  return { rows, n, d };
+}
+
+/** Refuses anything but one row of d finite numbers. */
+export function checkRow(fn: string, parameter: string, row: unknown, d: number): Float64Array {
+  const copy = new Float64Array(d);
+  copyRow(fn, parameter, row, d, copy, 0, 'as the rows of points have');
+  return copy;
+}
+
+function copyRow(
+  fn: string,
+  parameter: string,
+  row: unknown,
+  d: number,
+  out: Float64Array,
+  start: number,
+  why: string,
+): void {
+  if (rowLength(row) !== d) {
+    const plural = d === 1 ? 'number' : 'numbers';
+    const shown = ArrayBuffer.isView(row) ? Array.from(row as unknown as ArrayLike<number>) : row;
+    throw new DomainError(fn, parameter, `an array of ${d} ${plural}, ${why}`, shown);
+  }
+  const numbers = row as ArrayLike<unknown>;
+  for (let j = 0; j < d; j++) {
+    const x = numbers[j];
+    if (typeof x !== 'number' || !Number.isFinite(x)) {
+      throw new DomainError(fn, `${parameter}[${j}]`, 'a finite number', x);
+    }
+    if (Math.abs(x) > MAX_SIZE) {
+      throw new DomainError(fn, `${parameter}[${j}]`, 'a number of size at most 1e150', x);
+    }
+    out[start + j] = x;
+  }
+}
+
+/** Length of an array of numbers, typed or not; NaN for anything else. */
+function rowLength(row: unknown): number {
+  if (Array.isArray(row)) return row.length;
+  if (ArrayBuffer.isView(row) && !(row instanceof DataView)) {
+    return (row as unknown as ArrayLike<number>).length;
+  }
+  return Number.NaN;
+}
+
+/** Lowest, highest and largest absolute number of each column. */
+export interface ColumnRanges {
+  readonly min: Float64Array;
+  readonly max: Float64Array;
+  readonly size: Float64Array;
+}
+
+/** The ranges of the columns. */
+export function columnRanges({ rows, n, d }: Matrix): ColumnRanges {
+  const min = new Float64Array(d).fill(Number.POSITIVE_INFINITY);
+  const max = new Float64Array(d).fill(Number.NEGATIVE_INFINITY);
+  const size = new Float64Array(d);
+  for (let i = 0, at = 0; i < n; i++) {
+    for (let j = 0; j < d; j++, at++) {
+      const x = rows[at] as number;
+      if (x < (min[j] as number)) min[j] = x;
+      if (x > (max[j] as number)) max[j] = x;
+    }
+  }
+  for (let j = 0; j < d; j++) {
+    size[j] = Math.max(Math.abs(min[j] as number), Math.abs(max[j] as number));
+  }
+  return { min, max, size };
+}
+
+/**
+ * The difference that counts as none in each column: `tolerance` times its range, and 64 roundings of
+ * its largest number, since data and means computed from them are no sharper than that.
+ */
+export function columnTolerances(ranges: ColumnRanges, tolerance: number): Float64Array {
+  return ranges.size.map(
+    (size, j) =>
+      tolerance * ((ranges.max[j] as number) - (ranges.min[j] as number)) +
+      64 * Number.EPSILON * size,
+  );
+}
+
+/** The smallest power of two that is at least x > 0: scaling by it is exact. */
+export function powerOfTwoAbove(x: number): number {
+  let power = 1;
+  while (power < x) power *= 2;
+  while (power / 2 >= x && power > Number.MIN_VALUE) power /= 2;
+  return power;
+}
