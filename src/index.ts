@@ -7,7 +7,18 @@
  *
  * @packageDocumentation
  */
+export { type OriginInHullLowerBoundArgs, originInHullLowerBound } from './conic/depth-bound.ts';
+export {
+  dichotomyCount,
+  type LabelArgs,
+  labelSeparability,
+  logisticFitExists,
+} from './conic/separability.ts';
+export { surroundTime } from './conic/surround-time.ts';
+export { type OriginInHullArgs, originInHull } from './conic/wendel.ts';
 export type { Count } from './count.ts';
+export type { DisplayBundle, DisplayRow } from './display.ts';
+export type { Distribution } from './distribution.ts';
 export { DomainError } from './domain.ts';
 export {
   type BetaLaw,
@@ -24,3 +35,25 @@ export {
 } from './law.ts';
 export { LogNumber, type PlainLogNumber } from './log-number.ts';
 export { type PlainProbability, Probability, type ProbabilityFields } from './probability.ts';
+export {
+  type Hull,
+  type HullIntrinsicVolumeRatioOptions,
+  type HullVolumeRatioOptions,
+  hullIntrinsicVolumeRatio,
+  hullVolumeRatio,
+} from './polytope/index.ts';
+export {
+  type SizingAnswer,
+  type SizingReport,
+  type SizingReportArgs,
+  type SizingRow,
+  sizingReport,
+} from './plan/sizing-report.ts';
+export {
+  type Answer,
+  type FixedArgs,
+  largest,
+  type ParameterOf,
+  smallest,
+  type Target,
+} from './plan/smallest.ts';

@@ -3,4 +3,10 @@
  *
  * @module
  */
-export {};
+export type { Hull } from './hull-options.ts';
+export {
+  type HullIntrinsicVolumeRatioOptions,
+  type HullVolumeRatioOptions,
+  hullIntrinsicVolumeRatio,
+  hullVolumeRatio,
+} from './volume-ratio.ts';

@@ -1,0 +1,332 @@
+/**
+ * Upper tail and mean excess of the symmetric beta law, density c (1 - h^2)^b on [-1, 1], b > -1.
+ *
+ * With h = tanh s, w = 1 - h^2 and A = c / (2 (b + 1)) the tail is v(h) and the mean excess
+ *
+ *   L(h) = E[S | S > h] = A w^(b+1) / v(h),
+ *
+ * so one continued fraction gives both: for h > 0, L = h (1 + T) with
+ *
+ *   T = a1 x / (1 + a2 x / (1 + ...)),  x = w / h^2,
+ *   a_2i = i (b + 1/2 + i) / ((b + 2i)(b + 2i + 1)),
+ *   a_2i+1 = (i + 1/2)(b + 1 + i) / ((b + 2i + 1)(b + 2i + 2)),
+ *
+ * Gauss's fraction of 2F1(1/2, 1; b + 2; -x), whose terms are all positive. It serves for
+ * h^2 > 1 / (b + 7/2); nearer to the centre v = 1/2 - c h w^(b+1) sum (b + 3/2)_k / (3/2)_k h^2k.
+ *
+ * Everything is taken at an offset t from a reference point s0: log w(s0 + t) - log w(s0) is found
+ * to full relative accuracy, where the difference of two rounded logarithms would lose four digits
+ * at b = 2500 (the peak of an order statistic is then 1e-6 wide in s).
+ */
+import { logGammaRatioKernel } from '../special/log-gamma.ts';
+import type { Tail, TailRange } from './tail.ts';
+
+const HALF_LOG_PI = 0.57236494292470009;
+/** Beyond this s, 1 - L is its leading term (b + 1) / (2 (b + 2)) w to double precision. */
+const FAR = 18.5;
+/** Below this b the law is nearly two-point and s needs the coarser variable asinh s. */
+const NEARLY_TWO_POINT = -0.75;
+const MAX_DEPTH = 400;
+const MAX_RATIOS = 100;
+/** The depth of the fraction is tabulated by the binary exponent of x, from 2^-60 up. */
+const LEAST_EXPONENT = -60;
+
+/** The symmetric beta law as a machine that evaluates its tail; see {@link Tail}. */
+export class BetaTail implements Tail {
+  readonly b: number;
+  /** log c */
+  readonly logDensity: number;
+  /** log A */
+  readonly logA: number;
+
+  shift = 0;
+  logTail = 0;
+  logOther = 0;
+  logHazard = 0;
+  logExcess = 0;
+  /** v, 0 where it underflows. */
+  tail = 0;
+  /** 1 - L, 0 where it underflows. */
+  oneMinusExcess = 0;
+  /** log w */
+  logWidth = 0;
+  /** h */
+  height = 0;
+  /** s = atanh h */
+  s = 0;
+
+  private range: TailRange = 'line';
+  private s0 = 0;
+  private h0 = 0;
+  private logWidth0 = 0;
+  private logExcess0 = 0;
+  private logTail0 = 0;
+  /** exp(-2 |s0|) */
+  private e0 = 1;
+  /** asinh s0, where that is the variable */
+  private u0 = 0;
+  private readonly threshold: number;
+  private readonly logFar: number;
+  private readonly coefficients = new Float64Array(MAX_DEPTH + 2);
+  private known = 0;
+  private readonly ratios = new Float64Array(MAX_RATIOS);
+  private ratioCount = 0;
+  private readonly depths = new Int16Array(128);
+
+  constructor(b: number) {
+    this.b = b;
+    const halfStep = logGammaRatioKernel(b + 1, 0.5) - HALF_LOG_PI;
+    this.logDensity = halfStep;
+    this.logA = halfStep - Math.log(2 * (b + 1));
+    this.threshold = 1 / (b + 3.5);
+    this.logFar = Math.log((b + 1) / (2 * (b + 2)));
+  }
+
+  centreAtTail(logTail: number, range: TailRange): void {
+    this.range = range;
+    const target = range === 'folded' ? logTail - Math.LN2 : logTail;
+    const rate = 2 * (this.b + 1);
+    let s = 0;
+    this.place(0);
+    if (this.logTail < target) {
+      // left of the centre the mirrored tail takes over: v(-s) = 1 - v(s)
+      const mirrored = Math.log(-Math.expm1(target));
+      s = -this.solve(mirrored, rate);
+    } else {
+      s = this.solve(target, rate);
+    }
+    // the half line has a variable of its own, s0 e^u, which needs s0 > 0
+    if (range !== 'line') s = Math.max(s, 1e-3 / Math.sqrt(this.b + 1.5));
+    this.place(s);
+    this.fixReference();
+  }
+
+  /** Takes the height h as reference point; `oneMinusSquare` is 1 - h^2 without cancellation. */
+  centreAtHeight(h: number): void {
+    this.range = 'line';
+    const a = Math.abs(h);
+    this.s = 0.5 * Math.log1p((2 * a) / (1 - a));
+    if (h < 0) this.s = -this.s;
+    this.logWidth = a < 0.4 ? Math.log1p(-h * h) : Math.log1p(-a) + Math.log1p(a);
+    this.evaluate(a, 1 - a, h < 0);
+    this.fixReference();
+  }
+
+  /** s with log v(s) = target <= -log 2; log v is concave and falls, so Newton's rule is safe. */
+  private solve(target: number, rate: number): number {
+    let s = 0;
+    for (let i = 0; i < 60; i++) {
+      this.place(s);
+      const slope = rate * Math.exp(this.logExcess);
+      const step = (this.logTail - target) / slope;
+      s = Math.max(s + step, 0);
+      // the reference point need not be exact: what counts is that it is known exactly
+      if (Math.abs(this.logTail - target) < 1e-3) break;
+    }
+    return s;
+  }
+
+  private place(s: number): void {
+    this.s = s;
+    const a = Math.abs(s);
+    const e = Math.exp(-2 * a);
+    const h = a < 0.4 ? Math.tanh(a) : (1 - e) / (1 + e);
+    this.logWidth = a < 0.4 ? Math.log1p(-h * h) : -2 * (a + Math.log1p(e) - Math.LN2);
+    this.evaluate(h, (2 * e) / (1 + e), s < 0);
+  }
+
+  private fixReference(): void {
+    this.s0 = this.s;
+    this.h0 = this.height;
+    this.logWidth0 = this.logWidth;
+    this.logExcess0 = this.logExcess;
+    this.logTail0 = this.logTail;
+    this.e0 = Math.exp(-2 * Math.abs(this.s0));
+    this.u0 = Math.asinh(this.s0);
+    this.moveTo(0);
+  }
+
+  moveTo(offset: number): void {
+    let t = offset;
+    let logJacobian = 0;
+    if (this.range !== 'line') {
+      t = this.s0 * Math.expm1(offset);
+      logJacobian = offset + Math.log(this.s0);
+    } else if (this.b < NEARLY_TWO_POINT) {
+      t = 2 * Math.cosh(this.u0 + 0.5 * offset) * Math.sinh(0.5 * offset);
+      const u = Math.abs(this.u0 + offset);
+      logJacobian = u + Math.log1p(Math.exp(-2 * u)) - Math.LN2;
+    }
+    const s = this.s0 + t;
+    this.s = s;
+    const difference = this.widthDifference(t, s);
+    this.logWidth = this.logWidth0 + difference;
+    const e = s >= 0 ? Math.exp(-2 * s) : Math.exp(2 * s);
+    const a = s > 0.2 || s < -0.2 ? (1 - e) / (1 + e) : Math.abs(Math.tanh(s));
+    const fractionUsed = this.evaluate(a, (2 * e) / (1 + e), s < 0);
+    this.shift = fractionUsed
+      ? (this.b + 1) * difference - (this.logExcess - this.logExcess0)
+      : this.logTail - this.logTail0;
+    if (fractionUsed) {
+      this.logTail = this.logTail0 + this.shift;
+      this.tail = Math.exp(this.logTail);
+    }
+    this.logHazard = Math.log(2 * (this.b + 1)) + this.logExcess + logJacobian;
+    if (this.range === 'folded') this.fold();
+  }
+
+  /** log w(s) - log w(s0), s = s0 + t, to full relative accuracy; w is even in s. */
+  private widthDifference(t: number, s: number): number {
+    const mirrored = this.s0 < 0;
+    const step = mirrored ? -t : t;
+    const start = mirrored ? -this.s0 : this.s0;
+    if (start <= 3 && step <= 3 && step >= -3) {
+      const sinh = Math.sinh(0.5 * step);
+      const cosh = Math.sqrt(1 + sinh * sinh);
+      return -2 * Math.log1p(2 * sinh * (sinh + Math.abs(this.h0) * cosh));
+    }
+    const end = mirrored ? -s : s;
+    if (end < -300) return 2 * (end + Math.LN2) - this.logWidth0;
+    const growth = step > -3 ? this.e0 * Math.expm1(-2 * step) : Math.exp(-2 * end) - this.e0;
+    return -2 * (step + Math.log1p(growth / (1 + this.e0)));
+  }
+
+  /** The two-sided tail in place of the upper one; s > 0. */
+  private fold(): void {
+    const half = this.tail;
+    this.logTail += Math.LN2;
+    this.tail = 2 * half;
+    this.logOther = half < 0.3 ? Math.log1p(-2 * half) : Math.log(2 * this.central);
+  }
+
+  /** 1/2 - v of the last evaluation near the centre. */
+  private central = 0;
+
+  /**
+   * Sets the fields from a = |h|, 1 - a and `logWidth`; `s` and `logWidth` are set before.
+   *
+   * @returns whether log v there came through A w^(b+1) / L
+   */
+  private evaluate(a: number, oneMinusA: number, negative: boolean): boolean {
+    const power = (this.b + 1) * this.logWidth;
+    let logTail: number;
+    let tail: number;
+    let fractionUsed = false;
+    this.height = negative ? -a : a;
+    if (a * a > this.threshold) {
+      fractionUsed = !negative;
+      const T = this.fraction(Math.exp(this.logWidth) / (a * a));
+      let gap = oneMinusA - a * T;
+      if (this.s > FAR || this.s < -FAR) gap = Math.exp(this.logWidth + this.logFar);
+      this.oneMinusExcess = gap;
+      this.logExcess = gap < 0.5 ? Math.log1p(-gap) : Math.log(a + a * T);
+      logTail = this.logA + power - this.logExcess;
+      tail = Math.exp(logTail);
+    } else {
+      this.central = a * Math.exp(this.logDensity + power) * this.centralSeries(a * a);
+      tail = 0.5 - this.central;
+      logTail = Math.log(tail);
+      this.logExcess = this.logA + power - logTail;
+      this.oneMinusExcess = -Math.expm1(this.logExcess);
+    }
+    if (negative) {
+      this.logOther = logTail;
+      this.tail = 1 - tail;
+      this.logTail = Math.log1p(-tail);
+      this.logExcess = this.logA + power - this.logTail;
+      this.oneMinusExcess = -Math.expm1(this.logExcess);
+    } else {
+      this.logTail = logTail;
+      this.tail = tail;
+      this.logOther = Math.log1p(-tail);
+    }
+    return fractionUsed;
+  }
+
+  /** h - h0, h0 the height of the reference point: tanh(s0 + t) - tanh(s0) without cancellation. */
+  get heightShift(): number {
+    const t = this.s - this.s0;
+    if (t > 300 || t < -300) return this.height - this.h0;
+    return Math.exp(0.5 * (this.logWidth + this.logWidth0)) * Math.sinh(t);
+  }
+
+  /** log(1 - L^k) for k > 0, also where it underflows. */
+  logOneMinusPower(k: number): number {
+    return this.s < 300
+      ? Math.log(-Math.expm1(k * this.logExcess))
+      : Math.log(k) + this.logOneMinusExcess;
+  }
+
+  /** log h for h > 0. */
+  get logHeight(): number {
+    if (this.s < 0.5) return Math.log(this.height);
+    const e = Math.exp(-2 * this.s);
+    return Math.log1p((-2 * e) / (1 + e));
+  }
+
+  /** log(1 - L), also where 1 - L underflows. */
+  get logOneMinusExcess(): number {
+    return this.s > FAR ? this.logWidth + this.logFar : Math.log(this.oneMinusExcess);
+  }
+
+  /** sum over k of (b + 3/2)_k / (3/2)_k y^k, y = h^2, from the last term that counts backwards. */
+  private centralSeries(y: number): number {
+    const ratios = this.ratios;
+    if (this.ratioCount === 0) {
+      let term = 1;
+      while (term > 1e-18 && this.ratioCount < MAX_RATIOS) {
+        const ratio = (this.b + 1.5 + this.ratioCount) / (1.5 + this.ratioCount);
+        term *= ratio * this.threshold;
+        ratios[this.ratioCount++] = ratio;
+      }
+    }
+    let sum = 1;
+    for (let k = this.ratioCount - 1; k >= 0; k--) sum = 1 + (ratios[k] as number) * y * sum;
+    return sum;
+  }
+
+  /** T by backward recurrence from a depth at which it has converged. */
+  private fraction(x: number): number {
+    const a = this.coefficients;
+    const depth = this.depthFor(x);
+    let g = 1;
+    for (let j = depth; j >= 2; j--) g = 1 + ((a[j] as number) * x) / g;
+    return ((a[1] as number) * x) / g;
+  }
+
+  /**
+   * Depth at which the fraction at x has converged to 2^-58: a step with coefficient a multiplies the
+   * error by (r - 1) / (r + 1), r = sqrt(1 + 4 a x), where the coefficients change slowly.
+   */
+  private depthFor(x: number): number {
+    const exponent = x > 2 ** LEAST_EXPONENT ? Math.ceil(Math.log2(x)) : LEAST_EXPONENT;
+    const index = exponent - LEAST_EXPONENT;
+    const stored = this.depths[index] as number;
+    if (stored > 0) return stored;
+    const bound = 2 ** exponent;
+    let error = 1;
+    let depth = 1;
+    this.coefficient(1);
+    while (error > 3e-18 && depth < MAX_DEPTH) {
+      depth++;
+      const r = Math.sqrt(1 + 4 * this.coefficient(depth) * bound);
+      error *= (r - 1) / (r + 1);
+    }
+    this.depths[index] = depth;
+    return depth;
+  }
+
+  private coefficient(j: number): number {
+    const a = this.coefficients;
+    while (this.known < j) {
+      const next = ++this.known;
+      const i = next >> 1;
+      const b = this.b;
+      a[next] =
+        next % 2 === 0
+          ? (i * (b + 0.5 + i)) / ((b + 2 * i) * (b + 2 * i + 1))
+          : ((i + 0.5) * (b + 1 + i)) / ((b + 2 * i + 1) * (b + 2 * i + 2));
+    }
+    return a[j] as number;
+  }
+}
