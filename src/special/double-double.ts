@@ -41,8 +41,8 @@ export function productError(a: number, b: number, p: number): number {
 /** The same near the overflow limit, computed on operands scaled by powers of two. */
 function scaledProductError(a: number, b: number, p: number): number {
   if (!(Math.abs(p) <= Number.MAX_VALUE)) return 0;
-  const down = 2 ** -160;
-  const up = 2 ** 80;
+  const down = 6.842277657836021e-49; // 2^-160
+  const up = 1208925819614629174706176; // 2^80
   // |p| is finite, so at most one operand is large; a tiny partner is scaled up against underflow.
   const large = Math.abs(a) > Math.abs(b) ? a : b;
   const other = Math.abs(a) > Math.abs(b) ? b : a;

@@ -5,7 +5,12 @@
  */
 
 import { checkAbove, checkFinite, checkInteger, DomainError } from '../domain.ts';
-import { logGamma1pKernel, logGammaKernel, logGammaRatioKernel } from './log-gamma.ts';
+import {
+  logGamma1pKernel,
+  logGamma1pSlope,
+  logGammaKernel,
+  logGammaRatioKernel,
+} from './log-gamma.ts';
 import {
   HALF_LOG_TWO_PI,
   stirlingRemainderDifference,
@@ -48,6 +53,10 @@ export function logBinomialKernel(n: number, k: number): number {
   if (h === 0) return 0;
   if (h === 1) return Math.log(n);
   const g = n - h;
+  if (n <= 0.5) {
+    // With log Gamma(1 + z) = z q(z) and n = h + g, two differences of q with the factor h g remain.
+    return h * g * (logGamma1pSlope(n, h) + logGamma1pSlope(n, g));
+  }
   // The expansion below has -log(h)/2 and D(h), which cancel for small h.
   if (h < 1) return logGammaRatioKernel(g + 1, h) - logGamma1pKernel(h);
   return (

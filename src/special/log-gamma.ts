@@ -7,7 +7,7 @@
 
 import { checkAbove, checkFinite, checkPositive, DomainError } from '../domain.ts';
 import { log1pmxKernel } from './log-domain.ts';
-import { evaluatePolynomial } from './polynomial.ts';
+import { dividedDifference, evaluatePolynomial } from './polynomial.ts';
 import {
   HALF_LOG_TWO_PI,
   SMALL,
@@ -22,33 +22,19 @@ export function logGamma(x: number): number {
 
 /** {@link logGamma} without checks. */
 export function logGammaKernel(x: number): number {
-  if (x >= 7) {
+  if (x >= 10) {
     return (x - 0.5) * (Math.log(x) - 1) + (HALF_LOG_TWO_PI - 0.5) + stirlingRemainderKernel(x);
   }
-  if (x < 0.5) return logGamma1pKernel(x) - Math.log(x);
-  if (x < 1.5) return logGammaAroundTwo(x - 1) - Math.log(x);
+  if (x < 1) return logGamma1pKernel(x) - Math.log(x);
+  if (x <= 2.5) return logGammaBetweenZeros(x - 1);
   let product = 1;
   let y = x;
   while (y > 2.5) {
     y -= 1;
     product *= y;
   }
-  return Math.log(product) + logGammaAroundTwo(y - 2);
+  return Math.log(product) + logGammaBetweenZeros(y - 1);
 }
-
-/** log Gamma(2 + z) for |z| <= 1/2. */
-function logGammaAroundTwo(z: number): number {
-  return z * evaluatePolynomial(AROUND_TWO, z);
-}
-
-/** log Gamma(2 + z)/z in powers of z, |z| <= 1/2, relative error 1.8e-17. */
-const AROUND_TWO: readonly number[] = [
-  0.42278433509846713, 0.32246703342411326, -0.0673523010531956, 0.020580808427780335,
-  -0.007385551028937974, 0.002890510331036772, -0.0011927539009204018, 0.0005096695153484373,
-  -0.00022315497868931946, 9.945767440096764e-5, -4.492371708374659e-5, 2.0505584372896933e-5,
-  -9.456338120610123e-6, 4.3847319318293745e-6, -1.9741884532905586e-6, 9.199898075671394e-7,
-  -5.812501250599261e-7, 2.7880013392491846e-7,
-];
 
 export function logGamma1p(x: number): number {
   checkAbove('logGamma1p', 'x', x, -1);
@@ -57,11 +43,36 @@ export function logGamma1p(x: number): number {
 
 /** {@link logGamma1p} without checks. */
 export function logGamma1pKernel(x: number): number {
-  if (x >= -0.5 && x <= 0.5) return logGammaAroundTwo(x) - Math.log1p(x);
+  if (x >= 0 && x <= 1.5) return logGammaBetweenZeros(x);
   if (x < -0.5) return logGammaKernel(1 + x);
-  if (x <= 1.5) return logGammaAroundTwo(x - 1);
+  // log Gamma(2 + x) with its zero at x = 0 exact, though 1 + x is rounded
+  if (x < 0) return x * ((1 + x) * evaluatePolynomial(BETWEEN_ZEROS, x + 0.25)) - Math.log1p(x);
   return logGammaKernel(x) + Math.log(x);
 }
+
+/** log Gamma(1 + z) for 0 <= z <= 3/2, to full relative accuracy at its zeros 0 and 1. */
+function logGammaBetweenZeros(z: number): number {
+  return z * ((z - 1) * evaluatePolynomial(BETWEEN_ZEROS, z - 0.75));
+}
+
+/**
+ * (q(t) - q(u))/(t - u) for q(z) = log Gamma(1 + z)/z, 0 <= t, u <= 3/2: a sum of positive terms.
+ */
+export function logGamma1pSlope(t: number, u: number): number {
+  const slope = dividedDifference(BETWEEN_ZEROS, t - 0.75, u - 0.75);
+  return evaluatePolynomial(BETWEEN_ZEROS, u - 0.75) + (t - 1) * slope;
+}
+
+/** log Gamma(1 + z)/(z (z - 1)) in powers of z - 3/4, 0 <= z <= 3/2, relative error 1e-17. */
+const BETWEEN_ZEROS: readonly number[] = [
+  0.4501393121092563, -0.11948158662524275, 0.044520447198509394, -0.019053957830246746,
+  0.008776370425278911, -0.004226194125964975, 0.0020955338792023144, -0.0010605660740064494,
+  0.0005448970031374375, -0.00028319064306197986, 0.00014851663517558285, -7.846155569226578e-5,
+  4.17062857959138e-5, -2.2282591232262354e-5, 1.1945816117960494e-5, -6.432193465941823e-6,
+  3.516893875615291e-6, -1.913573290325702e-6, 9.41640126227377e-7, -5.00752245779499e-7,
+  4.3563120177338296e-7, -2.5212112949546115e-7, -3.405542058584176e-8, 2.7604122388061338e-8,
+  9.133153705117035e-8, -5.2829122865756705e-8,
+];
 
 export function logGammaRatio(x: number, a: number): number {
   checkPositive('logGammaRatio', 'x', x);
@@ -74,12 +85,11 @@ export function logGammaRatio(x: number, a: number): number {
 export function logGammaRatioKernel(x: number, a: number): number {
   if (a < 0) return -logGammaRatioKernel(x + a, -a);
   if (a <= 8 && x < 1e30 && Number.isInteger(a)) return logRisingFactorial(x, a);
+  if (x < 7 && a > x && a > 1) return logGammaKernel(x + a) - logGammaKernel(x);
   if (x < SMALL) return logGammaRatioKernel(x + 1, a) - logOnePlusQuotient(a, x);
   const t = a / x;
+  if (t < 1) return a * Math.log(x) + excessNear(x, a, t);
   const difference = stirlingRemainderDifference(x, a);
-  if (t < 1) {
-    return a * Math.log(x) + (x * log1pmxKernel(t) + (a - 0.5) * Math.log1p(t) + difference);
-  }
   return (x + a - 0.5) * Math.log1p(t) + a * (Math.log(x) - 1) + difference;
 }
 
@@ -90,18 +100,21 @@ export function logGammaRatioKernel(x: number, a: number): number {
  * it may be multiplied or divided by a.
  */
 export function logGammaRatioExcess(x: number, a: number): number {
-  if (a < 0) {
-    const y = x + a;
-    return -logGammaRatioExcess(y, -a) - a * logOnePlusQuotient(-a, y);
-  }
+  const y = x + a;
   if (x < SMALL) {
-    const shift = a * (Math.log1p(x) - Math.log(x));
-    return logGammaRatioExcess(x + 1, a) + shift - logOnePlusQuotient(a, x);
+    const shift = a * (Math.log1p(x) - Math.log(x)) - logOnePlusQuotient(a, x);
+    return logGammaRatioExcess(x + 1, a) + shift;
   }
+  if (y < SMALL) return logGammaRatioExcess(x, a + 1) - Math.log(y / x);
   const t = a / x;
+  if (t > -0.5 && t < 1) return excessNear(x, a, t);
+  return (y - 0.5) * Math.log(y / x) - a + stirlingRemainderDifference(x, a);
+}
+
+/** The excess where t = a/x is not large: every term is of the order of a/x or a^2/x. */
+function excessNear(x: number, a: number, t: number): number {
   const difference = stirlingRemainderDifference(x, a);
-  if (t < 1) return x * log1pmxKernel(t) + (a - 0.5) * Math.log1p(t) + difference;
-  return (x + a - 0.5) * Math.log1p(t) - a + difference;
+  return x * log1pmxKernel(t) + (a - 0.5) * Math.log1p(t) + difference;
 }
 
 /** log(x (x + 1) ... (x + a - 1)). */
@@ -111,7 +124,7 @@ function logRisingFactorial(x: number, a: number): number {
   return Math.log(product);
 }
 
-/** log(1 + a/x), also where the quotient overflows. */
+/** log((x + a)/x), also where the quotient overflows. */
 function logOnePlusQuotient(a: number, x: number): number {
   const t = a / x;
   return t < Number.POSITIVE_INFINITY ? Math.log1p(t) : Math.log(a) - Math.log(x);
