@@ -8,11 +8,8 @@
  * every row and a bound on the rounding of that product.
  */
 import { checkNumber, checkOptions } from '../domain.ts';
-import {
-  type MinimumNormPoint,
-  minimumNormPoint,
-  rowAtoms,
-} from '../numeric/minimum-norm-point.ts';
+import { type MinimumNormPoint, minimumNormPoint } from '../numeric/minimum-norm-point.ts';
+import { rowAtoms } from '../numeric/row-atoms.ts';
 import {
   checkPoints,
   checkRow,
@@ -159,14 +156,15 @@ interface Attempt {
 /** Nearest hull point to q with column j divided by scales[j], or left out where that is 0. */
 function nearest({ rows, n, d }: Matrix, q: Float64Array, scales: Float64Array): Attempt {
   const shifted = new Float64Array(n * d);
+  // Powers of two, so multiplying by the inverse is exact; 0 leaves a column out.
+  const factors = scales.map((scale) => (scale > 0 ? 1 / scale : 0));
   let start = 0;
   let least = Number.POSITIVE_INFINITY;
   let most = 0;
   for (let i = 0, at = 0; i < n; i++) {
     let square = 0;
     for (let j = 0; j < d; j++, at++) {
-      const scale = scales[j] as number;
-      const x = scale > 0 ? ((rows[at] as number) - (q[j] as number)) / scale : 0;
+      const x = ((rows[at] as number) - (q[j] as number)) * (factors[j] as number);
       shifted[at] = x;
       square += x * x;
     }

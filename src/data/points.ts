@@ -115,10 +115,10 @@ export function columnTolerances(ranges: ColumnRanges, tolerance: number): Float
   );
 }
 
-/** The smallest power of two that is at least x > 0: scaling by it is exact. */
+/** The smallest power of two from 2^-1000 on that is at least x: scaling by it is exact. */
 export function powerOfTwoAbove(x: number): number {
   let power = 1;
   while (power < x) power *= 2;
-  while (power / 2 >= x && power > Number.MIN_VALUE) power /= 2;
+  while (power / 2 >= x && power > 2 ** -1000) power /= 2;
   return power;
 }

@@ -19,8 +19,13 @@
 export interface AtomSet {
   /** Dimension of the points. */
   readonly dimension: number;
-  /** Index of an atom with the smallest product with `direction`. */
-  lowest(direction: Float64Array): number;
+  /** Index of an atom with the smallest product with `direction`; those below `level` matter. */
+  lowest(direction: Float64Array, level: number): number;
+  /**
+   * The same among a working set much smaller than the whole, where there is one. `lowest` adds to
+   * it what it finds, and says the last word.
+   */
+  lowestAtHand?(direction: Float64Array): number;
   /** Writes the atom's coordinates to `out`, from position `start` on. */
   read(index: number, out: Float64Array, start: number): void;
 }
@@ -43,6 +48,8 @@ export interface MinimumNormPoint {
 
 /** Gap between the bounds, in units of the largest coordinate, that ends the search. */
 const GAP = 4e-15;
+/** The working set is good enough while it offers an atom this share of the distance below. */
+const AT_HAND = 1e-3;
 /** A column whose part outside the span of the others is shorter than this share depends on them. */
 const DEPENDENT = 1e-14;
 
@@ -71,10 +78,15 @@ export function minimumNormPoint(set: AtomSet, first: number): MinimumNormPoint 
     }
     last = norm;
     const distance = factor.hyperplane(normal);
-    const candidate = set.lowest(normal);
-    set.read(candidate, factor.column, 1);
-    let value = 0;
-    for (let j = 0; j < d; j++) value += (normal[j] as number) * (factor.column[j + 1] as number);
+    if (set.lowestAtHand !== undefined) {
+      const atHand = set.lowestAtHand(normal);
+      if (factor.product(atHand, normal) < distance * (1 - AT_HAND) && factor.enter(atHand)) {
+        fresh = false;
+        continue;
+      }
+    }
+    const candidate = set.lowest(normal, distance);
+    const value = factor.product(candidate, normal);
     if (value > lower) {
       lower = value;
       bestNormal.set(normal);
@@ -95,7 +107,7 @@ export function minimumNormPoint(set: AtomSet, first: number): MinimumNormPoint 
 /** The active atoms with the factorisation of their columns and their weights. */
 class ActiveSet {
   /** Scratch for the column (1, p) of an atom. */
-  readonly column: Float64Array;
+  private readonly column: Float64Array;
   private readonly set: AtomSet;
   /** Length of a column. */
   private readonly m: number;
@@ -148,6 +160,15 @@ class ActiveSet {
     const length = Math.sqrt(squaredNorm(r, 1, m));
     for (let j = 1; j < m; j++) normal[j - 1] = -(r[j] as number) / length;
     return (r[0] as number) / length;
+  }
+
+  /** Product of an atom with a direction. */
+  product(atom: number, direction: Float64Array): number {
+    const { column, m } = this;
+    this.set.read(atom, column, 1);
+    let sum = 0;
+    for (let j = 1; j < m; j++) sum += (direction[j - 1] as number) * (column[j] as number);
+    return sum;
   }
 
   /** Appends the atom to the factorisation; false when its column depends on the others. */
@@ -288,48 +309,4 @@ function squaredNorm(v: Float64Array, from: number, to: number): number {
   let sum = 0;
   for (let i = from; i < to; i++) sum += (v[i] as number) * (v[i] as number);
   return sum;
-}
-
-/** The first n rows of a matrix with d columns, as atoms. */
-export function rowAtoms(rows: Float64Array, n: number, d: number): AtomSet {
-  return {
-    dimension: d,
-    lowest: (direction) => lowestRow(rows, n, d, direction),
-    read: (index, out, start) => {
-      for (let j = 0; j < d; j++) out[start + j] = rows[index * d + j] as number;
-    },
-  };
-}
-
-/** Index of the row with the smallest product with `direction`. */
-export function lowestRow(
-  rows: Float64Array,
-  count: number,
-  d: number,
-  direction: Float64Array,
-): number {
-  let best = 0;
-  let bestValue = Number.POSITIVE_INFINITY;
-  const end = d - (d % 4);
-  for (let i = 0, at = 0; i < count; i++, at += d) {
-    // Four sums run side by side: one sum would wait for each addition.
-    let s0 = 0;
-    let s1 = 0;
-    let s2 = 0;
-    let s3 = 0;
-    let j = 0;
-    for (; j < end; j += 4) {
-      s0 += (rows[at + j] as number) * (direction[j] as number);
-      s1 += (rows[at + j + 1] as number) * (direction[j + 1] as number);
-      s2 += (rows[at + j + 2] as number) * (direction[j + 2] as number);
-      s3 += (rows[at + j + 3] as number) * (direction[j + 3] as number);
-    }
-    for (; j < d; j++) s0 += (rows[at + j] as number) * (direction[j] as number);
-    const value = s0 + s1 + (s2 + s3);
-    if (value < bestValue) {
-      bestValue = value;
-      best = i;
-    }
-  }
-  return best;
 }

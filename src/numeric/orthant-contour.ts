@@ -149,7 +149,10 @@ function aliasDistance(
   if (pole) curvatureAtSaddle += 1 / a / a;
   const logAtSaddle = logScaledTail(a);
   let t = Math.sqrt((2 * tolerance) / curvatureAtSaddle);
-  if (pole && side < 0) t = Math.min(t, 0.9 * a);
+  // K has its pole, or a steep rise, at b = 0.
+  if (side < 0) t = Math.min(t, 0.9 * a + (pole ? 0 : 1));
+  let near = 0;
+  let far = pole && side < 0 ? a : Number.POSITIVE_INFINITY;
   let slope = 0;
   let exponent = 0;
   let curvature = curvatureAtSaddle;
@@ -168,10 +171,11 @@ function aliasDistance(
     exponent -= side * t * slope;
     const miss = exponent + tolerance;
     if (Math.abs(miss) < 0.3) break;
-    let next = t + miss / (t * curvature);
-    next = Math.min(2 * t, Math.max(0.5 * t, next));
-    if (pole && side < 0 && next >= a) next = 0.5 * (t + a);
-    t = next;
+    if (miss > 0) near = t;
+    else far = t;
+    const newton = t + miss / (t * curvature);
+    const middle = far < Number.POSITIVE_INFINITY ? 0.5 * (near + far) : 2 * near;
+    t = newton > near && newton < far ? newton : middle;
   }
   const bound = 2 * Math.exp(exponent) * Math.sqrt(Math.max(1, curvatureAtSaddle / curvature));
   out[3] = side < 0 ? bound : (out[3] as number) + bound;
