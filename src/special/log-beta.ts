@@ -17,6 +17,25 @@ import {
   stirlingRemainderKernel,
 } from './stirling-remainder.ts';
 
+/**
+ * The logarithm of the beta function for a, b > 0, also when one is far larger than the other.
+ *
+ * $$ \ln B(a, b) = \ln\frac{\Gamma(a)\,\Gamma(b)}{\Gamma(a + b)} $$
+ *
+ * @param a - a number > 0
+ * @param b - a number > 0
+ * @returns the logarithm, the same whichever argument comes first; `-Infinity` if one is `Infinity`
+ * @remarks Constant cost. Error below 9e-16 times the larger of 1 and the modulus of the result.
+ * @throws A {@link DomainError} if an argument is not above 0
+ *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/5.12.
+ *
+ * @example
+ * ```ts
+ * import { logBeta } from 'hullgauge/special';
+ * logBeta(0.001, 1e15).toPrecision(12); // => '6.87264010899'
+ * ```
+ */
 export function logBeta(a: number, b: number): number {
   checkAbove('logBeta', 'a', a, 0);
   checkAbove('logBeta', 'b', b, 0);
@@ -40,6 +59,24 @@ export function logBetaKernel(first: number, second: number): number {
   );
 }
 
+/**
+ * The logarithm of the binomial coefficient "n over k" for real 0 <= k <= n.
+ *
+ * $$ \ln\binom{n}{k} = \ln\frac{\Gamma(n + 1)}{\Gamma(k + 1)\,\Gamma(n - k + 1)} $$
+ *
+ * @param n - a finite number >= 0
+ * @param k - a number from 0 to n
+ * @returns the logarithm, at least 0
+ * @remarks Constant cost. Relative error below 1e-15.
+ * @throws A {@link DomainError} if an argument is out of its domain
+ *
+ * @example
+ * ```ts
+ * import { logBinomial } from 'hullgauge/special';
+ * logBinomial(1e6, 5e5).toPrecision(12); // => '693140.047013'
+ * logBinomial(4, 4); // => 0
+ * ```
+ */
 export function logBinomial(n: number, k: number): number {
   checkFinite('logBinomial', 'n', n, 0);
   checkFinite('logBinomial', 'k', k, 0);
@@ -69,6 +106,22 @@ export function logBinomialKernel(n: number, k: number): number {
   );
 }
 
+/**
+ * The logarithm of n! for an integer n from 0 to 2^53 - 1.
+ *
+ * $$ \ln n! $$
+ *
+ * @param n - an integer from 0 to 2^53 - 1
+ * @returns the logarithm, from the exact factorial for n <= 22
+ * @remarks Constant cost. Relative error below 6e-16.
+ * @throws A {@link DomainError} if `n` is no such integer
+ *
+ * @example
+ * ```ts
+ * import { logFactorial } from 'hullgauge/special';
+ * logFactorial(100).toPrecision(12); // => '363.739375556'
+ * ```
+ */
 export function logFactorial(n: number): number {
   checkInteger('logFactorial', 'n', n, 0);
   return logFactorialKernel(n);
