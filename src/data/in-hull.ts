@@ -121,7 +121,8 @@ export function inHullKernel(matrix: Matrix, q: Float64Array, tolerance: number)
     const high = Math.max(ranges.max[j] as number, q[j] as number);
     // A column that never leaves its tolerance around the query says nothing.
     if (!(high - low > (allowed[j] as number))) continue;
-    const scale = powerOfTwoAbove(high - low);
+    // Noise of the size of its tolerance weighs the same in each column.
+    const scale = powerOfTwoAbove(Math.max(high - low, (allowed[j] as number) / tolerance));
     scales[j] = scale;
     largest = Math.max(largest, scale);
     smallest = Math.min(smallest, scale);
