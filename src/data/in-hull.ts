@@ -148,14 +148,14 @@ export function inHullKernel(matrix: Matrix, q: Float64Array, tolerance: number)
 }
 
 /** A nearest point in scaled coordinates; `proven` when its hyperplane separates despite rounding. */
-interface Attempt {
+export interface Attempt {
   readonly found: MinimumNormPoint;
   readonly scales: Float64Array;
   readonly proven: boolean;
 }
 
 /** Nearest hull point to q with column j divided by scales[j], or left out where that is 0. */
-function nearest({ rows, n, d }: Matrix, q: Float64Array, scales: Float64Array): Attempt {
+export function nearest({ rows, n, d }: Matrix, q: Float64Array, scales: Float64Array): Attempt {
   const shifted = new Float64Array(n * d);
   // Powers of two, so multiplying by the inverse is exact; 0 leaves a column out.
   const factors = scales.map((scale) => (scale > 0 ? 1 / scale : 0));
@@ -185,7 +185,7 @@ export function productError(d: number, size: number): number {
 }
 
 /** Do the weights reproduce the query to the tolerance of every column? */
-function reproduces(
+export function reproduces(
   { rows, d }: Matrix,
   q: Float64Array,
   { atoms, weights }: MinimumNormPoint,
