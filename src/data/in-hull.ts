@@ -18,6 +18,7 @@ import {
   type Matrix,
   type Points,
   powerOfTwoAbove,
+  unscaledNormal,
 } from './points.ts';
 
 /** One point's share in a convex combination. */
@@ -210,18 +211,8 @@ function weightsOf({ atoms, weights }: MinimumNormPoint): HullWeight[] {
 /** The hyperplane half-way between the hull and the query, in the units of the data. */
 function separatorOf({ rows, n, d }: Matrix, q: Float64Array, attempt: Attempt): Separator {
   const { found, scales } = attempt;
-  const normal: number[] = [];
-  // Relative to the least scale no component exceeds 1.
-  const least = scales.reduce((m, s) => (s > 0 && s < m ? s : m), Number.POSITIVE_INFINITY);
-  let square = 0;
-  for (let j = 0; j < d; j++) {
-    const scale = scales[j] as number;
-    const x = scale > 0 ? -(found.normal[j] as number) * (least / scale) : 0;
-    normal.push(x);
-    square += x * x;
-  }
-  const length = Math.sqrt(square);
-  for (let j = 0; j < d; j++) normal[j] = (normal[j] as number) / length + 0;
+  const outward = found.normal.map((x) => -x);
+  const normal = unscaledNormal(outward, scales);
   const product = (from: Float64Array, at: number): number => {
     let sum = 0;
     for (let j = 0; j < d; j++) sum += (normal[j] as number) * (from[at + j] as number);

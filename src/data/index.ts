@@ -3,4 +3,14 @@
  *
  * @module
  */
-export {};
+export { hullVertices } from './hull-vertices.ts';
+export {
+  type HullMembership,
+  type HullWeight,
+  type InHullOptions,
+  inHull,
+  type Separator,
+} from './in-hull.ts';
+export type { LongWorkOptions } from './long-work.ts';
+export type { Points } from './points.ts';
+export { type Separability, type SeparableOptions, separable } from './separable.ts';

@@ -122,3 +122,17 @@ export function powerOfTwoAbove(x: number): number {
   while (power / 2 >= x && power > 2 ** -1000) power /= 2;
   return power;
 }
+
+/**
+ * The unit vector, in the units of the data, of a normal given for columns divided by `scales`;
+ * columns with scale 0 take no part.
+ */
+export function unscaledNormal(normal: ArrayLike<number>, scales: Float64Array): number[] {
+  const least = scales.reduce((m, s) => (s > 0 && s < m ? s : m), Number.POSITIVE_INFINITY);
+  // Relative to the least scale no component exceeds 1.
+  const unit = Array.from(scales, (scale, j) =>
+    scale > 0 ? (normal[j] as number) * (least / scale) : 0,
+  );
+  const length = Math.sqrt(unit.reduce((sum, x) => sum + x * x, 0));
+  return unit.map((x) => x / length + 0);
+}
