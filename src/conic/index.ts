@@ -4,4 +4,49 @@
  *
  * @module
  */
-export {};
+
+export {
+  type ArrangementArgs,
+  type ArrangementFacesArgs,
+  arrangementFaces,
+  arrangementRegions,
+} from './arrangement.ts';
+export { type Cone, halfspace, orthant, ray, subspace } from './cone.ts';
+export { polarCone, productCone } from './cone-algebra.ts';
+export { circularCone, weylChamber } from './cone-families.ts';
+export { type OriginInHullLowerBoundArgs, originInHullLowerBound } from './depth-bound.ts';
+export {
+  approxNuclearNormDimension,
+  l1DescentCone,
+  l1StatisticalDimension,
+  linfDescentCone,
+} from './descent-cones.ts';
+export { coneMeetsSubspace, conesMeet } from './kinematics.ts';
+export {
+  coverEfronCone,
+  type RandomCone,
+  type RandomConeArgs,
+  schlaefliCone,
+} from './random-cones.ts';
+export {
+  type RecoveryArgs,
+  type RecoveryBoundsArgs,
+  recoveryBounds,
+  recoverySuccess,
+} from './recovery.ts';
+export {
+  dichotomyCount,
+  type LabelArgs,
+  labelSeparability,
+  logisticFitExists,
+} from './separability.ts';
+export { surroundTime } from './surround-time.ts';
+export {
+  bridgeHull,
+  type JointWalkHullArgs,
+  jointWalkHull,
+  type WalkHullArgs,
+  walkHull,
+} from './walks.ts';
+export { type WeakThresholdArgs, weakThreshold } from './weak-threshold.ts';
+export { type OriginInHullArgs, originInHull } from './wendel.ts';
