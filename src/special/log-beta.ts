@@ -88,8 +88,9 @@ export function logBinomial(n: number, k: number): number {
 export function logBinomialKernel(n: number, k: number): number {
   const h = Math.min(k, n - k);
   if (h === 0) return 0;
-  if (h === 1) return Math.log(n);
   const g = n - h;
+  if (h === 1) return Math.log(n);
+  if (n <= 50 && Number.isInteger(n) && Number.isInteger(h)) return Math.log(exactBinomial(h, g));
   if (n <= 0.5) {
     // With log Gamma(1 + z) = z q(z) and n = h + g, two differences of q with the factor h g remain.
     return h * g * (logGamma1pSlope(n, h) + logGamma1pSlope(n, g));
@@ -99,11 +100,18 @@ export function logBinomialKernel(n: number, k: number): number {
   return (
     h * Math.log(n / h) -
     g * Math.log1p(-h / n) +
-    0.5 * Math.log(n / g / (2 * Math.PI * h)) +
+    0.5 * Math.log(n / g / (2 * Math.PI) / h) +
     stirlingRemainderKernel(n) -
     stirlingRemainderKernel(h) -
     stirlingRemainderKernel(g)
   );
+}
+
+/** The binomial coefficient "g + h over h" for integers with g + h <= 50: every step is exact. */
+function exactBinomial(h: number, g: number): number {
+  let coefficient = 1;
+  for (let i = 1; i <= h; i++) coefficient = (coefficient * (g + i)) / i;
+  return coefficient;
 }
 
 /**

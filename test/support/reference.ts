@@ -37,9 +37,22 @@ export function readTable<Row>(name: string): readonly Row[] {
   return JSON.parse(readFileSync(url, 'utf8')) as Row[];
 }
 
+/**
+ * The exact value of a finite double. (The constructor would take its shortest decimal string, which
+ * may be off by half a unit in the last place: as much as the errors measured here.)
+ */
+export function exactDecimal(x: number): Decimal {
+  const bits = new BigUint64Array(new Float64Array([x]).buffer)[0] as bigint;
+  const exponent = Number((bits >> 52n) & 0x7ffn);
+  const fraction = bits & 0xf_ffff_ffff_ffffn;
+  const mantissa = exponent === 0 ? fraction : fraction | (1n << 52n);
+  const magnitude = Ruler.pow(2, Math.max(exponent, 1) - 1075).times(mantissa.toString());
+  return x < 0 ? magnitude.neg() : magnitude;
+}
+
 /** `computed - exact` without the rounding of the exact value to a double. */
 export function difference(computed: number, exact: string): number {
-  return new Ruler(computed).minus(exact).toNumber();
+  return exactDecimal(computed).minus(exact).toNumber();
 }
 
 /** |computed - exact| / |exact|; 0 for an exact zero met exactly. */
@@ -47,5 +60,5 @@ export function relativeError(computed: number, exact: string): number {
   const truth = new Ruler(exact);
   if (truth.isZero()) return computed === 0 ? 0 : Number.POSITIVE_INFINITY;
   if (!Number.isFinite(computed)) return Number.POSITIVE_INFINITY;
-  return new Ruler(computed).minus(truth).div(truth).abs().toNumber();
+  return exactDecimal(computed).minus(truth).div(truth).abs().toNumber();
 }
