@@ -13,4 +13,11 @@ export {
 } from './in-hull.ts';
 export type { LongWorkOptions } from './long-work.ts';
 export type { Points } from './points.ts';
+export { type SamplerOptions, sampler } from './sampler.ts';
 export { type Separability, type SeparableOptions, separable } from './separable.ts';
+export {
+  type SimulatedEvent,
+  type SimulateOptions,
+  type Simulation,
+  simulate,
+} from './simulate.ts';

@@ -15,7 +15,7 @@ export interface LongWorkOptions {
 }
 
 /** Operations in a slice. */
-const SLICE = 8e6;
+export const SLICE = 8e6;
 
 /** Cuts one call's work into slices. */
 export interface Pace {

@@ -36,9 +36,15 @@ export function checkPoints(fn: string, points: unknown): Matrix {
 }
 
 /** Refuses anything but one row of d finite numbers. */
-export function checkRow(fn: string, parameter: string, row: unknown, d: number): Float64Array {
+export function checkRow(
+  fn: string,
+  parameter: string,
+  row: unknown,
+  d: number,
+  why = 'as the rows of points have',
+): Float64Array {
   const copy = new Float64Array(d);
-  copyRow(fn, parameter, row, d, copy, 0, 'as the rows of points have');
+  copyRow(fn, parameter, row, d, copy, 0, why);
   return copy;
 }
 
