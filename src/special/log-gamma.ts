@@ -89,7 +89,8 @@ export function logGamma1pKernel(x: number): number {
 
 /** log Gamma(1 + z) for 0 <= z <= 3/2, to full relative accuracy at its zeros 0 and 1. */
 function logGammaBetweenZeros(z: number): number {
-  return z * ((z - 1) * evaluatePolynomial(BETWEEN_ZEROS, z - 0.75));
+  // 0 - ... so that neither zero comes out as -0
+  return 0 - z * ((1 - z) * evaluatePolynomial(BETWEEN_ZEROS, z - 0.75));
 }
 
 /**
