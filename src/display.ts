@@ -21,7 +21,8 @@ const MAX_DIGITS = 12;
 /** Digits that a relative error leaves, from 1 to 12. */
 function digitsFor(relativeError: number): number {
   if (!(relativeError > 0)) return MAX_DIGITS;
-  const digits = Math.floor(-Math.log(relativeError) / Math.LN10);
+  // An error of 1e-6 leaves six digits, though its logarithm rounds to less.
+  const digits = Math.floor(-Math.log(relativeError) / Math.LN10 + 1e-9);
   return Math.max(1, Math.min(MAX_DIGITS, digits));
 }
 
@@ -32,18 +33,23 @@ export function formatNumber(value: number, relativeError = 0): string {
   return text.replace(/\.?0+(?=e|$)/, '');
 }
 
+/** ln 10 as a part that times an exponent below 2^31 is exact, and the rest. */
+const LN10_HIGH = 2414435 / 2 ** 20;
+const LN10_LOW = 4.4486172146526799e-7;
+
 /** The positive number with natural logarithm `log`, in decimal, far beyond the range of doubles. */
 export function formatExponential(log: number, logError = 0): string {
   if (log === Number.NEGATIVE_INFINITY) return '0';
   if (log === Number.POSITIVE_INFINITY) return 'Infinity';
-  const error = logError + Math.abs(log) * 2.3e-16;
+  const error = logError + Math.abs(log) * 1.2e-16;
   if (Math.abs(log) < 700) return formatNumber(Math.exp(log), error);
   // Beyond 1e15 not even the exponent's last digit is known.
-  if (!(error < 1)) return `exp(${formatNumber(log)})`;
-  const decimal = log / Math.LN10;
-  let exponent = Math.floor(decimal);
+  if (!(error < 0.5)) return `exp(${formatNumber(log)})`;
+  let exponent = Math.floor(log / Math.LN10);
   const digits = digitsFor(error);
-  let mantissa = Math.exp((decimal - exponent) * Math.LN10).toPrecision(digits);
+  const rest = log - exponent * LN10_HIGH - exponent * LN10_LOW;
+  let mantissa = Math.exp(rest).toPrecision(digits);
+  // Rounding may carry into the exponent.
   if (mantissa.startsWith('10')) {
     mantissa = (1).toPrecision(digits);
     exponent++;

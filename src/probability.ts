@@ -135,7 +135,7 @@ export class Probability extends Displayable {
    * ```ts
    * import { Probability } from 'hullgauge';
    * Probability.fromLog(-2000).value; // => 0
-   * `${Probability.fromLog(-2000)}`; // => '2.58153722149e-869'
+   * `${Probability.fromLog(-2000)}`; // => '2.57653587296e-869'
    * ```
    */
   static fromLog(log: number, logError = 0): Probability {
@@ -144,7 +144,7 @@ export class Probability extends Displayable {
     return new Probability(
       Math.exp(log),
       -Math.expm1(log) || 0,
-      log,
+      log || 0,
       logOfComplement(log),
       logError,
     );

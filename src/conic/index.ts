@@ -22,6 +22,7 @@ export {
   linfDescentCone,
 } from './descent-cones.ts';
 export { coneMeetsSubspace, conesMeet } from './kinematics.ts';
+export { polyhedralCone } from './polyhedral-cone.ts';
 export {
   coverEfronCone,
   type RandomCone,

@@ -31,7 +31,7 @@ const MOST_STEPS = 1300;
  *
  * @param bracket - ends with gaps of different sign
  * @param gapAt - the function; called only strictly inside the bracket
- * @param integer - whether only integers below 2^53 are allowed
+ * @param integer - whether only integers are allowed
  * @param resolution - for real arguments, the relative width at which to stop
  * @returns the final bracket
  */
@@ -46,19 +46,25 @@ export function narrow(
   let last: Probe = Math.abs(lower.gap) < Math.abs(upper.gap) ? lower : upper;
   let previous: Probe | undefined;
   let slow = 0;
+  let overshoot = 0.1;
   for (let step = 0; step < MOST_STEPS; step++) {
     const width = upper.x - lower.x;
-    const unit = integer ? 1 : resolution * Math.max(Math.abs(lower.x), Math.abs(upper.x));
+    // Above 2^53 whole numbers are as far apart as doubles.
+    const size = Math.max(Math.abs(lower.x), Math.abs(upper.x));
+    const unit = integer ? Math.max(1, 2 ** -52 * size) : resolution * size;
     if (width <= unit) return { lower, upper };
     const wide = lower.x > 0 && upper.x > 2 * lower.x;
     let x = slow >= 2 ? midpoint(lower.x, upper.x, wide) : predict(lower, upper, previous, wide);
     if (slow < 2) {
-      // Overshoot, seen from the last point, by a tenth of the way or one unit.
-      const margin = Math.max(0.1 * Math.abs(x - last.x), 0.6 * unit);
-      x += last.x <= x ? margin : -margin;
+      // Overshoot, seen from the last point, so that the other end of the bracket follows.
+      const margin = Math.max(overshoot * Math.abs(x - last.x), 0.6 * unit);
+      x +=
+        last.x <= x
+          ? Math.min(margin, 0.5 * (upper.x - x))
+          : -Math.min(margin, 0.5 * (x - lower.x));
     }
     x = Math.min(Math.max(x, lower.x + 0.6 * unit), upper.x - 0.6 * unit);
-    if (integer) x = Math.min(Math.max(Math.round(x), lower.x + 1), upper.x - 1);
+    if (integer) x = Math.min(Math.max(Math.round(x), lower.x + unit), upper.x - unit);
     if (!(x > lower.x && x < upper.x)) return { lower, upper };
     const probe = { x, gap: gapAt(x) };
     const before = wide ? Math.log(upper.x / lower.x) : width;
@@ -69,6 +75,9 @@ export function narrow(
       previous = upper;
       upper = probe;
     }
+    // A prediction that crossed may be trusted more the next time.
+    const crossed = probe.gap < 0 !== last.gap < 0;
+    overshoot = crossed ? Math.max(0.05 * overshoot, 1e-6) : Math.min(20 * overshoot, 0.2);
     last = probe;
     const after = wide ? Math.log(upper.x / lower.x) : upper.x - lower.x;
     slow = after > 0.5 * before ? slow + 1 : 0;
@@ -98,6 +107,6 @@ function predict(lower: Probe, upper: Probe, third: Probe | undefined, wide: boo
     // Equal gaps give NaN here, which fails the comparison.
     if (quadratic > 0 && quadratic < end) t = quadratic;
   }
-  if (!(t > 0 && t < end)) t = 0.5 * end;
+  if (!(t >= 0 && t <= end)) t = 0.5 * end;
   return wide ? Math.exp(origin + t) : origin + t;
 }

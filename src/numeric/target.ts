@@ -16,18 +16,24 @@ export function targetOf(p: number | Probability): Probability {
 }
 
 /**
- * Log-odds of `p` minus log-odds of `target`: negative below the target, zero at it, positive above.
- * Finite differences keep their size in both tails, which is what root finding needs.
+ * A signed distance from the target: negative below it, zero at it, positive above.
+ *
+ * It is the difference of the log-odds, drawn in as the square root where they are large. Probabilities
+ * mostly have Gaussian tails in a well-chosen argument, and then the distance is nearly linear in it,
+ * which is what root finding needs.
  */
 export function oddsGap(p: Probability, target: Probability): number {
-  if (p.log === Number.NEGATIVE_INFINITY || p.logComplement === Number.NEGATIVE_INFINITY) {
-    const end = p.log === Number.NEGATIVE_INFINITY ? -Number.MAX_VALUE : Number.MAX_VALUE;
-    return reaches(p, target) ? Math.max(end, 0) : Math.min(end, -Number.MIN_VALUE);
-  }
-  const gap = p.log - p.logComplement - (target.log - target.logComplement);
-  // The sign has to agree with the comparison of the small side, which is finer near a tie.
-  if (reaches(p, target)) return Math.min(Math.max(gap, 0), Number.MAX_VALUE);
-  return Math.max(Math.min(gap, -Number.MIN_VALUE), -Number.MAX_VALUE);
+  const reached = reaches(p, target);
+  const gap = drawnIn(p) - drawnIn(target);
+  // The sign has to agree with the comparison of the small side, which is finer near a tie. Infinities
+  // on both sides give NaN, which the clamps turn into an end.
+  if (reached) return gap > 0 ? Math.min(gap, Number.MAX_VALUE) : 0;
+  return gap < 0 ? Math.max(gap, -Number.MAX_VALUE) : -Number.MIN_VALUE;
+}
+
+function drawnIn(p: Probability): number {
+  const odds = p.log - p.logComplement;
+  return Math.sign(odds) * (Math.sqrt(1 + Math.abs(odds)) - 1);
 }
 
 /** Whether `p >= target`, taking the computed numbers at their word. */
@@ -54,7 +60,7 @@ export function isCertain(p: Probability, target: Probability): boolean {
   const tail = lower ? p.value : p.complement;
   const targetTail = lower ? target.value : target.complement;
   const gap = comparable(tail, targetTail)
-    ? Math.abs(tail - targetTail) / targetTail
+    ? Math.abs(Math.log1p((tail - targetTail) / targetTail))
     : Math.abs(log - targetLog) - ROUNDING * Math.abs(targetLog);
   return gap > error + target.logError + ROUNDING;
 }

@@ -3,4 +3,19 @@
  *
  * @module
  */
-export {};
+export { logSpaced } from './log-spaced.ts';
+export {
+  type SizingAnswer,
+  type SizingReport,
+  type SizingReportArgs,
+  type SizingRow,
+  sizingReport,
+} from './sizing-report.ts';
+export {
+  type Answer,
+  type FixedArgs,
+  largest,
+  type ParameterOf,
+  smallest,
+  type Target,
+} from './smallest.ts';

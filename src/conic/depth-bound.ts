@@ -1,0 +1,161 @@
+/**
+ * A bound on the probability of being surrounded that holds for any law, through the half-space depth
+ * of the target.
+ *
+ * Notation: a = depth, K = Bin(n, a). Two bounds on P(not surrounded):
+ *
+ *   A: P(K <= d), for any law;
+ *   B: P(K <= d - 1) + binom(n - 1, d - 1) a^n, where no hyperplane through the target carries mass.
+ *
+ * B in its other form, with only positive terms, for the probability of being surrounded:
+ *
+ *   P(K >= d + 1) + binom(n, d) a^d ((1 - a)^(n-d) - a^(n-d)) + (n - d)/n binom(n, d) a^n.
+ */
+import { type Count, resolveCount } from '../count.ts';
+import { checkBoolean, checkFinite, checkInteger, checkOptions } from '../domain.ts';
+import { logOfComplement, type Probability, probabilityFromTail } from '../probability.ts';
+import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
+import { logBinomialKernel } from '../special/log-beta.ts';
+import { wendel } from './wendel.ts';
+
+/** Arguments of {@link originInHullLowerBound}. */
+export interface OriginInHullLowerBoundArgs {
+  /** Number of points: an integer >= 0, any finite double above 2^53, or a LogNumber. */
+  readonly n: Count;
+  /** Dimension: an integer from 0 to 2^53 - 1. */
+  readonly d: number;
+  /**
+   * Half-space depth of the target under the law of the points: the smallest probability of a closed
+   * half-space that contains it; from 0 to 1, and at most 1/2 in general position.
+   */
+  readonly depth: number;
+  /** Whether no hyperplane through the target carries mass; `false` if left out. */
+  readonly generalPosition?: boolean;
+}
+
+/**
+ * A lower bound on the probability that n points surround the target in R^d, for any law, from the
+ * half-space depth of the target: the safe size where {@link originInHull} is the optimistic one.
+ *
+ * With $K \sim \mathrm{Bin}(n, \alpha)$ and depth $\alpha$,
+ *
+ * $$ P(\text{not surrounded}) \le P(K \le d) $$
+ *
+ * for any law (bound A), and if no hyperplane through the target carries mass (bound B)
+ *
+ * $$ P(\text{not surrounded}) \le P(K \le d-1) + \binom{n-1}{d-1}\alpha^n . $$
+ *
+ * Status: A follows from the exact feasibility theorem of scenario programs. B is this library's own;
+ * its proof is only sketched and it was checked numerically (against simulation in R^3 and exactly in
+ * the plane). B is attained by mixtures of a symmetric law with one fixed direction, and equals
+ * Wendel's formula at depth 1/2.
+ *
+ * The depth is a property of the law and the target, not of the sample; a sample depth does not replace
+ * it. The mean of a log-concave law has depth at least 1/e. The number holds under these assumptions;
+ * it does not replace a safety review.
+ *
+ * @param args - `n`: number of points; `d`: dimension; `depth`: half-space depth in [0, 1];
+ *   `generalPosition`: whether bound B may be used, `false` if left out
+ * @returns a probability that is at most the true one; 0 for n <= d
+ * @remarks Constant cost. Relative error of the bound's smaller tail below its `logError`.
+ * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain, or if `depth`
+ *   exceeds 1/2 with `generalPosition`
+ *
+ * Source: "The exact feasibility of randomized solutions of uncertain convex programs", SIAM Journal on
+ * Optimization 19 (2008) 1211-1230, for A; "A continuous analogue of the upper bound theorem", Discrete
+ * and Computational Geometry 26 (2001) 205-219, for the function from which B is derived.
+ *
+ * @example
+ * ```ts
+ * import { originInHull, originInHullLowerBound } from 'hullgauge';
+ * originInHull({ n: 20, d: 3 }).value.toPrecision(6); // => '0.999636'
+ * originInHullLowerBound({ n: 20, d: 3, depth: 0.3 }).value.toPrecision(6); // => '0.892913'
+ * originInHullLowerBound({ n: 20, d: 3, depth: 0.3, generalPosition: true }).value.toPrecision(6); // => '0.964517'
+ * ```
+ */
+export function originInHullLowerBound(args: OriginInHullLowerBoundArgs): Probability {
+  const fn = 'originInHullLowerBound';
+  checkOptions(fn, args, ['n', 'd', 'depth', 'generalPosition']);
+  const { n } = resolveCount(fn, 'n', args.n);
+  const { d, depth, generalPosition = false } = args;
+  checkInteger(fn, 'd', d, 0);
+  checkBoolean(fn, 'generalPosition', generalPosition);
+  checkFinite(fn, 'depth', depth, 0, generalPosition ? 0.5 : 1);
+  if (n === 0 || (d > 0 && (n <= d || depth === 0))) {
+    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
+  }
+  if (d === 0 || depth === 1) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  if (n === Number.POSITIVE_INFINITY) {
+    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', Number.POSITIVE_INFINITY);
+  }
+  if (!generalPosition) return anyLaw(n, d, depth);
+  return depth === 0.5 ? wendel(n, d) : inGeneralPosition(n, d, depth);
+}
+
+/** Bound A. */
+function anyLaw(n: number, d: number, depth: number): Probability {
+  const out = new Float64Array(3);
+  const lower = incompleteBetaKernel(d + 1, n - d, depth, 1 - depth, out);
+  return probabilityFromTail(
+    out[0] as number,
+    out[1] as number,
+    lower ? 'lower' : 'upper',
+    out[2] as number,
+  );
+}
+
+/** Bound B for 0 < depth < 1/2 and n > d, on its smaller side. */
+function inGeneralPosition(n: number, d: number, depth: number): Probability {
+  const logDepth = Math.log(depth);
+  const outside = new TermSum();
+  outside.addTail(d, n - d + 1, depth, false);
+  // binom(n - 1, d - 1) = d/n binom(n, d)
+  const logChoose = logBinomialKernel(n, d);
+  const allDeep = logChoose + n * logDepth;
+  outside.addTerm(Math.log(d / n) + allDeep, logChoose - n * logDepth);
+  if (outside.log < -Math.LN2) {
+    return probabilityFromTail(Math.exp(outside.log), outside.log, 'upper', outside.error());
+  }
+  const inside = new TermSum();
+  inside.addTail(d + 1, n - d, depth, true);
+  const logShallow = Math.log1p(-depth);
+  const decay = (n - d) * (logDepth - logShallow);
+  const atLevel = logChoose + d * logDepth + (n - d) * logShallow;
+  const size = logChoose - d * logDepth - (n - d) * logShallow;
+  inside.addTerm(atLevel + logOfComplement(decay), size);
+  inside.addTerm(Math.log((n - d) / n) + allDeep, logChoose - n * logDepth);
+  const log = Math.min(inside.log, 0);
+  return probabilityFromTail(Math.exp(log), log, 'lower', inside.error());
+}
+
+/** A sum of positive terms given by logarithms, with the error that each brings. */
+class TermSum {
+  log: number = Number.NEGATIVE_INFINITY;
+  private weightedError = 0;
+
+  /** Adds I_p(a, b), or its complement. */
+  addTail(a: number, b: number, p: number, lower: boolean): void {
+    const out = new Float64Array(3);
+    const small = incompleteBetaKernel(a, b, p, 1 - p, out);
+    if (small === lower) this.add(out[1] as number, out[2] as number);
+    else this.add(Math.log1p(-(out[0] as number)), out[2] as number);
+  }
+
+  /** Adds e^log, formed from logarithms whose sizes add up to `size`. */
+  addTerm(log: number, size: number): void {
+    this.add(log, 2 ** -51 * (4 + size));
+  }
+
+  private add(log: number, error: number): void {
+    const largest = Math.max(this.log, log);
+    if (largest === Number.NEGATIVE_INFINITY) return;
+    const before = Math.exp(this.log - largest);
+    const added = Math.exp(log - largest);
+    this.weightedError = (before * this.weightedError + added * error) / (before + added);
+    this.log = largest + Math.log(before + added);
+  }
+
+  error(): number {
+    return this.weightedError + 2 ** -51 * (1 + Math.abs(this.log));
+  }
+}

@@ -1,0 +1,108 @@
+/**
+ * Hulls of Gaussian points: membership of a Gaussian query and expected numbers of faces.
+ *
+ * Both are one statement about the kernel of a Gaussian matrix, which misses a cone with probability
+ * 2 (v_(d-1) + v_(d-3) + ..), v_j the conic intrinsic volumes (orthant-sequences.ts). Notation: v is
+ * the number of vertices of a face, one more than its dimension.
+ */
+import { wendel } from '../conic/wendel.ts';
+import type { ResolvedCount } from '../count.ts';
+import { logFaceTermKernel } from '../numeric/orthant.ts';
+import {
+  lastOrthantIndex,
+  type OrthantSequence,
+  orthantSequence,
+} from '../numeric/orthant-sequences.ts';
+import { logOutwardSum, paritySplit } from '../numeric/parity-split.ts';
+import { type Probability, probabilityFromTail } from '../probability.ts';
+import { logBinomialKernel } from '../special/log-beta.ts';
+import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
+
+const EPSILON = 2 ** -52;
+const LOG_TWO_PI = 1.8378770664093455;
+
+/** Of which points the hull is taken: the points, with their mirror images, or with the centre. */
+export type HullKind = 'plain' | 'symmetric' | 'withCentre';
+
+const SEQUENCE = {
+  plain: 'simplex',
+  symmetric: 'absolute',
+  withCentre: 'nonnegative',
+} as const satisfies Record<HullKind, OrthantSequence>;
+
+/** P(scale times an independent point lies in the hull of n points), scale = 0 or 1e-100 .. 1e100. */
+export function gaussianMembership(
+  count: ResolvedCount,
+  d: number,
+  scale: number,
+  hull: HullKind,
+): Probability {
+  if (scale === 0) {
+    if (hull === 'plain') return wendel(count.n, d);
+    const certain = hull === 'withCentre' || count.n > 0;
+    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, certain ? 'upper' : 'lower', 0);
+  }
+  const sequence = SEQUENCE[hull];
+  const term = orthantSequence(sequence, count.n, count.log, 1 / scale / scale);
+  return paritySplit(term, d, 0, lastOrthantIndex(sequence, count.n));
+}
+
+/** P(v given points do not span a face of the hull of n >= v points): the complement is survival. */
+export function faceLoss(count: ResolvedCount, d: number, v: number, hull: HullKind): Probability {
+  const sequence = SEQUENCE[hull];
+  const M = count.n - v;
+  if (M === 0 && sequence === 'simplex') {
+    // All points: a simplex, in general position, has no other face of its own dimension.
+    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, d >= v - 1 ? 'lower' : 'upper', 0);
+  }
+  const logM = M < 1e15 ? Math.log(M) : count.log;
+  const term = orthantSequence(sequence, M, logM, v);
+  return paritySplit(term, d - v + 1, 0, lastOrthantIndex(sequence, M));
+}
+
+/**
+ * log of the expected number of faces with v <= d vertices (with 'withCentre': those that do not have
+ * the centre as a vertex); writes a bound on its absolute error to `error[0]`.
+ */
+export function logGaussianFaces(
+  count: ResolvedCount,
+  d: number,
+  v: number,
+  hull: HullKind,
+  error: Float64Array,
+): number {
+  error[0] = 0;
+  if (count.n < v) return Number.NEGATIVE_INFINITY;
+  const loss = faceLoss(count, d, v, hull);
+  const signs = hull === 'symmetric' ? v * Math.LN2 : 0;
+  if (loss.value <= 0.5 || hull === 'withCentre') {
+    const choices = logChoices(count, v, error) + signs;
+    const survivalError = loss.logError * (loss.value <= 0.5 ? loss.value / loss.complement : 1);
+    error[0] = (error[0] as number) + survivalError + EPSILON * choices;
+    return choices + loss.logComplement;
+  }
+  const kind = hull === 'symmetric' ? 'absolute' : 'line';
+  const log = logOutwardSum(
+    (m, bound) => logFaceTermKernel(count.n, count.log, m, v, kind, bound),
+    Math.min(d, d - 2 * Math.ceil((d - count.n) / 2)),
+    -2,
+    v,
+    error,
+  );
+  return Math.LN2 + log;
+}
+
+/** log of the number of ways to choose v out of n, n beyond doubles included. */
+export function logChoices(count: ResolvedCount, v: number, error: Float64Array): number {
+  const { n, log } = count;
+  const choices =
+    n < 1e290
+      ? logBinomialKernel(n, v)
+      : v === 0
+        ? 0
+        : v * (1 + log - Math.log(v)) -
+          stirlingRemainderKernel(v) -
+          0.5 * (LOG_TWO_PI + Math.log(v));
+  error[0] = v < 2 ? 0.5 * EPSILON * choices : EPSILON * (4 + 2 * choices);
+  return choices;
+}
