@@ -122,6 +122,7 @@ describe('log1pmx and expm1mx', () => {
   it('are inverse in the sense that e^log(1 + x) = 1 + x', () => {
     fc.assert(
       fc.property(fc.double({ min: -0.9, max: 3, noNaN: true }), (x) => {
+        fc.pre(x === 0 || Math.abs(x) > 1e-140);
         // with t = log(1 + x): expm1mx(t) = x - t = -log1pmx(x)
         const t = Math.log1p(x);
         const rounding = 3e-16 * Math.abs(t * x);
