@@ -34,14 +34,6 @@ export {
   uniformSphere,
 } from './law.ts';
 export { LogNumber, type PlainLogNumber } from './log-number.ts';
-export { type PlainProbability, Probability, type ProbabilityFields } from './probability.ts';
-export {
-  type Hull,
-  type HullIntrinsicVolumeRatioOptions,
-  type HullVolumeRatioOptions,
-  hullIntrinsicVolumeRatio,
-  hullVolumeRatio,
-} from './polytope/index.ts';
 export {
   type SizingAnswer,
   type SizingReport,
@@ -57,3 +49,32 @@ export {
   smallest,
   type Target,
 } from './plan/smallest.ts';
+export {
+  type ApproxVolumeThresholdOptions,
+  approxVolumeThreshold,
+  type CapProbabilityOptions,
+  capProbability,
+  type ExpectedFacetsBelowOptions,
+  type ExpectedFacetsOptions,
+  type ExpectedHullIntrinsicVolumeOptions,
+  type ExpectedHullVolumeOptions,
+  expectedFacets,
+  expectedFacetsBelow,
+  expectedHullIntrinsicVolume,
+  expectedHullVolume,
+  type FacetHeight,
+  type FacetHeightOptions,
+  facetHeight,
+  type HeightLimit,
+  type HeightLimitOptions,
+  type Hull,
+  type HullIntrinsicVolumeRatioOptions,
+  type HullVolumeRatioOptions,
+  heightLimit,
+  hullIntrinsicVolumeRatio,
+  hullVolumeRatio,
+  type SimplexVolume,
+  type SimplexVolumeOptions,
+  simplexVolume,
+} from './polytope/index.ts';
+export { type PlainProbability, Probability, type ProbabilityFields } from './probability.ts';

@@ -50,6 +50,9 @@ export class BetaTail implements Tail {
   oneMinusExcess = 0;
   /** log w */
   logWidth = 0;
+  /** log w - log w0 and log L - log L0, relative to the reference point. */
+  widthShift = 0;
+  excessShift = 0;
   /** h */
   height = 0;
   /** s = atanh h */
@@ -101,7 +104,7 @@ export class BetaTail implements Tail {
     this.fixReference();
   }
 
-  /** Takes the height h as reference point; `oneMinusSquare` is 1 - h^2 without cancellation. */
+  /** Takes the height h as reference point, -1 < h < 1, without rounding atanh h. */
   centreAtHeight(h: number): void {
     this.range = 'line';
     const a = Math.abs(h);
@@ -109,6 +112,13 @@ export class BetaTail implements Tail {
     if (h < 0) this.s = -this.s;
     this.logWidth = a < 0.4 ? Math.log1p(-h * h) : Math.log1p(-a) + Math.log1p(a);
     this.evaluate(a, 1 - a, h < 0);
+    this.fixReference();
+  }
+
+  /** Takes atanh h = s as reference point. */
+  centreAtArgument(s: number): void {
+    this.range = 'line';
+    this.place(s);
     this.fixReference();
   }
 
@@ -160,12 +170,14 @@ export class BetaTail implements Tail {
     const s = this.s0 + t;
     this.s = s;
     const difference = this.widthDifference(t, s);
+    this.widthShift = difference;
     this.logWidth = this.logWidth0 + difference;
     const e = s >= 0 ? Math.exp(-2 * s) : Math.exp(2 * s);
     const a = s > 0.2 || s < -0.2 ? (1 - e) / (1 + e) : Math.abs(Math.tanh(s));
     const fractionUsed = this.evaluate(a, (2 * e) / (1 + e), s < 0);
+    this.excessShift = this.logExcess - this.logExcess0;
     this.shift = fractionUsed
-      ? (this.b + 1) * difference - (this.logExcess - this.logExcess0)
+      ? (this.b + 1) * difference - this.excessShift
       : this.logTail - this.logTail0;
     if (fractionUsed) {
       this.logTail = this.logTail0 + this.shift;

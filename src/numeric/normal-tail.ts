@@ -22,6 +22,8 @@ export class NormalTail implements Tail {
   height = 0;
   /** h - h0 */
   heightShift = 0;
+  /** log of the hazard phi / v, relative to the reference point. */
+  excessShift = 0;
 
   private range: TailRange = 'line';
   private h0 = 0;
@@ -75,6 +77,7 @@ export class NormalTail implements Tail {
       logMills = this.negativeMills(h, this.logTail);
     }
     this.logExcess = -logMills;
+    this.excessShift = this.logMills0 - logMills;
     this.logHazard = logJacobian - logMills;
     if (this.range === 'folded') {
       this.logTail += Math.LN2;

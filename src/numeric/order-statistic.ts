@@ -75,6 +75,8 @@ export interface OrderDensity {
   readonly constant: number;
   /** The rest, at an offset from the reference point of the tail; leaves the tail there. */
   at(offset: number): number;
+  /** Change of the logarithm of the binomial weight at the reference point with log v. */
+  readonly pull: number;
   /** Bound on the error that rounding leaves in log E[W], from the weight near the peak. */
   rounding(peak: number, logWeight: () => number): number;
 }
@@ -105,15 +107,19 @@ export function logOrderDensity(tail: Tail, order: OrderStatistic): OrderDensity
     const tau = start + tail.shift;
     const size = Math.abs(tail.logTail);
     const pull = rest === 0 ? m : m * Math.abs(Math.expm1(tau));
-    const hazard = Math.exp(tail.logHazard);
-    const step = 0.01 / (hazard * Math.sqrt(m));
+    const { shift } = tail;
+    const step = Math.min(1, 0.01 / (Math.exp(tail.logHazard) * Math.sqrt(m)));
     tail.moveTo(peak + step);
-    const slope = Math.abs(logWeight() - weight) / (step * hazard);
-    const inputs = Math.abs(log) + size + 2;
+    const change = Math.abs(tail.shift - shift);
+    const slope = change > 1e-8 ? Math.abs(logWeight() - weight) / change : 0;
+    const inputs = Math.abs(log) + size + Math.abs(shift) + 2;
     return (
       EPSILON *
-      (6 + 2 * Math.abs(weight) + (2 * slope + 1 / m) * inputs + 2 * pull * Math.min(inputs, 4))
+      (6 +
+        2 * Math.abs(weight) +
+        (2 * slope + 1 / m) * inputs +
+        2 * pull * (Math.min(inputs, 4) + Math.abs(shift)))
     );
   };
-  return { constant, at, rounding };
+  return { constant, at, pull: m * Math.abs(Math.expm1(start)), rounding };
 }

@@ -6,6 +6,7 @@
  * squares it. The sum runs outward from the peak until the terms have dropped by 42 nats; each level
  * adds the midpoints of the one before, and the difference of two levels tells when to stop.
  */
+import { findPeak } from './peak-search.ts';
 
 /** An integral by its logarithm. */
 export interface UnimodalIntegral {
@@ -41,7 +42,7 @@ export function integrateUnimodal(
   width: number,
   factors: readonly (() => number)[] = [],
 ): UnimodalIntegral {
-  const top = climb(logIntegrand, width);
+  const top = findPeak(logIntegrand, width, Number.NEGATIVE_INFINITY);
   let step = FIRST_STEP * deviation(logIntegrand, top.x, top.value, top.step);
   const sums = new Float64Array(factors.length + 1);
   const peak = top.x;
@@ -87,49 +88,6 @@ export function integrateUnimodal(
   throw new Error(
     `integrateUnimodal: no convergence, the logarithm is near ${top.value + Math.log(previous)}`,
   );
-}
-
-interface Top {
-  readonly x: number;
-  readonly value: number;
-  readonly step: number;
-}
-
-/** Climbs from 0 to a point near the maximum: doubling steps, then halving ones. */
-function climb(f: (x: number) => number, width: number): Top {
-  let x = 0;
-  let value = f(0);
-  let step = width;
-  let right = f(step);
-  let left = f(-step);
-  // a start where nothing is representable: spread out until something is
-  for (let i = 0; i < 60 && !(Math.max(value, left, right) > Number.NEGATIVE_INFINITY); i++) {
-    step *= 2;
-    right = f(step);
-    left = f(-step);
-  }
-  const direction = right > left ? 1 : -1;
-  let next = Math.max(right, left);
-  for (let i = 0; i < 2000 && next > value; i++) {
-    x += direction * step;
-    value = next;
-    step *= 1.7;
-    next = f(x + direction * step);
-  }
-  // the maximum lies within one step on either side: close in until neither neighbour is far below
-  for (let i = 0; i < 300; i++) {
-    step *= 0.5;
-    right = f(x + step);
-    left = f(x - step);
-    if (right > value && right >= left) {
-      x += step;
-      value = right;
-    } else if (left > value) {
-      x -= step;
-      value = left;
-    } else if (Math.min(right, left) > value - 1) break;
-  }
-  return { x, value, step };
 }
 
 /** The smaller of the two distances at which the integrand has dropped, as a standard deviation. */

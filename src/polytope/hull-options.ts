@@ -24,9 +24,9 @@ export function resolveHull(fn: string, hull: unknown, choices: readonly Hull[] 
   return hull;
 }
 
-/** Refuses anything but a dimension from 1 to a million. */
-export function checkDimension(fn: string, d: unknown): asserts d is number {
-  checkInteger(fn, 'd', d, 1, MAX_DIMENSION);
+/** Refuses anything but a dimension from 1, or the given least one, to a million. */
+export function checkDimension(fn: string, d: unknown, least = 1): asserts d is number {
+  checkInteger(fn, 'd', d, least, MAX_DIMENSION);
 }
 
 /** Refuses anything but a number of points. */

@@ -19,6 +19,7 @@ import {
   type LogExpectation,
   orderStatisticExpectation,
 } from '../numeric/order-statistic.ts';
+import { exactLogError } from '../numeric/target.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 import { fairBinomialTail } from '../special/fair-binomial.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
@@ -47,8 +48,10 @@ export function volumeRatioKernel(
 /** d = 1 and points at -1 and 1: the hull is a segment or a point. */
 function twoPoint(count: ResolvedCount, hull: Hull): Probability {
   if (hull === 'symmetric') return CERTAIN;
-  const log = hull === 'plain' ? (1 - count.n) * Math.LN2 : -count.n * Math.LN2;
-  return probabilityFromTail(Math.exp(log), log, 'upper', -log * 2 ** -53);
+  const exponent = hull === 'plain' ? 1 - count.n : -count.n;
+  const log = exponent * Math.LN2;
+  // a power of two, so the value is exact
+  return probabilityFromTail(2 ** exponent, log, 'upper', exactLogError(log));
 }
 
 /** The probability from whichever of the two expectations is the smaller. */

@@ -1,0 +1,188 @@
+/**
+ * How deep the typical facet of a random polytope cuts.
+ */
+import { type Count, type ResolvedCount, resolveCount } from '../count.ts';
+import type { Distribution } from '../distribution.ts';
+import { checkNumber, checkOptions } from '../domain.ts';
+import { type BetaLaw, checkLaw, type GaussianLaw, type Law } from '../law.ts';
+import { targetOf } from '../numeric/target.ts';
+import { type Probability, probabilityFromTail } from '../probability.ts';
+import { checkProbability } from '../special/probability-argument.ts';
+import {
+  type FacetModel,
+  facetModel,
+  facetsBeyond,
+  facetTotal,
+  logFacetDensity,
+} from './facet-measure.ts';
+import { checkDimension, resolveMarginal } from './hull-options.ts';
+
+const FAMILIES = ['beta', 'gaussian'] as const;
+const MAX_STEPS = 200;
+
+/** Options of {@link facetHeight}. */
+export interface FacetHeightOptions {
+  /** Number of points, above d. */
+  readonly n: Count;
+  /** Dimension, from 2 to a million. */
+  readonly d: number;
+  /** A beta law or the Gaussian. */
+  readonly law: Law;
+}
+
+/** The law of the height of the typical facet. */
+export interface FacetHeight extends Distribution {
+  /** Natural logarithm of the density. */
+  logPdf(x: number): number;
+  /**
+   * The height of the limit theorem for d to infinity with log(n)/d fixed: $\sqrt{1 - n^{-2/d}}$ for a
+   * beta law, $\sqrt{2 \ln n}$ for the Gaussian.
+   */
+  readonly limit: number;
+}
+
+/**
+ * Law of the signed height of the typical facet of the hull of n random points, for n > d >= 2: how far
+ * from the centre the hull is cut, facets counted equally.
+ *
+ * Its density is proportional to $(1 - h^2)^a F(h)^{n-d}$ on $[-1, 1]$ with $a = d\beta + (d^2 - 1)/2$ for
+ * the beta law, F the distribution function of one coordinate, and to $e^{-d h^2/2}\, \Phi(h)^{n-d}$ for the
+ * Gaussian. A negative height means that the centre lies beyond the facet. The height rises with n in
+ * distribution.
+ *
+ * `limit` stands beside the exact law: it is approached slowly, with an error of the order
+ * $\ln d / d$ (0.795 against an exact 0.785 at d = 500 and log n = 250 on the sphere).
+ *
+ * Cost: a fraction of a millisecond for each value of the cdf, a few milliseconds for a quantile. Accuracy:
+ * bounded by the `logError` of each probability; mean 1e-14, variance 1e-12 relative up to d = 5000.
+ *
+ * Source: Facets of spherical random polytopes, arXiv:1908.04033.
+ *
+ * @param options - `n`: an integer > d or a `LogNumber`; `d`: an integer from 2 to a million; `law`: a beta
+ * law or `gaussian()`
+ * @returns mean, variance, cdf, quantile, logPdf and the limit
+ * @throws A {@link DomainError} if an option is missing, unknown or out of range
+ *
+ * @example
+ * ```ts
+ * import { facetHeight, uniformSphere } from 'hullgauge';
+ * // on the sphere of R^3, (1 + H)/2 has the law Beta(n - 1, 2)
+ * const height = facetHeight({ n: 30, d: 3, law: uniformSphere() });
+ * height.mean.toPrecision(12); // => (27 / 31).toPrecision(12)
+ * height.cdf(0.7).value.toPrecision(8); // => '0.048028898'
+ * ```
+ */
+export function facetHeight(options: FacetHeightOptions): FacetHeight {
+  const fn = 'facetHeight';
+  checkOptions(fn, options, ['n', 'd', 'law']);
+  const { d } = options;
+  checkDimension(fn, d, 2);
+  const law = checkLaw(fn, options.law, FAMILIES, d) as BetaLaw | GaussianLaw;
+  if (law.family === 'beta') resolveMarginal(fn, law, d);
+  const count = resolveCount(fn, 'n', options.n, d + 1);
+  const model = facetModel(law, d);
+  const bounded = law.family === 'beta';
+  const { mean, variance } = heightMoments(model, count);
+  const deviation = Math.sqrt(variance);
+  const cdf = (x: number): Probability => {
+    checkNumber('facetHeight.cdf', 'x', x);
+    if (Math.abs(x) === Number.POSITIVE_INFINITY || (bounded && Math.abs(x) >= 1)) {
+      return probabilityFromTail(0, Number.NEGATIVE_INFINITY, x < 0 ? 'lower' : 'upper', 0);
+    }
+    return heightCdf(model, count, x);
+  };
+  return Object.freeze({
+    mean,
+    variance,
+    cdf,
+    quantile: (p: number | Probability): number => {
+      checkProbability('facetHeight.quantile', 'p', p);
+      const target = targetOf(p);
+      const end = bounded ? 1 : Number.POSITIVE_INFINITY;
+      if (target.log === Number.NEGATIVE_INFINITY) return -end;
+      if (target.logComplement === Number.NEGATIVE_INFINITY) return end;
+      return heightQuantile(model, count, target, mean, deviation, end);
+    },
+    logPdf: (x: number): number => {
+      checkNumber('facetHeight.logPdf', 'x', x);
+      if (Math.abs(x) === Number.POSITIVE_INFINITY || (bounded && Math.abs(x) >= 1)) {
+        return Number.NEGATIVE_INFINITY;
+      }
+      return logFacetDensity(model, count, x) - facetTotal(model, count, 'line').log;
+    },
+    limit: bounded ? Math.sqrt(-Math.expm1((-2 * count.log) / d)) : Math.sqrt(2 * count.log),
+  });
+}
+
+/** Mean and variance from one integral, about the height of its reference point. */
+function heightMoments(
+  model: FacetModel,
+  count: ResolvedCount,
+): { mean: number; variance: number } {
+  const { tail } = model;
+  let start = Number.NaN;
+  const shift = (): number => {
+    if (Number.isNaN(start)) start = tail.height - tail.heightShift;
+    return tail.heightShift;
+  };
+  const first = facetTotal(model, count, 'line', [shift]);
+  const middle = first.means[0] as number;
+  const square = (): number => {
+    const x = tail.heightShift - middle;
+    return x * x;
+  };
+  const second = facetTotal(model, count, 'line', [square]);
+  return { mean: start + middle, variance: second.means[0] as number };
+}
+
+function heightCdf(model: FacetModel, count: ResolvedCount, x: number): Probability {
+  const below = facetsBeyond(model, count, x, -1);
+  const above = facetsBeyond(model, count, x, 1);
+  const lower = below.log <= above.log;
+  const small = lower ? below : above;
+  const large = lower ? above : below;
+  const log = small.log - large.log - Math.log1p(Math.exp(small.log - large.log));
+  const error = small.error - small.commonError + large.error - large.commonError;
+  return probabilityFromTail(Math.exp(log), log, lower ? 'lower' : 'upper', error);
+}
+
+/**
+ * Newton's rule for the logarithm of the smaller tail, which is concave in the height: after at most one
+ * step past the root the iterates approach it from one side.
+ */
+function heightQuantile(
+  model: FacetModel,
+  count: ResolvedCount,
+  target: Probability,
+  mean: number,
+  deviation: number,
+  end: number,
+): number {
+  const lower = target.log <= target.logComplement;
+  const goal = lower ? target.log : target.logComplement;
+  const total = facetTotal(model, count, 'line').log;
+  const sign = lower ? 1 : -1;
+  let x = mean;
+  let low = -end;
+  let high = end;
+  for (let i = 0; i < MAX_STEPS; i++) {
+    const p = heightCdf(model, count, x);
+    const gap = (lower ? p.log : p.logComplement) - goal;
+    if (gap === 0) return x;
+    // the cdf rises: too much of the lower tail, or too little of the upper one, means x is too high
+    if (gap * sign > 0) high = x;
+    else low = x;
+    const slope = Math.exp(
+      logFacetDensity(model, count, x) - total - (lower ? p.log : p.logComplement),
+    );
+    let next = x - (sign * gap) / slope;
+    if (!(next > low && next < high)) {
+      next = Number.isFinite(low + high) ? 0.5 * (low + high) : x - 2 * sign * Math.sign(gap);
+    }
+    if (Math.abs(next - x) <= 2e-16 * Math.abs(x) + 1e-13 * deviation) return next;
+    x = next;
+  }
+  throw new Error(
+    `facetHeight.quantile: no convergence, the height lies between ${low} and ${high}`,
+  );
+}
