@@ -45,7 +45,7 @@ test('x', () => {
     'recovery.linf_success': a=>{const r=C.coneMeetsSubspace(C.linfDescentCone({n:a.n,saturated:a.k}),{codimension:a.m});return [r.complement,r.logComplement]},
     'recovery.nonneg_feasible_unique': a=>{const r=C.recoverySuccess({model:'nonnegativeFeasible',n:a.n,sparsity:a.s,measurements:a.m});return [r.value,r.log]},
     'civ.cone_R3': a=>{const P=(C as any).polyhedralCone; if(!P) return null; const r=P(a.rays);return [r.intrinsicVolumes[a.k]!,r.logIntrinsicVolumes[a.k]!]},
-    'civ.cone_R4': a=>{const P=(C as any).polyhedralCone; if(!P) return null;  const r=P(a.generators[0].map((_:any,i:number)=>a.generators.map((g:number[])=>g[i])));return [r.intrinsicVolumes[a.k]!,r.logIntrinsicVolumes[a.k]!]},
+    'civ.cone_R4': a=>{const P=(C as any).polyhedralCone; if(!P) return null;  const r=P(a.generators);return [r.intrinsicVolumes[a.k]!,r.logIntrinsicVolumes[a.k]!]},
   };
   const worst:Record<string,[number,number,number]>={};
   for (const x of rows) { const fn=f[x.quantity]; if(!fn){ if(!/^(wendel|depth|cover|logit|chibar)/.test(x.quantity)) console.log('skip',x.quantity); continue;}

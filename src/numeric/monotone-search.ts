@@ -39,7 +39,7 @@ export function narrow(
   bracket: Bracket,
   gapAt: (x: number) => number,
   integer: boolean,
-  resolution = 2 ** -51,
+  resolution: number = 2 ** -51,
 ): Bracket {
   let { lower, upper } = bracket;
   const rises = lower.gap < 0;
