@@ -212,7 +212,10 @@ function describe(
     expectedFaces(k: number): LogNumber {
       checkInteger(`${fn}.expectedFaces`, 'k', k, 0, d);
       const log = logExpectedFaces(n, d, schlaefliIndex(k));
-      return LogNumber.fromLog(log, Math.abs(log) > 0 && log > -1 ? EPSILON * (8 + 4 * (log + d * Math.LN2)) : 0);
+      return LogNumber.fromLog(
+        log,
+        Math.abs(log) > 0 && log > -1 ? EPSILON * (8 + 4 * (log + d * Math.LN2)) : 0,
+      );
     },
     expectedIntrinsicVolumes: Object.freeze(volumes),
     logExpectedIntrinsicVolumes: Object.freeze(logs),
