@@ -172,7 +172,8 @@ export class BetaTail implements Tail {
     const difference = this.widthDifference(t, s);
     this.widthShift = difference;
     this.logWidth = this.logWidth0 + difference;
-    const e = s >= 0 ? Math.exp(-2 * s) : Math.exp(2 * s);
+    // from the reference point, where possible: the rounding of s would cost ulp(s) at every point
+    const e = s >= 0 && this.s0 >= 0 ? this.e0 * Math.exp(-2 * t) : Math.exp(-2 * Math.abs(s));
     const a = s > 0.2 || s < -0.2 ? (1 - e) / (1 + e) : Math.abs(Math.tanh(s));
     const fractionUsed = this.evaluate(a, (2 * e) / (1 + e), s < 0);
     this.excessShift = this.logExcess - this.logExcess0;

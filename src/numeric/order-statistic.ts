@@ -13,6 +13,7 @@
  *
  * which keeps its digits up to n = e^100000: beyond doubles the last term is that of Poisson's law, 0.
  */
+import { sumError } from '../special/double-double.ts';
 import { expm1mxKernel } from '../special/log-domain.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 import type { Tail, TailRange } from './tail.ts';
@@ -35,6 +36,8 @@ export interface OrderStatistic {
 /** The logarithm of an expectation, with what its error depends on. */
 export interface LogExpectation {
   readonly log: number;
+  /** The expectation itself, to more digits than the exponential of its logarithm. */
+  readonly value: number;
   /** Bound on the absolute error of the logarithm. */
   readonly error: number;
   /** Means of the factors under the weighted law. */
@@ -57,8 +60,11 @@ export function orderStatisticExpectation(
   const density = logOrderDensity(tail, order);
   const width = Math.exp(-tail.logHazard) / Math.sqrt(order.m);
   const integral = integrateUnimodal((x) => density.at(x) + logWeight(), width, factors);
+  const high = density.constant + integral.scale;
+  const low = sumError(density.constant, integral.scale, high);
   return {
-    log: density.constant + integral.log,
+    log: high + (low + Math.log(integral.sum)),
+    value: Math.exp(high) * (1 + low) * integral.sum,
     error: integral.error + density.rounding(integral.peak, logWeight),
     means: integral.means,
   };

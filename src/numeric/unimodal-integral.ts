@@ -12,6 +12,10 @@ import { findPeak } from './peak-search.ts';
 export interface UnimodalIntegral {
   /** Logarithm of the integral. */
   readonly log: number;
+  /** The integral is exp(scale) times this: for its value without the rounding of its logarithm. */
+  readonly sum: number;
+  /** Logarithm of the largest value of the integrand, roughly. */
+  readonly scale: number;
   /** Bound on the relative error of the rule itself, without rounding. */
   readonly error: number;
   /** Where the integrand is largest, roughly. */
@@ -82,7 +86,15 @@ export function integrateUnimodal(
       const means = factors.map((_, i) => (sums[i + 1] as number) / (sums[0] as number));
       // geometric convergence squares the change; the margin is for a rule not yet in that regime
       const error = change <= 4e-15 ? change : 1e-7 * change;
-      return { log: top.value + Math.log(current), error, peak, means, evaluations: nodes };
+      return {
+        log: top.value + Math.log(current),
+        sum: current,
+        scale: top.value,
+        error,
+        peak,
+        means,
+        evaluations: nodes,
+      };
     }
   }
   throw new Error(

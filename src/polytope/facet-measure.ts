@@ -23,11 +23,7 @@ import type { BetaLaw, BetaPrimeLaw, GaussianLaw } from '../law.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { integrateHalfLine } from '../numeric/half-line-integral.ts';
 import { NormalTail } from '../numeric/normal-tail.ts';
-import {
-  centralLogTail,
-  type LogExpectation,
-  logOrderDensity,
-} from '../numeric/order-statistic.ts';
+import { centralLogTail, logOrderDensity } from '../numeric/order-statistic.ts';
 import type { TailRange } from '../numeric/tail.ts';
 import { integrateUnimodal } from '../numeric/unimodal-integral.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
@@ -146,13 +142,22 @@ function fewOthers(model: FacetModel, count: ResolvedCount): boolean {
   return count.n <= 2 * model.d;
 }
 
+/** An expected number of facets by its logarithm. */
+export interface FacetCount {
+  readonly log: number;
+  /** Bound on the absolute error of the logarithm. */
+  readonly error: number;
+  /** Means of the factors over the facets. */
+  readonly means: readonly number[];
+}
+
 /** log of the expected number of facets of the plain or the symmetric hull, n > d. */
 export function facetTotal(
   model: FacetModel,
   count: ResolvedCount,
   range: TailRange,
   factors: readonly (() => number)[] = [],
-): LogExpectation {
+): FacetCount {
   const { d, tail } = model;
   let form: Form;
   if (range === 'line' && fewOthers(model, count)) {
@@ -168,7 +173,7 @@ export function facetTotal(
 }
 
 /** Facets on one side of a height. */
-export interface FacetShare extends LogExpectation {
+export interface FacetShare extends FacetCount {
   /** Part of `error` that a ratio of two such numbers does not have. */
   readonly commonError: number;
 }

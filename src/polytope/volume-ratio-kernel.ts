@@ -68,8 +68,9 @@ function smallerTail(
     result = low ? value() : complement();
   }
   const log = Math.min(result.log, 0);
+  const tail = Math.min(result.value, 1);
   const error = low ? result.error : result.error + complementRounding;
-  return probabilityFromTail(Math.exp(log), log, low ? 'lower' : 'upper', error);
+  return probabilityFromTail(tail, log, low ? 'lower' : 'upper', error);
 }
 
 /** What 1 - L loses to cancellation on the line, where a nearly two-point law has L near 1. */
@@ -132,7 +133,13 @@ function centredRatio(k: number, b: number, count: ResolvedCount): Probability {
       // V_(k) > 1/2, where h_+ = 0, when fewer than k of n points lie in a half-space
       const below = logFewerHeads(k, count);
       const log = logAddExpKernel(inside.log, below.log);
-      return { log, error: inside.error + below.error * Math.exp(below.log - log), means: [] };
+      const value = inside.value + Math.exp(below.log);
+      return {
+        log,
+        value,
+        error: inside.error + below.error * Math.exp(below.log - log),
+        means: [],
+      };
     },
     lostInComplement(b),
   );
