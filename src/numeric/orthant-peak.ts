@@ -92,7 +92,7 @@ export function peakKernel(
   out[1] = Math.log(h * total);
   const sensitivity = y0 < 0.5 ? lambda * y0 : p.countTail0;
   out[2] =
-    discretisation(Math.abs(even - odd) / total, (2 * Math.abs(fourth - second)) / total) +
+    trapezoidError(Math.abs(even - odd) / total, (2 * Math.abs(fourth - second)) / total) +
     EPSILON * (10 + 4 * Math.min(sensitivity, p.countTail0));
   if (p.huge) out[2] += EPSILON * Math.abs(logN) * Math.sqrt(lambda);
   out[3] = p.tail0;
@@ -106,7 +106,7 @@ export function peakKernel(
  * halving the step multiplies their logarithm by a factor from 2 to 4 which the coarser pair shows;
  * 15 % of the exponent and a factor 16 are kept in hand.
  */
-function discretisation(error2: number, error4: number): number {
+export function trapezoidError(error2: number, error4: number): number {
   if (error2 === 0) return 0;
   const growth = error4 < 0.5 ? Math.log(error2) / Math.log(error4) : 2;
   return 16 * Math.exp(Math.max(2, 0.85 * Math.min(growth, 4)) * Math.log(error2));

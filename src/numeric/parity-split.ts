@@ -75,12 +75,21 @@ export function paritySplit(term: LogTerm, d: number, first: number, last: numbe
     side = side === 'upper' ? 'lower' : 'upper';
     log = logSide(term, d, first, last, side, error);
   }
+  return probabilityFromSum(log, side, error[0] as number);
+}
+
+/** The probability whose value ('lower') or complement ('upper') is the sum with this logarithm. */
+export function probabilityFromSum(
+  logSum: number,
+  side: 'lower' | 'upper',
+  error: number,
+): Probability {
   // Rounding may lift a sum of nearly everything above 1.
-  log = Math.min(log, 0);
+  const log = Math.min(logSum, 0);
   const tail = Math.exp(log);
   // Above 1/2 the tail that was summed is not the small one, and its error counts for more there.
   const inflation = tail > 0.5 ? tail / (1 - tail) : 1;
-  return probabilityFromTail(tail, log, side, inflation * (error[0] as number));
+  return probabilityFromTail(tail, log, side, inflation * error);
 }
 
 /** log 0.75 */

@@ -17,25 +17,23 @@ import { logOutwardSum, paritySplit } from '../numeric/parity-split.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
+import type { Hull } from './hull-options.ts';
 
 const EPSILON = 2 ** -52;
 const LOG_TWO_PI = 1.8378770664093455;
-
-/** Of which points the hull is taken: the points, with their mirror images, or with the centre. */
-export type HullKind = 'plain' | 'symmetric' | 'withCentre';
 
 const SEQUENCE = {
   plain: 'simplex',
   symmetric: 'absolute',
   withCentre: 'nonnegative',
-} as const satisfies Record<HullKind, OrthantSequence>;
+} as const satisfies Record<Hull, OrthantSequence>;
 
-/** P(scale times an independent point lies in the hull of n points), scale = 0 or 1e-100 .. 1e100. */
+/** P(scale times an independent point lies in the hull of n points), scale = 0 or 1e-140 .. 1e100. */
 export function gaussianMembership(
   count: ResolvedCount,
   d: number,
   scale: number,
-  hull: HullKind,
+  hull: Hull,
 ): Probability {
   if (scale === 0) {
     if (hull === 'plain') return wendel(count.n, d);
@@ -48,7 +46,7 @@ export function gaussianMembership(
 }
 
 /** P(v given points do not span a face of the hull of n >= v points): the complement is survival. */
-export function faceLoss(count: ResolvedCount, d: number, v: number, hull: HullKind): Probability {
+export function faceLoss(count: ResolvedCount, d: number, v: number, hull: Hull): Probability {
   const sequence = SEQUENCE[hull];
   const M = count.n - v;
   if (M === 0 && sequence === 'simplex') {
@@ -68,7 +66,7 @@ export function logGaussianFaces(
   count: ResolvedCount,
   d: number,
   v: number,
-  hull: HullKind,
+  hull: Hull,
   error: Float64Array,
 ): number {
   error[0] = 0;

@@ -4,6 +4,12 @@
  * @module
  */
 export { type CapProbabilityOptions, capProbability } from './cap-probability.ts';
+export {
+  type ExpectedFacesArgs,
+  type ExpectedVerticesArgs,
+  expectedFaces,
+  expectedVertices,
+} from './faces.ts';
 export { type FacetHeight, type FacetHeightOptions, facetHeight } from './facet-height.ts';
 export {
   type ExpectedFacetsBelowOptions,
@@ -19,6 +25,13 @@ export {
   expectedHullIntrinsicVolume,
   expectedHullVolume,
 } from './hull-volume.ts';
+export { type NextPointInHullArgs, nextPointInHull } from './next-point.ts';
+export {
+  type ProjectedFaces,
+  type ProjectedFacesArgs,
+  type ProjectedPolytope,
+  projectedFaces,
+} from './projected-faces.ts';
 export { type SimplexVolume, type SimplexVolumeOptions, simplexVolume } from './simplex-volume.ts';
 export {
   type HullIntrinsicVolumeRatioOptions,
