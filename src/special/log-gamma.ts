@@ -123,9 +123,9 @@ const BETWEEN_ZEROS: readonly number[] = [
  * @param x - a finite number > 0
  * @param a - a finite number with x + a > 0; may be negative
  * @returns the logarithm
- * @remarks Constant cost. Relative error below 4e-15, and below 1e-15 for x >= 10; near the arguments with
- *   Gamma(x + a) = Gamma(x) the error is below 4e-15 times the smaller of 1 and |a|, or the size of the
- *   two logarithms where that is larger.
+ * @remarks Constant cost. Relative error below 4e-15, for x >= 10 and a > 0 below 7e-16. Where the result
+ *   passes through 0 the error is below 4e-15 times the smaller of 1 and |a| instead, and for x < 1/8, a > 1,
+ *   where log Gamma(x) is far larger than the result, below 1e-15 |log x|.
  * @throws A {@link DomainError} if an argument is out of its domain
  *
  * @example

@@ -86,7 +86,8 @@ export function stirlingRemainderDifference(x: number, a: number): number {
     return stirlingRemainderDifference(x + 1, a) + shift;
   }
   // Here a is not small, and the two remainders are far apart.
-  if (x < SMALL || y > MIDDLE_END) return stirlingRemainderKernel(y) - stirlingRemainderKernel(x);
+  if (x < SMALL || y > MIDDLE_END || a > x)
+    return stirlingRemainderKernel(y) - stirlingRemainderKernel(x);
   // D = P(t) Q, t = (x - 5/16)/(x + 5/16), Q = 1/(12 x + 1/2)
   const s = (x - 0.3125) / (x + 0.3125);
   const t = (y - 0.3125) / (y + 0.3125);
