@@ -41,6 +41,7 @@ export {
   labelSeparability,
   logisticFitExists,
 } from './separability.ts';
+export { approxPolyhedralCone } from './simulated-cone.ts';
 export { surroundTime } from './surround-time.ts';
 export {
   bridgeHull,
