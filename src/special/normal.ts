@@ -129,7 +129,8 @@ export function normalQuantileOfLog(logP: number): number {
 
 /** The x with log Phi(x) = logP, for logP <= -1.6. */
 function lowerQuantile(logP: number): number {
-  if (logP === Number.NEGATIVE_INFINITY) return logP;
+  // Beyond, the corrections to sqrt(-2 logP) vanish; the scaling keeps -2 logP from overflowing.
+  if (logP < -1e20) return -2 * Math.sqrt(-0.5 * logP);
   // One step of Halley's method on log Phi; the start is good to 2e-6, the step cubes its error.
   const x = lowerQuantileStart(logP);
   const scaled = 0.5 * erfcxKernel(-x * Math.SQRT1_2);
