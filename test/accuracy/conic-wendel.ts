@@ -83,7 +83,7 @@ export const wendelChecks: readonly AccuracyCheck[] = [
     compute: (args: { n: number; d: number }) =>
       originInHull(args)[smallSide(args) === 'value' ? 'complement' : 'value'],
     measure: 'relative',
-    bound: 4e-16,
+    bound: 1e-15,
   },
   {
     name: 'originInHull.complement',
