@@ -28,15 +28,11 @@ import { gammaFraction, gammaPowerSeries, gammaTermSeries } from './gamma-series
 import { logGamma1pKernel } from './log-gamma.ts';
 import { preciseLog } from './precise-log.ts';
 import { stirlingRemainderKernel } from './stirling-remainder.ts';
+import { tailValue } from './tail-result.ts';
 
 const TWO_PI = 6.283185307179586476925;
 /** Below it x^a is the whole of P and x / a might underflow. */
 const TINY = 1e-200;
-/** An exponential below e^-650 is formed in two factors, as subnormal numbers would round it. */
-const DEEP = -650;
-/** Below e^-900 nothing is left, whatever stands beside it. */
-const NOTHING = -900;
-const EXP_MINUS_64 = 1.6038108905486378e-28;
 
 /** Beyond these shapes intermediate results would leave the range of doubles. */
 export const SMALLEST_SHAPE = 1e-300;
@@ -64,7 +60,7 @@ export function gammaTailKernel(a: number, x: number, out: Float64Array): boolea
     const low =
       sumError(product, -x, high) + productError(a, log, product) + a * (out[1] as number);
     const ratio = gammaFraction(a, x);
-    storeGammaTail(high, low - logGamma1pKernel(a), a, ratio, out);
+    store(high, low - logGamma1pKernel(a), a, ratio, out);
     return false;
   }
   out[0] = 0;
@@ -79,7 +75,7 @@ export function gammaTailKernel(a: number, x: number, out: Float64Array): boolea
       : lower
         ? gammaTermSeries(a, x)
         : gammaFraction(a, x);
-  storeGammaTail(high, low, Math.sqrt(a / TWO_PI), ratio, out);
+  store(high, low, Math.sqrt(a / TWO_PI), ratio, out);
   return lower;
 }
 
@@ -92,7 +88,7 @@ function powerTail(a: number, x: number, out: Float64Array): boolean {
   const s = gammaPowerSeries(a, x);
   const log = high + (low + Math.log1p(s));
   if (log < -Math.LN2) {
-    storeGammaTail(high, low, 1, 1 + s, out);
+    store(high, low, 1, 1 + s, out);
     out[3] = ((1 + s) * Math.exp(x)) / a;
     return true;
   }
@@ -105,7 +101,7 @@ function powerTail(a: number, x: number, out: Float64Array): boolean {
 }
 
 /** Stores the tail exp(high + low) amplitude ratio. */
-function storeGammaTail(
+function store(
   high: number,
   low: number,
   amplitude: number,
@@ -113,12 +109,11 @@ function storeGammaTail(
   out: Float64Array,
 ): void {
   const factor = amplitude * ratio;
-  const mantissa = factor + factor * Math.expm1(low);
-  if (high > DEEP) out[0] = Math.exp(high) * mantissa;
-  else out[0] = high > NOTHING ? Math.exp(high + 64) * mantissa * EXP_MINUS_64 : 0;
-  out[1] = high;
   // the factor underflows for a tiny a and a huge x, or for both huge
-  out[2] = low + (factor > 1e-290 ? Math.log(factor) : Math.log(amplitude) + Math.log(ratio));
+  const rest = low + (factor > 1e-290 ? Math.log(factor) : Math.log(amplitude) + Math.log(ratio));
+  out[0] = tailValue(high, low, factor, high + rest);
+  out[1] = high;
+  out[2] = rest;
   out[3] = ratio;
 }
 

@@ -23,18 +23,20 @@ const DEEP = -600;
 const UNDERFLOW = -746;
 const EXP_MINUS_128 = 2.5722093726424152e-56;
 
+/** exp(high + low) * factor, whose logarithm is given; exact to rounding down to the normal numbers. */
+export function tailValue(high: number, low: number, factor: number, log: number): number {
+  if (!(log > UNDERFLOW)) return 0;
+  const mantissa = low > -1 ? factor + factor * Math.expm1(low) : factor * Math.exp(low);
+  return high > DEEP ? Math.exp(high) * mantissa : Math.exp(high + 128) * mantissa * EXP_MINUS_128;
+}
+
 /**
  * Stores the tail exp(high + low) * factor, or its complement if that is smaller, and returns whether
  * the complement was stored. The logarithm of the tail must have relative accuracy where it is near 0.
  */
 export function storeTail(high: number, low: number, factor: number, out: Float64Array): boolean {
   const log = high + (low + Math.log(factor));
-  let value = 0;
-  if (log > UNDERFLOW) {
-    const mantissa = low > -1 ? factor + factor * Math.expm1(low) : factor * Math.exp(low);
-    value =
-      high > DEEP ? Math.exp(high) * mantissa : Math.exp(high + 128) * mantissa * EXP_MINUS_128;
-  }
+  const value = tailValue(high, low, factor, log);
   if (value > 0.5) {
     const complement = log > -0.25 ? -Math.expm1(Math.min(log, 0)) : 1 - value;
     storeValue(complement, out);
