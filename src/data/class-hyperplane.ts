@@ -80,7 +80,7 @@ function classDistance(
 function hyperplaneOf(problem: Problem, beta: Float64Array, scales: Float64Array): Hyperplane {
   const { matrix, signs, intercept, middle } = problem;
   const { rows, n, d } = matrix;
-  const normal = unscaledNormal(beta, scales);
+  const { unit: normal } = unscaledNormal(beta, scales);
   let lowest = Number.POSITIVE_INFINITY;
   let highest = Number.NEGATIVE_INFINITY;
   for (let i = 0; i < n; i++) {
@@ -106,18 +106,8 @@ export function weakHyperplane(
   beta: Float64Array,
   scales: Float64Array,
 ): { normal: number[]; offset: number } {
-  const normal = unscaledNormal(beta, scales);
-  if (!intercept) return { normal, offset: 0 };
-  // The constant in units of the slopes' length: compare the largest slope before and after.
-  let largest = 0;
-  let unit = 1;
-  let shift = 0;
-  normal.forEach((x, j) => {
-    shift += x * (middle[j] as number);
-    if (Math.abs(x) > largest) {
-      largest = Math.abs(x);
-      unit = (x * (scales[j] as number)) / (beta[j] as number);
-    }
-  });
-  return { normal, offset: shift - (beta[matrix.d] as number) * unit };
+  const { unit, factor } = unscaledNormal(beta, scales);
+  if (!intercept) return { normal: unit, offset: 0 };
+  const shift = unit.reduce((sum, x, j) => sum + x * (middle[j] as number), 0);
+  return { normal: unit, offset: shift - (beta[matrix.d] as number) * factor };
 }

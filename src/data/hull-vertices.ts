@@ -205,15 +205,15 @@ class VertexSearch {
     const { d, names, set, allowed } = this;
     const matrix: Matrix = { rows: set, n: names.length, d };
     const q = this.row(point);
-    const { found, proven } = nearest(matrix, q, this.ones);
+    const attempt = nearest(matrix, q, this.ones);
     const work = 8 * names.length * d + d * d * d;
-    if (reproduces(matrix, q, found, allowed)) return work;
-    if (!proven) {
+    if (reproduces(attempt, allowed)) return work;
+    if (!attempt.proven) {
       // Too close to call: it joins and must stand the check against the final set.
       this.add(point, true);
       return work;
     }
-    const away = found.normal.map((x) => -x);
+    const away = attempt.found.normal.map((x) => -x);
     const added = this.addFarthest(away);
     if (added < 0) this.add(point, true);
     return added === point || added < 0 ? work : -work - this.firsts.length * d;
@@ -231,8 +231,8 @@ class VertexSearch {
     const matrix: Matrix = { rows: this.set, n: last, d };
     const q = this.row(point);
     if (last > 0) {
-      const { found, proven } = nearest(matrix, q, this.ones);
-      if (!proven || reproduces(matrix, q, found, this.allowed)) return 8 * last * d + d * d * d;
+      const attempt = nearest(matrix, q, this.ones);
+      if (!attempt.proven || reproduces(attempt, this.allowed)) return 8 * last * d + d * d * d;
     }
     this.set.set(q, last * d);
     names.push(point);

@@ -109,7 +109,7 @@ export function inHull(
   return inHullKernel(matrix, q, tolerance);
 }
 
-/** {@link inHull} without checks. */
+/** {@link inHull} without checks; overwrites the matrix. */
 export function inHullKernel(matrix: Matrix, q: Float64Array, tolerance: number): HullMembership {
   const { d } = matrix;
   const ranges = columnRanges(matrix);
@@ -131,20 +131,21 @@ export function inHullKernel(matrix: Matrix, q: Float64Array, tolerance: number)
   if (largest === 0) largest = 1;
   const uneven = largest > UNEVEN * smallest;
   const even = new Float64Array(d).fill(largest);
-  const first = nearest(matrix, q, uneven ? scales : even);
-  if (reproduces(matrix, q, first.found, allowed)) {
+  // The copy of the rows is ours: unless they are needed again, they are shifted in place.
+  const first = nearest(matrix, q, uneven ? scales : even, uneven ? undefined : matrix.rows);
+  if (reproduces(first, allowed)) {
     return { position: 'inside', distance: 0, weights: weightsOf(first.found), separator: null };
   }
   let proof = first;
   let measured = first;
   if (uneven) {
-    measured = nearest(matrix, q, even);
+    measured = nearest(matrix, q, even, matrix.rows);
     if (measured.proven) proof = measured;
   }
   const distance = measured.found.upper * largest;
   const weights = weightsOf(measured.found);
   const position = proof.proven ? 'outside' : 'undecided';
-  const separator = proof.proven ? separatorOf(matrix, q, proof) : null;
+  const separator = proof.proven ? separatorOf(q, proof) : null;
   return { position, distance, weights, separator };
 }
 
@@ -155,9 +156,16 @@ export interface Attempt {
   readonly proven: boolean;
 }
 
-/** Nearest hull point to q with column j divided by scales[j], or left out where that is 0. */
-export function nearest({ rows, n, d }: Matrix, q: Float64Array, scales: Float64Array): Attempt {
-  const shifted = new Float64Array(n * d);
+/**
+ * Nearest hull point to q with column j divided by scales[j], or left out where that is 0. The
+ * shifted rows go to `shifted`, which may be the rows themselves.
+ */
+export function nearest(
+  { rows, n, d }: Matrix,
+  q: Float64Array,
+  scales: Float64Array,
+  shifted: Float64Array = new Float64Array(n * d),
+): Attempt {
   // Powers of two, so multiplying by the inverse is exact; 0 leaves a column out.
   const factors = scales.map((scale) => (scale > 0 ? 1 / scale : 0));
   let start = 0;
@@ -186,20 +194,8 @@ export function productError(d: number, size: number): number {
 }
 
 /** Do the weights reproduce the query to the tolerance of every column? */
-export function reproduces(
-  { rows, d }: Matrix,
-  q: Float64Array,
-  { atoms, weights }: MinimumNormPoint,
-  allowed: Float64Array,
-): boolean {
-  for (let j = 0; j < d; j++) {
-    let sum = 0;
-    atoms.forEach((atom, i) => {
-      sum += (weights[i] as number) * ((rows[atom * d + j] as number) - (q[j] as number));
-    });
-    if (!(Math.abs(sum) <= (allowed[j] as number))) return false;
-  }
-  return true;
+export function reproduces({ found, scales }: Attempt, allowed: Float64Array): boolean {
+  return found.point.every((x, j) => Math.abs(x) * (scales[j] as number) <= (allowed[j] as number));
 }
 
 function weightsOf({ atoms, weights }: MinimumNormPoint): HullWeight[] {
@@ -209,16 +205,11 @@ function weightsOf({ atoms, weights }: MinimumNormPoint): HullWeight[] {
 }
 
 /** The hyperplane half-way between the hull and the query, in the units of the data. */
-function separatorOf({ rows, n, d }: Matrix, q: Float64Array, attempt: Attempt): Separator {
-  const { found, scales } = attempt;
-  const outward = found.normal.map((x) => -x);
-  const normal = unscaledNormal(outward, scales);
-  const product = (from: Float64Array, at: number): number => {
-    let sum = 0;
-    for (let j = 0; j < d; j++) sum += (normal[j] as number) * (from[at + j] as number);
-    return sum;
-  };
-  let highest = Number.NEGATIVE_INFINITY;
-  for (let i = 0; i < n; i++) highest = Math.max(highest, product(rows, i * d));
-  return { normal, offset: highest + (product(q, 0) - highest) / 2 };
+function separatorOf(q: Float64Array, { found, scales }: Attempt): Separator {
+  const { unit, factor } = unscaledNormal(
+    found.normal.map((x) => -x),
+    scales,
+  );
+  const height = unit.reduce((sum, x, j) => sum + x * (q[j] as number), 0);
+  return { normal: unit, offset: height - (found.lower * factor) / 2 };
 }

@@ -44,8 +44,9 @@ function positiveWeights(z: Matrix): Float64Array | null {
   const allowed = new Float64Array(d).fill(4e-15);
   for (let epsilon = 0.1; epsilon > 5e-9; epsilon /= 10) {
     const target = mean.map((x) => -epsilon * x);
-    const { found } = nearest(z, target, ones);
-    if (!reproduces(z, target, found, allowed)) continue;
+    const attempt = nearest(z, target, ones);
+    if (!reproduces(attempt, allowed)) continue;
+    const { found } = attempt;
     const weights = new Float64Array(n).fill(epsilon / n / (1 + epsilon));
     found.atoms.forEach((atom, i) => {
       weights[atom] = (weights[atom] as number) + (found.weights[i] as number) / (1 + epsilon);
@@ -73,9 +74,10 @@ function weakSeparator(z: Matrix): Float64Array | null {
     }
     if (count === 0) return null;
     const outside: Matrix = { rows: rest.subarray(0, count * d), n: count, d };
-    const { found, proven } = nearest(outside, none, ones);
-    if (!reproduces(outside, none, found, allowed)) {
-      return proven && separatesWeakly(z, found.normal) ? found.normal : null;
+    const attempt = nearest(outside, none, ones);
+    const { found } = attempt;
+    if (!reproduces(attempt, allowed)) {
+      return attempt.proven && separatesWeakly(z, found.normal) ? found.normal : null;
     }
     found.atoms.forEach((atom, i) => {
       // A weight of the size of rounding does not prove that its atom takes part.

@@ -29,9 +29,7 @@ export function checkPoints(fn: string, points: unknown): Matrix {
     throw new DomainError(fn, 'points[0]', 'an array of at least one number', points[0]);
   }
   const rows = new Float64Array(n * d);
-  for (let i = 0; i < n; i++) {
-    copyRow(fn, `points[${i}]`, points[i], d, rows, i * d, 'as points[0] has');
-  }
+  for (let i = 0; i < n; i++) copyRow(fn, i, points[i], d, rows, i * d, 'as points[0] has');
   return { rows, n, d };
 }
 
@@ -50,7 +48,7 @@ export function checkRow(
 
 function copyRow(
   fn: string,
-  parameter: string,
+  place: number | string,
   row: unknown,
   d: number,
   out: Float64Array,
@@ -60,19 +58,38 @@ function copyRow(
   if (rowLength(row) !== d) {
     const plural = d === 1 ? 'number' : 'numbers';
     const shown = ArrayBuffer.isView(row) ? Array.from(row as unknown as ArrayLike<number>) : row;
-    throw new DomainError(fn, parameter, `an array of ${d} ${plural}, ${why}`, shown);
+    throw new DomainError(fn, nameOf(place), `an array of ${d} ${plural}, ${why}`, shown);
+  }
+  if (ArrayBuffer.isView(row) && isNumbers(row as unknown as ArrayLike<unknown>)) {
+    out.set(row as unknown as ArrayLike<number>, start);
+    for (let j = 0; j < d; j++) checkSize(fn, place, j, out[start + j]);
+    return;
   }
   const numbers = row as ArrayLike<unknown>;
   for (let j = 0; j < d; j++) {
     const x = numbers[j];
-    if (typeof x !== 'number' || !Number.isFinite(x)) {
-      throw new DomainError(fn, `${parameter}[${j}]`, 'a finite number', x);
-    }
-    if (Math.abs(x) > MAX_SIZE) {
-      throw new DomainError(fn, `${parameter}[${j}]`, 'a number of size at most 1e150', x);
-    }
-    out[start + j] = x;
+    checkSize(fn, place, j, x);
+    out[start + j] = x as number;
   }
+}
+
+/** A row's name: its parameter, or its index among the points. */
+function nameOf(place: number | string): string {
+  return typeof place === 'string' ? place : `points[${place}]`;
+}
+
+/** Does a typed array hold numbers, not bigints? */
+function isNumbers(list: ArrayLike<unknown>): boolean {
+  return typeof list[0] === 'number';
+}
+
+function checkSize(fn: string, place: number | string, j: number, x: unknown): void {
+  if (typeof x === 'number' && x <= MAX_SIZE && x >= -MAX_SIZE) return;
+  const requirement =
+    typeof x === 'number' && Number.isFinite(x)
+      ? 'a number of size at most 1e150'
+      : 'a finite number';
+  throw new DomainError(fn, `${nameOf(place)}[${j}]`, requirement, x);
 }
 
 /** Length of an array of numbers, typed or not; NaN for anything else. */
@@ -130,15 +147,18 @@ export function powerOfTwoAbove(x: number): number {
 }
 
 /**
- * The unit vector, in the units of the data, of a normal given for columns divided by `scales`;
- * columns with scale 0 take no part.
+ * The unit vector, in the units of the data, of a normal given for columns divided by `scales`, and
+ * what its products must be multiplied with; columns with scale 0 take no part.
  */
-export function unscaledNormal(normal: ArrayLike<number>, scales: Float64Array): number[] {
+export function unscaledNormal(
+  normal: ArrayLike<number>,
+  scales: Float64Array,
+): { unit: number[]; factor: number } {
   const least = scales.reduce((m, s) => (s > 0 && s < m ? s : m), Number.POSITIVE_INFINITY);
   // Relative to the least scale no component exceeds 1.
-  const unit = Array.from(scales, (scale, j) =>
+  const components = Array.from(scales, (scale, j) =>
     scale > 0 ? (normal[j] as number) * (least / scale) : 0,
   );
-  const length = Math.sqrt(unit.reduce((sum, x) => sum + x * x, 0));
-  return unit.map((x) => x / length + 0);
+  const length = Math.sqrt(components.reduce((sum, x) => sum + x * x, 0));
+  return { unit: components.map((x) => x / length + 0), factor: least / length };
 }
