@@ -40,12 +40,13 @@ export function gammaTermSeries(a: number, x: number): number {
  * and x > 1.
  *
  * Evaluated from the back, which damps rounding errors; going forward they pile up to 1e-14 near
- * x = 1. After n steps the truncation error is about exp(-4 sqrt(n x)), hence n = 95 / x, and twelve
- * more for a between 1 and 15.
+ * x = 1. After n steps the truncation error is about exp(-4 sqrt(n x)), hence n = 95 / x; the rest of
+ * the count was found by trial for a up to 200 and, for larger a, x > 2 a.
  */
 export function gammaFraction(a: number, x: number): number {
   const first = x + 1 - a;
+  const terms = a <= 200 ? 14 + 95 / x + 3 * (a / x) * Math.sqrt(a) : 30;
   let rest = 0;
-  for (let i = Math.ceil(12 + 95 / x); i > 0; i--) rest = (i * (a - i)) / (first + 2 * i + rest);
+  for (let i = Math.ceil(terms); i > 0; i--) rest = (i * (a - i)) / (first + 2 * i + rest);
   return 1 / (first + rest);
 }

@@ -195,7 +195,7 @@ describe('incompleteGamma', () => {
 
   it('uses methods that agree where their regions overlap', () => {
     fc.assert(
-      fc.property(between(15, 120), between(0, 1), fc.boolean(), (a, share, lower) => {
+      fc.property(between(15, 400), between(0, 1), fc.boolean(), (a, share, lower) => {
         // z^2 = 0.8 a share
         const t = Math.sqrt(0.8 * share) * (lower ? -1 : 1);
         const x = a * Math.max(0.2, 1 + t + (t * t) / 3);
@@ -216,8 +216,8 @@ describe('incompleteGamma', () => {
       }),
     );
     fc.assert(
-      fc.property(between(0.01, 15), between(1, 40), (a, x) => {
-        fc.pre(x > a);
+      fc.property(between(0.01, 200), between(0, 2), (a, share) => {
+        const x = Math.max(1, a) * (1 + share);
         expect(relative(gammaFraction(a, x), longFraction(a, x))).toBeLessThan(1e-15);
       }),
       { numRuns: 500 },
@@ -233,7 +233,7 @@ describe('incompleteGamma', () => {
     const e = 1e-15;
     for (const x of [0.2, 0.9, 1, 1.1, 4]) expect(nearby(1, x, e, 0)).toBeLessThan(5e-15);
     for (const a of [0.01, 0.5, 0.999, 1]) expect(nearby(a, 1, 0, e)).toBeLessThan(5e-15);
-    for (const x of [9, 14, 15, 16, 25]) expect(nearby(15, x, 8 * e, 0)).toBeLessThan(1e-14);
+    for (const x of [160, 199, 201, 230]) expect(nearby(200, x, 64 * e, 0)).toBeLessThan(1e-14);
     for (const a of [1.5, 7, 15, 40, 1e3, 1e6])
       expect(nearby(a, a, 0, a * e)).toBeLessThan(1e-15 * Math.sqrt(a) + 2e-15);
   });
