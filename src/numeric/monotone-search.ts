@@ -22,6 +22,12 @@ export interface Bracket {
   readonly upper: Probe;
 }
 
+/** What a search found. */
+export interface Found extends Bracket {
+  /** A point whose gap was declared noise: the crossing cannot be located any better. */
+  readonly settled?: Probe;
+}
+
 /** No search needs more: bisection alone takes at most about 64 on integers, 1100 on reals. */
 const MOST_STEPS = 1300;
 
@@ -32,6 +38,7 @@ const MOST_STEPS = 1300;
  * @param bracket - ends with gaps of different sign
  * @param gapAt - the function; called only strictly inside the bracket
  * @param integer - whether only integers are allowed
+ * @param isNoise - whether the gap just computed at a point is below its own error; ends the search
  * @param resolution - for real arguments, the relative width at which to stop
  * @returns the final bracket
  */
@@ -39,8 +46,9 @@ export function narrow(
   bracket: Bracket,
   gapAt: (x: number) => number,
   integer: boolean,
+  isNoise: (x: number) => boolean = () => false,
   resolution: number = 2 ** -51,
-): Bracket {
+): Found {
   let { lower, upper } = bracket;
   const rises = lower.gap < 0;
   let last: Probe = Math.abs(lower.gap) < Math.abs(upper.gap) ? lower : upper;
@@ -51,7 +59,7 @@ export function narrow(
     const width = upper.x - lower.x;
     // Above 2^53 whole numbers are as far apart as doubles.
     const size = Math.max(Math.abs(lower.x), Math.abs(upper.x));
-    const unit = integer ? Math.max(1, 2 ** -52 * size) : resolution * size;
+    const unit = integer ? Math.max(1, 2 ** -53 * size) : resolution * size;
     if (width <= unit) return { lower, upper };
     const wide = lower.x > 0 && upper.x > 2 * lower.x;
     let x = slow >= 2 ? midpoint(lower.x, upper.x, wide) : predict(lower, upper, previous, wide);
@@ -67,6 +75,7 @@ export function narrow(
     if (integer) x = Math.min(Math.max(Math.round(x), lower.x + unit), upper.x - unit);
     if (!(x > lower.x && x < upper.x)) return { lower, upper };
     const probe = { x, gap: gapAt(x) };
+    if (isNoise(x)) return { lower, upper, settled: probe };
     const before = wide ? Math.log(upper.x / lower.x) : width;
     if (probe.gap < 0 === rises) {
       previous = lower;
@@ -91,16 +100,18 @@ function midpoint(a: number, b: number, wide: boolean): number {
 
 /** Where inverse quadratic interpolation, or the secant, puts the crossing. */
 function predict(lower: Probe, upper: Probe, third: Probe | undefined, wide: boolean): number {
+  // An infinite gap says on which side the crossing lies and nothing more.
+  if (Math.max(Math.abs(lower.gap), Math.abs(upper.gap)) >= 1e300) {
+    return midpoint(lower.x, upper.x, wide);
+  }
   const origin = wide ? Math.log(lower.x) : lower.x;
   const coordinate = (x: number): number => (wide ? Math.log(x) : x) - origin;
   const end = coordinate(upper.x);
-  // Scaled so that gaps of 1e308 do not overflow when multiplied.
-  const scale = 1 / Math.max(Math.abs(lower.gap), Math.abs(upper.gap));
-  const fa = lower.gap * scale;
-  const fb = upper.gap * scale;
+  const fa = lower.gap;
+  const fb = upper.gap;
   let t = (end * fa) / (fa - fb);
-  if (third !== undefined && (!wide || third.x > 0)) {
-    const fc = third.gap * scale;
+  if (third !== undefined && (!wide || third.x > 0) && Math.abs(third.gap) < 1e300) {
+    const fc = third.gap;
     const c = coordinate(third.x);
     const quadratic =
       (end * fa * fc) / ((fb - fa) * (fb - fc)) + (c * fa * fb) / ((fc - fa) * (fc - fb));

@@ -6,6 +6,9 @@ import { labelSeparability } from '../conic/separability.ts';
 import { originInHull } from '../conic/wendel.ts';
 import { type Count, resolveCount } from '../count.ts';
 import type { Law } from '../law.ts';
+import { nextPointInHull } from '../polytope/next-point.ts';
+import { hullVolumeRatio } from '../polytope/volume-ratio.ts';
+import { approxVolumeThreshold } from '../polytope/volume-threshold.ts';
 import type { Probability } from '../probability.ts';
 import { normalQuantile } from '../special/normal.ts';
 
@@ -24,7 +27,10 @@ export interface QuestionRow {
   /** The question at n points in d variables. */
   readonly ask: (args: { n: Count; d: number; law: Law }) => Probability;
   /** The size that the limit theorem would give, to stand beside the exact one. */
-  readonly limit?: { readonly name: string; readonly size: (d: number, target: number) => number };
+  readonly limit?: {
+    readonly name: string;
+    readonly size: (d: number, target: number, law: Law) => Count;
+  };
 }
 
 /** n = 2p + z sqrt(2p): the central limit theorem for p failures among fair coins. */
@@ -40,6 +46,25 @@ export const questions: readonly QuestionRow[] = [
     direction: 'rises',
     ask: ({ n, d }) => originInHull({ n, d }),
     limit: { name: '2d + z sqrt(2d)', size: fairCoinLimit },
+  },
+  {
+    name: 'nextPointInHull',
+    title: 'Will the next case interpolate?',
+    assumes: 'the next case is drawn like the others',
+    direction: 'rises',
+    ask: ({ n, d, law }) => nextPointInHull({ n, d, law }),
+  },
+  {
+    name: 'hullVolumeRatio',
+    title: 'How much of the ball does the hull fill?',
+    assumes: 'points in the unit ball; the expected share of its volume',
+    direction: 'rises',
+    laws: ['beta'],
+    ask: ({ n, d, law }) => hullVolumeRatio({ n, d, law }),
+    limit: {
+      name: 'phase transition',
+      size: (d, share, law) => approxVolumeThreshold({ d, law, share }),
+    },
   },
   {
     name: 'labelSeparability',

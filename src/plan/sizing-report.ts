@@ -32,7 +32,7 @@ export interface SizingAnswer {
   /** Why there is no answer. */
   readonly reason?: string;
   /** The size that the question's limit theorem gives. */
-  readonly limit?: number;
+  readonly limit?: Count;
 }
 
 /** One question of the report. */
@@ -101,7 +101,7 @@ function rowFor(
 ): SizingRow {
   const { name, title, assumes, ask, limit } = question;
   const sizes = targets.map((target): SizingAnswer => {
-    const size = limit === undefined ? {} : { limit: limit.size(d, target) };
+    const size = limit === undefined ? {} : { limit: limit.size(d, target, law) };
     try {
       return { target, answer: sizeFor(question, d, law, target), ...size };
     } catch (error) {
@@ -226,16 +226,20 @@ function sizeTable(row: SizingRow): readonly (readonly string[])[] {
   const body = row.sizes.map((size) => [
     formatNumber(size.target),
     sizeText(size),
-    ...(limits ? [size.limit === undefined ? '' : size.limit.toFixed(1)] : []),
+    ...(limits ? [size.limit === undefined ? '' : limitText(size.limit)] : []),
   ]);
   return [head, ...body];
 }
 
 function sizeText({ answer }: SizingAnswer): string {
   if (answer === null) return 'never reached';
-  if (answer.log > Math.log(Number.MAX_SAFE_INTEGER)) return formatExponential(answer.log);
+  if (answer.log > Math.log(Number.MAX_SAFE_INTEGER)) return formatExponential(answer.log, 1e-6);
   const [from, to] = answer.bracket;
   return from === to ? String(from) : `${from} to ${to}`;
+}
+
+function limitText(limit: Count): string {
+  return typeof limit === 'number' ? limit.toFixed(1) : formatExponential(limit.log, 5e-5);
 }
 
 function countText(n: Count | null): string {

@@ -3,7 +3,7 @@
  * serves every question and every numeric argument.
  */
 import { checkChoice, checkOptions, DomainError } from '../domain.ts';
-import { type Bracket, narrow } from '../numeric/monotone-search.ts';
+import { type Bracket, narrow, type Probe } from '../numeric/monotone-search.ts';
 import { isProbability, Probability } from '../probability.ts';
 import { type Condition, conditionOf, type Evaluation } from './question.ts';
 import { type Walk, walkFrom, walkUp } from './walk.ts';
@@ -229,8 +229,12 @@ function answerBetween(condition: Condition, walk: Walk, upperSide: boolean): An
     cache.set(x, evaluation);
     return evaluation;
   };
-  const integer = walk.integer && !change.logs;
-  const { lower, upper } = narrow(change, (x) => evaluate(x).gap, integer);
+  const integer = walk.integer && !change.logs && change.upper.x <= Number.MAX_SAFE_INTEGER;
+  const isNoise = (x: number): boolean => !integer && !condition.certain(evaluate(x));
+  const gapAt = (x: number): number => evaluate(x).gap;
+  const found = narrow(change, gapAt, walk.integer && !change.logs, isNoise);
+  const { lower, upper } =
+    found.settled === undefined ? found : aroundNoise(condition, evaluate, found, found.settled);
   const best = evaluate(upperSide ? upper.x : lower.x);
   const { probability } = best;
   if (change.logs) {
@@ -238,11 +242,34 @@ function answerBetween(condition: Condition, walk: Walk, upperSide: boolean): An
     return { value: Math.exp(best.x), log: best.x, exact: false, bracket, probability };
   }
   const log = Math.log(Math.abs(best.x));
-  if (!walk.integer || upper.x > Number.MAX_SAFE_INTEGER) {
+  if (!integer) {
     return { value: best.x, log, exact: false, bracket: [lower.x, upper.x], probability };
   }
-  const bracket = possible(condition, evaluate, { lower, upper }, walk, upperSide);
+  const bracket = possible(condition, evaluate, found, walk, upperSide);
   return { value: best.x, log, exact: bracket[0] === bracket[1], bracket, probability };
+}
+
+/** The nearest points on both sides of a noisy one at which the outcome is certain. */
+function aroundNoise(
+  condition: Condition,
+  evaluate: (x: number) => Evaluation,
+  bracket: Bracket,
+  settled: Probe,
+): Bracket {
+  const { lower, upper } = bracket;
+  // The gap of a point at the edge of certainty is about its error; the slope turns it into a distance.
+  const slope = Math.abs((upper.gap - lower.gap) / (upper.x - lower.x));
+  const error = Math.max(evaluate(settled.x).probability.logError, 2 ** -50);
+  const step = Math.max(2 * (error / slope), 2 ** -50 * Math.abs(settled.x));
+  const certainSide = (end: Probe): Probe => {
+    const sign = Math.sign(end.x - settled.x);
+    for (let reach = step; reach < Math.abs(end.x - settled.x); reach *= 4) {
+      const evaluation = evaluate(settled.x + sign * reach);
+      if (condition.certain(evaluation) && evaluation.gap < 0 === end.gap < 0) return evaluation;
+    }
+    return end;
+  };
+  return { lower: certainSide(lower), upper: certainSide(upper) };
 }
 
 /** The integers that the error bounds leave possible. */

@@ -23,14 +23,16 @@ export interface Walk {
 }
 
 /** Whole numbers tried in search of the low end, then the stations of the walk. */
-const INTEGER_STATIONS = [4, 64, 4096, 2 ** 24, 2 ** 53 - 1, 2 ** 64] as const;
+const INTEGER_STATIONS = [16, 4096, 2 ** 53 - 1] as const;
 /** The same for real arguments, negative ones first. */
 const REAL_STATIONS = [
   -1e300, -1e100, -1e30, -1e8, -100, -10, -1, 0, 1e-300, 1e-12, 1e-6, 1e-3, 0.1, 0.5, 1, 2, 4, 16,
   256, 65536, 1e9, 1e18, 1e36, 1e72, 1e150, 1e300,
 ] as const;
+/** Up to here counts beyond 2^53 are passed as doubles, which are finer than logarithms. */
+const LAST_DOUBLE = 2 ** 62;
 /** Where the walk on logarithms starts, and where it gives up: e^(10^6) points are enough. */
-const LOG_START = 64 * Math.LN2;
+const LOG_START = 53 * Math.LN2;
 const LOG_END = 1e6;
 
 /**
@@ -61,11 +63,17 @@ export function walkFrom(condition: Condition, integer: boolean, first: Evaluati
     last = next;
   }
   if (!integer) return { integer, first, last, bounded: false };
-  last = { ...last, x: LOG_START };
+  const top = last;
+  last = { ...top, x: LOG_START };
   for (let log = 4 * LOG_START; log < LOG_END; log *= 4) {
     const next = condition.atLog(log);
-    if (next === undefined) break;
-    if (changed(next)) return foundChange(true, first, last, next, true);
+    if (next === undefined) return { integer, first, last: top, bounded: true };
+    if (changed(next)) {
+      const middle = last.x === LOG_START ? condition.at(LAST_DOUBLE) : undefined;
+      return middle !== undefined && changed(middle)
+        ? foundChange(true, first, top, middle, false)
+        : foundChange(true, first, last, next, true);
+    }
     // Past double range nothing moves any more: this is the limit.
     const stuck = next.gap === last.gap && next.probability.log === last.probability.log;
     last = next;
