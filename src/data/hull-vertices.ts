@@ -31,7 +31,7 @@ import {
  * @param options - `onProgress`: called with the number of points settled and the number of points;
  *   `signal`: aborts when its `aborted` turns true
  * @returns the indices of the vertices, ascending
- * Cost: one nearest-point search among the vertices for each point and one pass over the points for
+ * @remarks Cost: one nearest-point search among the vertices for each point and one pass over the points for
  * each vertex; 2,000 Gaussian points in 10 dimensions, most of them vertices, take a few seconds.
  * Gives way to the event loop about every 50 ms.
  * @throws A {@link DomainError} if a row is empty, ragged or holds anything but finite numbers; the

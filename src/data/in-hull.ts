@@ -78,7 +78,7 @@ const UNEVEN = 64;
  *   since data and means computed from them are no sharper than that
  * @returns the verdict, the distance in the units of the data, the weights of the nearest hull
  *   point, and outside the separating hyperplane. Either proof has been checked against the rows
- * Cost: about d passes over the n rows; 10,000 rows in 50 dimensions take some tens of milliseconds.
+ * @remarks Cost: about d passes over the n rows; 10,000 rows in 50 dimensions take some tens of milliseconds.
  * @throws A {@link DomainError} if a row is empty, ragged or holds anything but finite numbers; the
  *   message names row and column
  *

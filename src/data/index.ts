@@ -11,6 +11,12 @@ export {
   inHull,
   type Separator,
 } from './in-hull.ts';
+export {
+  InterpolationAudit,
+  type InterpolationAuditFields,
+  type InterpolationAuditOptions,
+  interpolationAudit,
+} from './interpolation-audit.ts';
 export type { LongWorkOptions } from './long-work.ts';
 export type { Points } from './points.ts';
 export { type SamplerOptions, sampler } from './sampler.ts';

@@ -126,6 +126,15 @@ export function columnRanges({ rows, n, d }: Matrix): ColumnRanges {
   return { min, max, size };
 }
 
+/** The means of the columns. */
+export function columnMeans({ rows, n, d }: Matrix): Float64Array {
+  const mean = new Float64Array(d);
+  for (let i = 0, at = 0; i < n; i++) {
+    for (let j = 0; j < d; j++, at++) mean[j] = (mean[j] as number) + (rows[at] as number) / n;
+  }
+  return mean;
+}
+
 /**
  * The difference that counts as none in each column: `tolerance` times its range, and 64 roundings of
  * its largest number, since data and means computed from them are no sharper than that.

@@ -27,7 +27,7 @@ export interface SamplerOptions {
  *   with b at least d/2 + 1/16, below which lengths leave the range of doubles
  * @param options - `d`: dimension, an integer >= 1; `seed`: an integer from 0 to 2^53 - 1
  * @returns a function that returns the next point, each time in a new array
- * Cost: about d normal numbers a point.
+ * @remarks Cost: about d normal numbers a point.
  * @throws A {@link DomainError} if an argument is out of range
  *
  * @example

@@ -13,6 +13,7 @@ import { judgeOverlap } from './overlap.ts';
 import {
   type ColumnRanges,
   checkPoints,
+  columnMeans,
   columnRanges,
   columnTolerances,
   type Matrix,
@@ -63,7 +64,7 @@ export interface SeparableOptions {
  * @returns the kind, the hyperplane with its margin, the rank and the weights. With an intercept and
  *   one class only, the kind is `'complete'` with a zero normal and the margin `Infinity`. `rank` is
  *   what `labelSeparability` takes as d
- * Cost: about d passes over the points, and as many again for each check of an overlap.
+ * @remarks Cost: about d passes over the points, and as many again for each check of an overlap.
  * @throws A {@link DomainError} if a row is empty, ragged or holds anything but finite numbers, or a
  *   label is none of the above; the message names the place
  *
@@ -117,7 +118,13 @@ export function separableKernel(
   const ranges = intercept ? columnRanges(matrix) : symmetricRanges(columnRanges(matrix));
   const allowed = columnTolerances(ranges, DEFAULT_TOLERANCE);
   const middle = ranges.min.map((low, j) => low + ((ranges.max[j] as number) - low) / 2);
-  const rank = matrixRank(rows, n, d, middleOrMean(matrix, intercept), allowed);
+  const rank = matrixRank(
+    rows,
+    n,
+    d,
+    intercept ? columnMeans(matrix) : new Float64Array(d),
+    allowed,
+  );
   const positives = signs.reduce((count, sign) => count + (sign > 0 ? 1 : 0), 0);
   if (intercept && (positives === 0 || positives === n)) {
     return {
@@ -146,16 +153,6 @@ export function separableKernel(
 /** Ranges that hold 0 in their middle. */
 function symmetricRanges({ size }: ColumnRanges): ColumnRanges {
   return { min: size.map((x) => -x), max: size, size };
-}
-
-/** The column means, or 0 without intercept. */
-function middleOrMean({ rows, n, d }: Matrix, intercept: boolean): Float64Array {
-  const mean = new Float64Array(d);
-  if (!intercept) return mean;
-  for (let at = 0; at < n * d; at++) {
-    mean[at % d] = (mean[at % d] as number) + (rows[at] as number) / n;
-  }
-  return mean;
 }
 
 /** Quasi-complete, overlapping or undecided. */

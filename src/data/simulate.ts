@@ -51,7 +51,7 @@ export interface Simulation {
  *   draws one point; `trials`: an integer >= 1; `seed`: an integer from 0 to 2^53 - 1; `onProgress`
  *   and `signal` as in {@link LongWorkOptions}
  * @returns the hits, their share and its 95 % confidence interval
- * Cost: trials times (n + 1) d normal numbers, and the event. Gives way to the event loop between
+ * @remarks Cost: trials times (n + 1) d normal numbers, and the event. Gives way to the event loop between
  * trials, at least every 64 of them.
  * @throws A {@link DomainError} if an option is out of range or unknown, the event returns no boolean
  *   or the sampler no point. An `Error` named `AbortError` if called off
