@@ -88,3 +88,26 @@ export {
   simplexVolume,
 } from './polytope/index.ts';
 export { type PlainProbability, Probability, type ProbabilityFields } from './probability.ts';
+export {
+  type HullMembership,
+  type HullWeight,
+  hullVertices,
+  type InHullOptions,
+  InterpolationAudit,
+  type InterpolationAuditFields,
+  type InterpolationAuditOptions,
+  inHull,
+  interpolationAudit,
+  type LongWorkOptions,
+  type Points,
+  type SamplerOptions,
+  type Separability,
+  type SeparableOptions,
+  type Separator,
+  type SimulatedEvent,
+  type SimulateOptions,
+  type Simulation,
+  sampler,
+  separable,
+  simulate,
+} from './data/index.ts';
