@@ -15,8 +15,9 @@ const MAX_STEPS = 10000;
 
 /** I_x(a, b) B(a, b) / (x^a y^b) for x at or below the mean, by the fraction. */
 export function betaFraction(a: number, b: number, x: number, y: number, lambda: number): number {
-  // The convergents are summed as a series of their differences, with the rounding errors carried:
-  // as a running product they would lose two bits every hundred steps.
+  // The convergents are summed as a series of their differences, with the rounding errors carried: as
+  // a running product they would lose two bits every hundred steps. The first convergent is
+  // 1/(lambda + 1); digits are lost only where the result is far below it, at the mean of large shapes.
   let d = (a + 1) / a / (lambda + 1);
   let change = d;
   let sum = d;

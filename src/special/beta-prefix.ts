@@ -21,6 +21,13 @@ import { stirlingRemainderKernel } from './stirling-remainder.ts';
 
 const TWO_PI = 6.283185307179586476925;
 
+/** What x lacks of its exact value: 0 if it is the smaller one of the pair, else 1 - y - x. */
+export function pairTail(x: number, y: number): number {
+  if (x <= y) return 0;
+  const rounded = 1 - y;
+  return rounded - x + sumError(1, -y, rounded);
+}
+
 /** Writes delta = b x - a y as `out[0] + out[1]`, to about 2^-104 of the smaller of a and b. */
 export function betaDelta(a: number, b: number, x: number, y: number, out: Float64Array): void {
   const nu = a + b;
@@ -135,7 +142,7 @@ export function betaDeviance(
  */
 export function betaAmplitude(a: number, b: number, out: Float64Array): number {
   const nu = a + b;
-  if (a < 0.5 || b < 0.5) return (gammaFactor(a) * gammaFactor(b)) / gammaFactor(nu);
+  if (a < 0.5 || b < 0.5) return gammaFactor(b) * (gammaFactor(a) / gammaFactor(nu));
   const remainder =
     stirlingRemainderKernel(nu) - stirlingRemainderKernel(a) - stirlingRemainderKernel(b);
   out[1] = (out[1] as number) + remainder;

@@ -8,7 +8,7 @@
  * Where the result is close to 1 its logarithm, then of order a, has relative accuracy.
  */
 
-import { betaAmplitude, betaDeviance } from './beta-prefix.ts';
+import { betaAmplitude, betaDeviance, pairTail } from './beta-prefix.ts';
 import { productError, sumError } from './double-double.ts';
 import { logGamma1pKernel, logGammaRatioExcess } from './log-gamma.ts';
 import { preciseLog, preciseLog1p, scaleLog } from './precise-log.ts';
@@ -35,7 +35,7 @@ export function betaSeries(
     out[1] = (out[1] as number) - b * (x <= y ? Math.log1p(-x) : Math.log(y));
     return (amplitude / a) * (1 + sum);
   }
-  const xTail = x <= y ? 0 : 1 - y - x;
+  const xTail = pairTail(x, y);
   if (b < a || b < TINY_SHAPE) {
     // 1/(a B) = b/(a + b) Gamma(1 + a + b) / (Gamma(1 + a) Gamma(1 + b))
     preciseLog(x, xTail, out);
@@ -73,7 +73,7 @@ export function betaSeries(
 /** I_x(a, 1) = x^a. */
 export function betaPower(a: number, x: number, y: number, out: Float64Array): void {
   if (y <= 0.125) preciseLog1p(-y, out);
-  else preciseLog(x, x <= y ? 0 : 1 - y - x, out);
+  else preciseLog(x, pairTail(x, y), out);
   scaleLog(a, out);
 }
 

@@ -59,8 +59,8 @@ export function binomialQuantile(
     : binomialQuantileOfTail(n, p, q, prob.complement, prob.logComplement, false);
 }
 
-/** Below this a number may have lost digits, and its logarithm is compared. */
-const SMALLEST_VALUE = 1e-290;
+/** Below this a number may be subnormal, and its logarithm is compared. */
+const SMALLEST_VALUE = 1e-306;
 
 /** After so many steps the bracket is halved. */
 const NEWTON_STEPS = 30;
