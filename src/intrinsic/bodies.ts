@@ -18,7 +18,7 @@ const MAX_DIMENSION = 10_000;
 const MAX_SIDES = 2000;
 
 /** Dimension of a body and one length. */
-export interface BallOptions {
+export interface BallArgs {
   /** Dimension, from 1 to 10000. */
   readonly d: number;
   /** Radius, finite and >= 0; 1 if left out. */
@@ -26,7 +26,7 @@ export interface BallOptions {
 }
 
 /** Options of {@link cube}. */
-export interface CubeOptions {
+export interface CubeArgs {
   /** Dimension, from 1 to 10000. */
   readonly d: number;
   /** Length of an edge, finite and >= 0; 1 if left out. */
@@ -34,7 +34,7 @@ export interface CubeOptions {
 }
 
 /** Options of {@link regularSimplex}. */
-export interface RegularSimplexOptions {
+export interface RegularSimplexArgs {
   /** Dimension, from 1 to 10000. */
   readonly d: number;
   /** Length of an edge, finite and >= 0; 1 if left out. */
@@ -42,7 +42,7 @@ export interface RegularSimplexOptions {
 }
 
 /** Options of {@link crossPolytope}. */
-export interface CrossPolytopeOptions {
+export interface CrossPolytopeArgs {
   /** Dimension, from 1 to 10000. */
   readonly d: number;
   /** Distance of the vertices from the centre, finite and >= 0; 1 if left out. */
@@ -103,7 +103,7 @@ function sized(
  * ball({ d: 3 }).intrinsicVolumes[1].value; // => 4
  * ```
  */
-export function ball(options: BallOptions): Body {
+export function ball(options: BallArgs): Body {
   const { d, size } = sized('ball', options, 'radius', 1);
   return scaledBody(d, size, (k, error) => {
     const value = logBallIntrinsicVolumeKernel(d, k);
@@ -125,7 +125,7 @@ export function ball(options: BallOptions): Body {
  * cube({ d: 7 }).intrinsicVolumes[3].value; // => 35
  * ```
  */
-export function cube(options: CubeOptions): Body {
+export function cube(options: CubeArgs): Body {
   const { d, size } = sized('cube', options, 'side', 1);
   return scaledBody(d, size, (k, error) => {
     const value = logBinomialKernel(d, k);
@@ -193,7 +193,7 @@ export function box(sides: readonly number[]): Body {
  * [half.value.toPrecision(12), area.value.toPrecision(12)]; // => ['1.50000000000', Math.sqrt(3 / 16).toPrecision(12)]
  * ```
  */
-export function regularSimplex(options: RegularSimplexOptions): Body {
+export function regularSimplex(options: RegularSimplexArgs): Body {
   const { d, size } = sized('regularSimplex', options, 'edge', 1);
   return scaledBody(d, size * Math.SQRT1_2, (k, error) => {
     const angle = logPositiveOrthantKernel(d - k, k + 1, error);
@@ -228,7 +228,7 @@ export function regularSimplex(options: RegularSimplexOptions): Body {
  * surfaceArea(crossPolytope({ d: 3 })).value.toPrecision(12); // => Math.sqrt(48).toPrecision(12)
  * ```
  */
-export function crossPolytope(options: CrossPolytopeOptions): Body {
+export function crossPolytope(options: CrossPolytopeArgs): Body {
   const { d, size } = sized('crossPolytope', options, 'scale', 1);
   return scaledBody(d, size, (k, error) => {
     if (k === d) {

@@ -19,7 +19,7 @@ const EPSILON = 2 ** -52;
 const MAX_AXES = 200;
 
 /** Options of {@link ellipsoid}. */
-export interface EllipsoidOptions {
+export interface EllipsoidArgs {
   /** From 1 to 200 finite numbers > 0. */
   readonly semiAxes: readonly number[];
 }
@@ -53,7 +53,7 @@ function softplus(x: number): number {
  * ellipsoid({ semiAxes: [1, 2] }).intrinsicVolumes[1].value.toPrecision(12); // => '4.84422411027'
  * ```
  */
-export function ellipsoid(options: EllipsoidOptions): Body {
+export function ellipsoid(options: EllipsoidArgs): Body {
   const fn = 'ellipsoid';
   checkOptions(fn, options, ['semiAxes']);
   const { semiAxes } = options;

@@ -5,15 +5,15 @@
  */
 export { ballVolume, flagCoefficient, sphereArea } from './ball-volume.ts';
 export {
-  type BallOptions,
+  type BallArgs,
   ball,
   box,
-  type CrossPolytopeOptions,
-  type CubeOptions,
+  type CrossPolytopeArgs,
+  type CubeArgs,
   crossPolytope,
   cube,
-  type RegularSimplexOptions,
+  type RegularSimplexArgs,
   regularSimplex,
 } from './bodies.ts';
 export { type Body, meanWidth, steinerVolume, surfaceArea } from './body.ts';
-export { type EllipsoidOptions, ellipsoid } from './ellipsoid.ts';
+export { type EllipsoidArgs, ellipsoid } from './ellipsoid.ts';

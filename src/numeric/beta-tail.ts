@@ -104,14 +104,18 @@ export class BetaTail implements Tail {
     this.fixReference();
   }
 
-  /** Takes the height h as reference point, -1 < h < 1, without rounding atanh h. */
-  centreAtHeight(h: number): void {
+  /**
+   * Takes the height h as reference point, -1 < h < 1, without rounding atanh h; `gap` is 1 - |h|, for
+   * heights nearer to 1 than doubles are.
+   */
+  centreAtHeight(h: number, gap: number = 1 - Math.abs(h)): void {
     this.range = 'line';
     const a = Math.abs(h);
-    this.s = 0.5 * Math.log1p((2 * a) / (1 - a));
+    this.s = 0.5 * Math.log((2 - gap) / gap);
+    if (a < 0.5) this.s = 0.5 * Math.log1p((2 * a) / gap);
     if (h < 0) this.s = -this.s;
-    this.logWidth = a < 0.4 ? Math.log1p(-h * h) : Math.log1p(-a) + Math.log1p(a);
-    this.evaluate(a, 1 - a, h < 0);
+    this.logWidth = a < 0.4 ? Math.log1p(-h * h) : Math.log(gap) + Math.log(2 - gap);
+    this.evaluate(a, gap, h < 0);
     this.fixReference();
   }
 

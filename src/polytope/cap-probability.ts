@@ -12,7 +12,7 @@ const EPSILON = 2 ** -52;
 const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 
 /** Options of {@link capProbability}. */
-export interface CapProbabilityOptions {
+export interface CapProbabilityArgs {
   /** Dimension, from 1 to a million. */
   readonly d: number;
   /** Signed distance of the hyperplane from the centre of the law. */
@@ -49,7 +49,7 @@ export interface CapProbabilityOptions {
  * capProbability({ d: 2, height: 0.5, law: uniformSphere() }).value.toPrecision(12); // => (1 / 3).toPrecision(12)
  * ```
  */
-export function capProbability(options: CapProbabilityOptions): Probability {
+export function capProbability(options: CapProbabilityArgs): Probability {
   const fn = 'capProbability';
   checkOptions(fn, options, ['d', 'height', 'law']);
   const { d, height } = options;

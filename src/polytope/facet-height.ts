@@ -21,7 +21,7 @@ const FAMILIES = ['beta', 'gaussian'] as const;
 const MAX_STEPS = 200;
 
 /** Options of {@link facetHeight}. */
-export interface FacetHeightOptions {
+export interface FacetHeightArgs {
   /** Number of points, above d. */
   readonly n: Count;
   /** Dimension, from 2 to a million. */
@@ -72,7 +72,7 @@ export interface FacetHeight extends Distribution {
  * height.cdf(0.7).value.toPrecision(8); // => '0.048028898'
  * ```
  */
-export function facetHeight(options: FacetHeightOptions): FacetHeight {
+export function facetHeight(options: FacetHeightArgs): FacetHeight {
   const fn = 'facetHeight';
   checkOptions(fn, options, ['n', 'd', 'law']);
   const { d } = options;

@@ -54,8 +54,8 @@ export interface FacetModel {
   logReferencePlain(): number;
   /** log of the constant of g. */
   readonly logPlainConstant: number;
-  /** Makes height h the reference point of the tail. */
-  centreAt(height: number): void;
+  /** Makes height h the reference point of the tail; `gap` is 1 - |h| for a law on the unit ball. */
+  centreAt(height: number, gap?: number): void;
   /** The height at the place of the tail. */
   height(): number;
   /** log of the derivative of the height by the variable of the tail. */
@@ -92,7 +92,7 @@ function betaModel(beta: number, d: number): FacetModel {
     logPlain: () => (a + 1) * tail.widthShift,
     logReferencePlain: () => (a + 1) * tail.logWidth,
     logPlainConstant: norm,
-    centreAt: (height) => tail.centreAtHeight(height),
+    centreAt: (height, gap) => tail.centreAtHeight(height, gap),
     height: () => tail.height,
     logSlope: () => tail.logWidth,
   };
@@ -184,8 +184,9 @@ export function facetsBeyond(
   count: ResolvedCount,
   height: number,
   direction: 1 | -1,
+  gap?: number,
 ): FacetShare {
-  model.centreAt(height);
+  model.centreAt(height, gap);
   const form = localForm(model, count);
   const integral = integrateHalfLine(form.at, direction, form.width, LONGEST_PIECE);
   const { means } = integral;

@@ -16,7 +16,7 @@ const EPSILON = 2 ** -52;
 const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 
 /** Options of {@link expectedFacets}. */
-export interface ExpectedFacetsOptions {
+export interface ExpectedFacetsArgs {
   /** Number of points; of pairs for the symmetric hull. */
   readonly n: Count;
   /** Dimension, from 1 to a million. */
@@ -28,7 +28,7 @@ export interface ExpectedFacetsOptions {
 }
 
 /** Options of {@link expectedFacetsBelow}. */
-export interface ExpectedFacetsBelowOptions {
+export interface ExpectedFacetsBelowArgs {
   /** Number of points. */
   readonly n: Count;
   /** Dimension, from 1 to a million. */
@@ -91,7 +91,7 @@ export function resolveFacetLaw(fn: string, law: unknown, d: number): ReturnType
  * expectedFacets({ n: 50, d: 10, law: gaussian() }).toString(); // => '93354.9864529'
  * ```
  */
-export function expectedFacets(options: ExpectedFacetsOptions): LogNumber {
+export function expectedFacets(options: ExpectedFacetsArgs): LogNumber {
   const fn = 'expectedFacets';
   checkOptions(fn, options, ['n', 'd', 'law', 'hull']);
   const { d } = options;
@@ -164,7 +164,7 @@ function endsOfSegment(
  * below.value.toPrecision(12); // => (0.52224).toPrecision(12)
  * ```
  */
-export function expectedFacetsBelow(options: ExpectedFacetsBelowOptions): LogNumber {
+export function expectedFacetsBelow(options: ExpectedFacetsBelowArgs): LogNumber {
   const fn = 'expectedFacetsBelow';
   checkOptions(fn, options, ['n', 'd', 'height', 'law']);
   const { d, height } = options;

@@ -6,7 +6,7 @@ import { checkOptions } from '../domain.ts';
 import { checkDimension } from './hull-options.ts';
 
 /** Options of {@link heightLimit}. */
-export interface HeightLimitOptions {
+export interface HeightLimitArgs {
   /** Number of points. */
   readonly n: Count;
   /** Dimension, from 1 to a million. */
@@ -44,7 +44,7 @@ export interface HeightLimit {
  * [rate, limit.toFixed(4)]; // => [0.5, '0.7951']
  * ```
  */
-export function heightLimit(options: HeightLimitOptions): HeightLimit {
+export function heightLimit(options: HeightLimitArgs): HeightLimit {
   const fn = 'heightLimit';
   checkOptions(fn, options, ['n', 'd']);
   checkDimension(fn, options.d);

@@ -24,9 +24,14 @@ export function resolveHull(fn: string, hull: unknown, choices: readonly Hull[] 
   return hull;
 }
 
-/** Refuses anything but a dimension from 1, or the given least one, to a million. */
-export function checkDimension(fn: string, d: unknown, least = 1): asserts d is number {
-  checkInteger(fn, 'd', d, least, MAX_DIMENSION);
+/** Refuses anything but a dimension in the given range, from 1 to a million if left out. */
+export function checkDimension(
+  fn: string,
+  d: unknown,
+  least = 1,
+  largest: number = MAX_DIMENSION,
+): asserts d is number {
+  checkInteger(fn, 'd', d, least, largest);
 }
 
 /** Refuses anything but a number of points. */

@@ -23,7 +23,7 @@ const HALF_LOG_TWO_PI = 0.91893853320467274;
 const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 
 /** Options of {@link expectedHullVolume}. */
-export interface ExpectedHullVolumeOptions {
+export interface ExpectedHullVolumeArgs {
   /** Number of points; of pairs for the symmetric hull. */
   readonly n: Count;
   /** Dimension, from 1 to a million. */
@@ -35,7 +35,7 @@ export interface ExpectedHullVolumeOptions {
 }
 
 /** Options of {@link expectedHullIntrinsicVolume}. */
-export interface ExpectedHullIntrinsicVolumeOptions extends ExpectedHullVolumeOptions {
+export interface ExpectedHullIntrinsicVolumeArgs extends ExpectedHullVolumeArgs {
   /** Order of the intrinsic volume, from 0 to d. */
   readonly k: number;
 }
@@ -72,7 +72,7 @@ export interface ExpectedHullIntrinsicVolumeOptions extends ExpectedHullVolumeOp
  * expectedHullVolume({ n: 3, d: 2, law: gaussian() }).value.toPrecision(12); // => Math.sqrt(0.75).toPrecision(12)
  * ```
  */
-export function expectedHullVolume(options: ExpectedHullVolumeOptions): LogNumber {
+export function expectedHullVolume(options: ExpectedHullVolumeArgs): LogNumber {
   const fn = 'expectedHullVolume';
   checkOptions(fn, options, ['n', 'd', 'law', 'hull']);
   checkDimension(fn, options.d);
@@ -101,9 +101,7 @@ export function expectedHullVolume(options: ExpectedHullVolumeOptions): LogNumbe
  * (2 * half.value).toPrecision(12); // => (4 * Math.PI * 72 / 132).toPrecision(12)
  * ```
  */
-export function expectedHullIntrinsicVolume(
-  options: ExpectedHullIntrinsicVolumeOptions,
-): LogNumber {
+export function expectedHullIntrinsicVolume(options: ExpectedHullIntrinsicVolumeArgs): LogNumber {
   const fn = 'expectedHullIntrinsicVolume';
   checkOptions(fn, options, ['n', 'd', 'k', 'law', 'hull']);
   checkDimension(fn, options.d);
@@ -111,7 +109,7 @@ export function expectedHullIntrinsicVolume(
   return expectedVolume(fn, options, options.k);
 }
 
-function expectedVolume(fn: string, options: ExpectedHullVolumeOptions, k: number): LogNumber {
+function expectedVolume(fn: string, options: ExpectedHullVolumeArgs, k: number): LogNumber {
   const { d } = options;
   const law = checkLaw(fn, options.law, FAMILIES, d);
   const hull = resolveHull(fn, options.hull);

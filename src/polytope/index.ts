@@ -3,40 +3,54 @@
  *
  * @module
  */
-export { type CapProbabilityOptions, capProbability } from './cap-probability.ts';
+export { type CapProbabilityArgs, capProbability } from './cap-probability.ts';
 export {
   type ExpectedFacesArgs,
   type ExpectedVerticesArgs,
   expectedFaces,
   expectedVertices,
 } from './faces.ts';
-export { type FacetHeight, type FacetHeightOptions, facetHeight } from './facet-height.ts';
+export { type FacetHeight, type FacetHeightArgs, facetHeight } from './facet-height.ts';
 export {
-  type ExpectedFacetsBelowOptions,
-  type ExpectedFacetsOptions,
+  type ExpectedFacetsArgs,
+  type ExpectedFacetsBelowArgs,
   expectedFacets,
   expectedFacetsBelow,
 } from './facets.ts';
-export { type HeightLimit, type HeightLimitOptions, heightLimit } from './height-limit.ts';
+export {
+  type Exceedance,
+  type HausdorffDistance,
+  type HausdorffDistanceArgs,
+  type HausdorffWithinArgs,
+  hausdorffDistance,
+  hausdorffWithin,
+} from './hausdorff.ts';
+export { type HeightLimit, type HeightLimitArgs, heightLimit } from './height-limit.ts';
 export type { Hull } from './hull-options.ts';
 export {
-  type ExpectedHullIntrinsicVolumeOptions,
-  type ExpectedHullVolumeOptions,
+  type ExpectedHullIntrinsicVolumeArgs,
+  type ExpectedHullVolumeArgs,
   expectedHullIntrinsicVolume,
   expectedHullVolume,
 } from './hull-volume.ts';
 export { type NextPointInHullArgs, nextPointInHull } from './next-point.ts';
+export {
+  type PointInHullArgs,
+  pointInHull,
+  type QueriesInHullArgs,
+  queriesInHull,
+} from './point-in-hull.ts';
 export {
   type ProjectedFaces,
   type ProjectedFacesArgs,
   type ProjectedPolytope,
   projectedFaces,
 } from './projected-faces.ts';
-export { type SimplexVolume, type SimplexVolumeOptions, simplexVolume } from './simplex-volume.ts';
+export { type SimplexVolume, type SimplexVolumeArgs, simplexVolume } from './simplex-volume.ts';
 export {
-  type HullIntrinsicVolumeRatioOptions,
-  type HullVolumeRatioOptions,
+  type HullIntrinsicVolumeRatioArgs,
+  type HullVolumeRatioArgs,
   hullIntrinsicVolumeRatio,
   hullVolumeRatio,
 } from './volume-ratio.ts';
-export { type ApproxVolumeThresholdOptions, approxVolumeThreshold } from './volume-threshold.ts';
+export { type ApproxVolumeThresholdArgs, approxVolumeThreshold } from './volume-threshold.ts';

@@ -13,7 +13,7 @@ const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 const MAX_DIMENSION = 1_000_000;
 
 /** Options of {@link simplexVolume}. */
-export interface SimplexVolumeOptions {
+export interface SimplexVolumeArgs {
   /** Dimension of the space, from 1 to a million. */
   readonly d: number;
   /** Dimension of the simplex, from 1 to d; d if left out. */
@@ -67,7 +67,7 @@ export interface SimplexVolume {
  * triangle.moment(1).value.toPrecision(12); // => (35 / (48 * Math.PI)).toPrecision(12)
  * ```
  */
-export function simplexVolume(options: SimplexVolumeOptions): SimplexVolume {
+export function simplexVolume(options: SimplexVolumeArgs): SimplexVolume {
   const fn = 'simplexVolume';
   checkOptions(fn, options, ['d', 'r', 'law']);
   const { d } = options;

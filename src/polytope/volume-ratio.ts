@@ -15,7 +15,7 @@ import {
 import { volumeRatioKernel } from './volume-ratio-kernel.ts';
 
 /** Options of {@link hullVolumeRatio}. */
-export interface HullVolumeRatioOptions {
+export interface HullVolumeRatioArgs {
   /** Number of points; of pairs for the symmetric hull. */
   readonly n: Count;
   /** Dimension, from 1 to a million. */
@@ -27,7 +27,7 @@ export interface HullVolumeRatioOptions {
 }
 
 /** Options of {@link hullIntrinsicVolumeRatio}. */
-export interface HullIntrinsicVolumeRatioOptions extends HullVolumeRatioOptions {
+export interface HullIntrinsicVolumeRatioArgs extends HullVolumeRatioArgs {
   /** Order of the intrinsic volume, from 0 to d. */
   readonly k: number;
 }
@@ -73,7 +73,7 @@ export interface HullIntrinsicVolumeRatioOptions extends HullVolumeRatioOptions 
  * hullVolumeRatio({ n: 3, d: 3, law: uniformBall() }).value; // => 0
  * ```
  */
-export function hullVolumeRatio(options: HullVolumeRatioOptions): Probability {
+export function hullVolumeRatio(options: HullVolumeRatioArgs): Probability {
   const fn = 'hullVolumeRatio';
   checkOptions(fn, options, ['n', 'd', 'law', 'hull']);
   const { d } = options;
@@ -111,7 +111,7 @@ export function hullVolumeRatio(options: HullVolumeRatioOptions): Probability {
  * ratio.value.toPrecision(12); // => (72 / 132).toPrecision(12)
  * ```
  */
-export function hullIntrinsicVolumeRatio(options: HullIntrinsicVolumeRatioOptions): Probability {
+export function hullIntrinsicVolumeRatio(options: HullIntrinsicVolumeRatioArgs): Probability {
   const fn = 'hullIntrinsicVolumeRatio';
   checkOptions(fn, options, ['n', 'd', 'k', 'law', 'hull']);
   const { d, k } = options;

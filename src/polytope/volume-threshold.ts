@@ -7,7 +7,7 @@ import { LogNumber } from '../log-number.ts';
 import { checkDimension } from './hull-options.ts';
 
 /** Options of {@link approxVolumeThreshold}. */
-export interface ApproxVolumeThresholdOptions {
+export interface ApproxVolumeThresholdArgs {
   /** Dimension, from 1 to a million. */
   readonly d: number;
   /** Order of the intrinsic volume, from 1 to d; d if left out. */
@@ -47,7 +47,7 @@ export interface ApproxVolumeThresholdOptions {
  * approxVolumeThreshold({ d: 5000, law: uniformBall() }).log10.toFixed(1); // => '8891.0'
  * ```
  */
-export function approxVolumeThreshold(options: ApproxVolumeThresholdOptions): LogNumber {
+export function approxVolumeThreshold(options: ApproxVolumeThresholdArgs): LogNumber {
   const fn = 'approxVolumeThreshold';
   checkOptions(fn, options, ['d', 'k', 'law', 'share']);
   const { d, share = 0.5 } = options;

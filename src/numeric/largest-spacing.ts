@@ -1,0 +1,117 @@
+/**
+ * The largest of n spacings of a circle of length 1: P(all spacings <= a) for n uniform points.
+ *
+ * The alternating sum P(some > a) = sum_(k >= 1, k a < 1) (-1)^(k+1) binom(n, k) (1 - k a)^(n-1) serves
+ * where its first term is below 1. Where it is not, its terms cancel; then the complement comes from
+ * Laplace's inversion of the density of n uniform spacings,
+ *
+ *   P(all <= a) = (n - 1)! / (2 pi i) int e^z ((1 - e^(-a z)) / z)^n dz,
+ *
+ * by the trapezoidal rule on the vertical line through the saddle point, where nothing cancels. For n a < 2
+ * the spacings are reflected, x -> a - x, which leaves a sum of n a - 1 < 1.
+ */
+import { logBinomialKernel } from '../special/log-beta.ts';
+import { log1mExpKernel, log1pmxKernel } from '../special/log-domain.ts';
+import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
+
+const EPSILON = 2 ** -52;
+/** Up to this n the sum is used throughout; the line integral needs the decay of |z|^-n. */
+const FEW = 12;
+
+/** The smaller tail: out[0] its logarithm, out[1] a bound of its error. True when it is P(all <= a). */
+export function largestSpacingTail(n: number, a: number, out: Float64Array): boolean {
+  out[0] = Number.NEGATIVE_INFINITY;
+  out[1] = 0;
+  if (a >= 1) return false;
+  if (n * a <= 1) return true;
+  const logFirst = Math.log(n) + (n - 1) * Math.log1p(-a);
+  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, out);
+  const log = logAllShort(n, a, out);
+  if (log < -Math.LN2) {
+    out[0] = log;
+    return true;
+  }
+  out[1] = ((out[1] as number) * Math.exp(log)) / -Math.expm1(log);
+  out[0] = log1mExpKernel(log);
+  return false;
+}
+
+function alternatingSum(n: number, a: number, out: Float64Array): boolean {
+  let sum = 0;
+  let error = 0;
+  for (let k = 1; k <= n && k * a < 1; k++) {
+    const log = logBinomialKernel(n, k) + (n - 1) * Math.log1p(-k * a);
+    const term = Math.exp(log);
+    sum += k % 2 === 1 ? term : -term;
+    error += term * EPSILON * (3 + 2 * Math.abs(log) + k);
+    if (term < 1e-20 * sum && n > FEW) break;
+  }
+  const above = sum <= 0.5;
+  const tail = Math.max(above ? sum : 1 - sum, 0);
+  out[0] = Math.log(tail);
+  // a tail below the rounding of the terms is known to be below it, no more
+  out[1] =
+    tail > error ? -Math.log1p(-Math.min(error / tail, 1 - EPSILON)) : Number.POSITIVE_INFINITY;
+  if (tail <= error) out[0] = Math.log(Math.max(tail, error, Number.MIN_VALUE));
+  return !above;
+}
+
+/** log P(all <= a), 1/n < a < 1, n > 12. */
+function logAllShort(n: number, a: number, out: Float64Array): number {
+  if (n * a < 2) {
+    const rest = n * a - 1;
+    const log = (n - 1) * Math.log(rest) + logAllShort(n, a / rest, out);
+    out[1] = (out[1] as number) + EPSILON * n * (2 / rest + Math.abs(Math.log(rest)));
+    return log;
+  }
+  if (a >= 1) {
+    out[1] = 0;
+    return 0;
+  }
+  // saddle point n x, x = 1 / (1 + q(x)) with q = n a / (e^(a n x) - 1); q falls in x: bisect, then polish
+  const q = (x: number): number => (n * a) / Math.expm1(a * n * x);
+  let low = 1e-12;
+  let high = 1;
+  for (let i = 0; i < 200 && high - low > 1e-15 * high; i++) {
+    const middle = 0.5 * (low + high);
+    if (middle * (1 + q(middle)) < 1) low = middle;
+    else high = middle;
+  }
+  const x = high;
+  const excess = -q(x) / (1 + q(x));
+  const az = a * n * x;
+  const e = Math.exp(-az);
+  // second derivative of the exponent at the saddle
+  const curvature = 1 / (n * x * x) - (n * a * a * e) / ((1 - e) * (1 - e));
+  const width = 1 / Math.sqrt(curvature);
+  const scale = n * x;
+  const integrand = (y: number): number => {
+    // z = scale + i y; log of the integrand relative to y = 0
+    const r = y / scale;
+    const cos = e * Math.cos(a * y);
+    const sin = e * Math.sin(a * y);
+    const real =
+      0.5 *
+      n *
+      (Math.log1p((2 * (e - cos) + cos * cos + sin * sin - e * e) / ((1 - e) * (1 - e))) -
+        Math.log1p(r * r));
+    const angle = y + n * (Math.atan2(sin, 1 - cos) - Math.atan(r));
+    return Math.exp(real) * Math.cos(angle);
+  };
+  const step = 0.35 * width;
+  let sum = 0.5;
+  let quiet = 0;
+  for (let j = 1; j < 200_000 && quiet < 8; j++) {
+    const value = integrand(j * step);
+    sum += value;
+    quiet = Math.abs(value) < 1e-18 ? quiet + 1 : 0;
+  }
+  const log =
+    0.5 * Math.log((2 * Math.PI) / n) +
+    stirlingRemainderKernel(n) -
+    n * log1pmxKernel(excess) +
+    n * Math.log1p(-e) +
+    Math.log((sum * step) / Math.PI);
+  out[1] = 1e-14 + EPSILON * (8 + 4 * n * (Math.abs(excess) + e * (1 + az)));
+  return Math.min(log, 0);
+}
