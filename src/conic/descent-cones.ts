@@ -121,6 +121,11 @@ export function linfDescentCone(options: { n: number; saturated: number }): Cone
   return productCone(subspaceKernel(n - saturated, n - saturated), orthantKernel(saturated));
 }
 
+/**
+ * From here on the second-order expansion is exact to rounding: its error is a share of about 1/n of a
+ * correction that is itself below 1, as the sums confirm to 6e-15 of the mean.
+ */
+const EXPANDED = 1e7;
 /** Standard deviations on either side of the mean that the sums for the moments reach. */
 const REACH = 10;
 /** A smooth law summed in steps of an eighth of its standard deviation has its exact moments. */
@@ -172,8 +177,9 @@ export function l1StatisticalDimension(options: { n: number; sparsity: number })
 }
 
 function exactMean(n: number, sparsity: number): number {
-  const { term, first, last } = descentSequence('absolute', n, sparsity);
   const { mean, variance } = secondOrderMoments(n, sparsity, 2);
+  if (Math.min(sparsity, n - sparsity) >= EXPANDED) return mean;
+  const { term, first, last } = descentSequence('absolute', n, sparsity);
   const deviation = Math.sqrt(Math.max(variance, 1));
   const step = Math.max(1, Math.floor(deviation / STEPS_PER_DEVIATION));
   const centre = Math.min(Math.max(Math.round(mean), first), last);

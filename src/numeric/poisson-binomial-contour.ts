@@ -131,7 +131,12 @@ export function contourTail(runs: readonly BernoulliRun[], size: number, k: numb
   const far = deviation * Math.abs(1 - r) > 10 * r;
   const methodError = mean > 0 ? phaseError : (far ? 2 : 0.2 * deviation) / deviation;
   const log = base + Math.log(normalised);
-  return { tail: Math.exp(log), log, side, logError: rounding + methodError };
+  return {
+    tail: Math.exp(log),
+    log,
+    side,
+    logError: rounding + methodError + EPSILON * Math.abs(log),
+  };
 }
 
 /**
@@ -173,7 +178,8 @@ function fewFailures(runs: readonly BernoulliRun[], failures: number): SumTail {
   }
   const logFactor = failures * Math.log(total) - logFactorialKernel(failures);
   log += logFactor + Math.log((c[failures] as number) * tail);
-  const logError = EPSILON * (8 + 2 * failures + 3 * Math.abs(bulk) + 2 * Math.abs(logFactor));
+  const logError =
+    EPSILON * (8 + 2 * failures + 4 * Math.abs(bulk) + 2 * Math.abs(logFactor) + Math.abs(log));
   return { tail: Math.exp(log), log, side: 'upper', logError };
 }
 

@@ -98,13 +98,14 @@ function tiltedSum(
       const unlikely = step * j - 1;
       const success = r / (unlikely + r);
       const failure = unlikely / (unlikely + r);
-      const term = r === 1 ? 0 : Math.log1p((r - 1) / (step * j)) - carry;
+      const logFactor = r === 1 ? 0 : Math.log1p((r - 1) / (step * j));
       for (let copy = 0; copy < count; copy++) {
         if (filled < top) filled++;
         for (let i = filled; i > 0; i--) {
           weights[i] = (weights[i] as number) * failure + (weights[i - 1] as number) * success;
         }
         weights[0] = (weights[0] as number) * failure;
+        const term = logFactor - carry;
         const next = logMoment + term;
         carry = next - logMoment - term;
         logMoment = next;
@@ -120,7 +121,7 @@ function tiltedSum(
   // sum = sum over i of b_i r^(k-i) on the lower side, of b_i r^(k+1-i) on the upper
   const shift = r === 1 ? 0 : (side === 'lower' ? k : k + 1) * Math.log(r);
   const log = logMoment - shift + Math.log(sum);
-  const rounding = EPSILON * (4 + 1.5 * Math.sqrt(size));
-  const logError = rounding + (r === 1 ? 0 : EPSILON * (Math.abs(logMoment) + 2 * Math.abs(shift)));
+  const rounding = EPSILON * (4 + 1.5 * Math.sqrt(size) + Math.abs(log));
+  const logError = rounding + (r === 1 ? 0 : 2 * EPSILON * (Math.abs(logMoment) + Math.abs(shift)));
   return { tail: r === 1 ? sum : Math.exp(log), log, side, logError };
 }
