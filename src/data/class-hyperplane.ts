@@ -12,6 +12,8 @@ export interface Problem {
   readonly matrix: Matrix;
   readonly signs: Int8Array;
   readonly intercept: boolean;
+  /** Any proven separation counts, however narrow. */
+  readonly exact: boolean;
   /** Where the columns are centred: the middle of their ranges, or 0 without intercept. */
   readonly middle: Float64Array;
   readonly allowed: Float64Array;
@@ -41,7 +43,7 @@ export function completeSeparator(problem: Problem, scales: Float64Array): Hyper
 
 /** Shortest way between the classes in scaled columns; apart when proven and above the tolerance. */
 function classDistance(
-  { matrix, signs, intercept, middle, allowed }: Problem,
+  { matrix, signs, intercept, exact, middle, allowed }: Problem,
   scales: Float64Array,
 ): { found: MinimumNormPoint; apart: boolean } {
   const { rows, n, d } = matrix;
@@ -73,7 +75,7 @@ function classDistance(
   const apart = found.point.some(
     (x, j) => Math.abs(x) * (scales[j] as number) > (allowed[j] as number),
   );
-  return { found, apart: proven && apart };
+  return { found, apart: proven && (exact || apart) };
 }
 
 /** The hyperplane with a normal given in scaled columns, midway between the classes. */

@@ -12,6 +12,7 @@ import { checkOptions } from '../domain.ts';
 import { DEFAULT_TOLERANCE, nearest, productError, reproduces } from './in-hull.ts';
 import { type LongWorkOptions, type Pace, startPace } from './long-work.ts';
 import {
+  allIntegers,
   checkPoints,
   columnRanges,
   columnTolerances,
@@ -25,7 +26,8 @@ import {
  *
  * Of identical points the first is listed, so that the hull of the vertices is always the hull of
  * the points. A point nearer than 1e-12 of the columns' ranges to the hull of the other vertices
- * counts as lying in it.
+ * counts as lying in it; with integer coordinates throughout, only one that rounding cannot tell from
+ * it.
  *
  * @param points - rows of finite numbers of size at most 1e150, all of one length; at least one
  * @param options - `onProgress`: called with the number of points settled and the number of points;
@@ -70,11 +72,13 @@ export async function hullVerticesKernel(matrix: Matrix, pace: Pace): Promise<Ve
   const { n, d } = matrix;
   const { rows, allowed } = scaled(matrix);
   const { firsts, copies } = distinctRows(rows, n, d);
-  const search = new VertexSearch(rows, d, allowed, firsts);
+  const search = new VertexSearch(rows, d, allowed, firsts, allIntegers(matrix.rows));
   const settledBefore = n - firsts.length;
   // Far points first: they are vertices, and the sooner those are known the fewer tests fail.
   const order = byDistance(rows, d, firsts);
+  if (pace.spend(40 * n * d)) await pace.pause(settledBefore);
   search.seed();
+  if (pace.spend(4 * n * d * d)) await pace.pause(settledBefore);
   for (let k = 0; k < order.length; k++) {
     let work = search.settle(order[k] as number);
     while (work < 0) {
@@ -166,18 +170,30 @@ class VertexSearch {
   private readonly d: number;
   private readonly allowed: Float64Array;
   private readonly firsts: readonly number[];
+  /** Any proven separation counts, however narrow. */
+  private readonly exact: boolean;
   private readonly ones: Float64Array;
   private readonly names: number[] = [];
   private readonly known = new Set<number>();
+  /** The rows of the working set, and room for them shifted. */
   private set: Float64Array;
+  private shifted: Float64Array;
 
-  constructor(rows: Float64Array, d: number, allowed: Float64Array, firsts: readonly number[]) {
+  constructor(
+    rows: Float64Array,
+    d: number,
+    allowed: Float64Array,
+    firsts: readonly number[],
+    exact: boolean,
+  ) {
+    this.exact = exact;
     this.rows = rows;
     this.d = d;
     this.allowed = allowed;
     this.firsts = firsts;
     this.ones = new Float64Array(d).fill(1);
     this.set = new Float64Array(64 * d);
+    this.shifted = new Float64Array(64 * d);
   }
 
   vertices(): number[] {
@@ -205,9 +221,9 @@ class VertexSearch {
     const { d, names, set, allowed } = this;
     const matrix: Matrix = { rows: set, n: names.length, d };
     const q = this.row(point);
-    const attempt = nearest(matrix, q, this.ones);
+    const attempt = nearest(matrix, q, this.ones, this.shifted);
     const work = 8 * names.length * d + d * d * d;
-    if (reproduces(attempt, allowed)) return work;
+    if (!(this.exact && attempt.proven) && reproduces(attempt, allowed)) return work;
     if (!attempt.proven) {
       // Too close to call: it joins and must stand the check against the final set.
       this.add(point, true);
@@ -231,8 +247,9 @@ class VertexSearch {
     const matrix: Matrix = { rows: this.set, n: last, d };
     const q = this.row(point);
     if (last > 0) {
-      const attempt = nearest(matrix, q, this.ones);
-      if (!attempt.proven || reproduces(attempt, this.allowed)) return 8 * last * d + d * d * d;
+      const attempt = nearest(matrix, q, this.ones, this.shifted);
+      const tied = !this.exact && reproduces(attempt, this.allowed);
+      if (!attempt.proven || tied) return 8 * last * d + d * d * d;
     }
     this.set.set(q, last * d);
     names.push(point);
@@ -249,6 +266,7 @@ class VertexSearch {
       const larger = new Float64Array(2 * this.set.length);
       larger.set(this.set);
       this.set = larger;
+      this.shifted = new Float64Array(larger.length);
     }
     this.set.set(this.row(point), names.length * d);
     names.push(point);

@@ -147,6 +147,15 @@ export function columnTolerances(ranges: ColumnRanges, tolerance: number): Float
   );
 }
 
+/**
+ * Are all numbers integers of at most 2^52 in size? Then differences are exact, and a separation that
+ * rounding cannot feign is real, however narrow.
+ */
+export function allIntegers(numbers: Float64Array): boolean {
+  for (const x of numbers) if (Math.floor(x) !== x || Math.abs(x) > 2 ** 52) return false;
+  return true;
+}
+
 /** The smallest power of two from 2^-1000 on that is at least x: scaling by it is exact. */
 export function powerOfTwoAbove(x: number): number {
   let power = 1;

@@ -11,6 +11,7 @@ import { completeSeparator, type Problem, weakHyperplane } from './class-hyperpl
 import { DEFAULT_TOLERANCE, type HullWeight } from './in-hull.ts';
 import { judgeOverlap } from './overlap.ts';
 import {
+  allIntegers,
   type ColumnRanges,
   checkPoints,
   columnMeans,
@@ -56,7 +57,7 @@ export interface SeparableOptions {
  * Complete and quasi-complete separation are the cases in which a logistic fit has no finite
  * solution. When complete, the hyperplane is the one of largest margin, with
  * $n \cdot x - c \ge m$ for the positive class and $\le -m$ for the negative one. Differences below
- * 1e-12 of a column's range count as none.
+ * 1e-12 of a column's range count as none, with integers throughout those below rounding.
  *
  * @param points - rows of finite numbers of size at most 1e150, all of one length; at least one
  * @param labels - one per row: `true` or 1 for the positive class; `false`, 0 or -1 for the other
@@ -144,7 +145,14 @@ export function separableKernel(
       scales[j] = powerOfTwoAbove(Math.max(range, tolerance / DEFAULT_TOLERANCE));
     }
   }
-  const problem: Problem = { matrix, signs, intercept, middle, allowed };
+  const problem: Problem = {
+    matrix,
+    signs,
+    intercept,
+    exact: allIntegers(rows),
+    middle,
+    allowed,
+  };
   const complete = completeSeparator(problem, scales);
   if (complete !== null) return { kind: 'complete', ...complete, rank, weights: [] };
   return { ...incomplete(problem, scales), rank };
