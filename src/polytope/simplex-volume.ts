@@ -72,7 +72,7 @@ export function simplexVolume(options: SimplexVolumeArgs): SimplexVolume {
   checkOptions(fn, options, ['d', 'r', 'law']);
   const { d } = options;
   checkInteger(fn, 'd', d, 1, MAX_DIMENSION);
-  const r = options.r ?? d;
+  const r = options.r === undefined ? d : options.r;
   checkInteger(fn, 'r', r, 1, d);
   const law = checkLaw(fn, options.law, FAMILIES, d);
   if (law.family === 'beta' && d === 1 && law.b === -1) {

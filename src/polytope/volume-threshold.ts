@@ -52,7 +52,7 @@ export function approxVolumeThreshold(options: ApproxVolumeThresholdArgs): LogNu
   checkOptions(fn, options, ['d', 'k', 'law', 'share']);
   const { d, share = 0.5 } = options;
   checkDimension(fn, d);
-  const k = options.k ?? d;
+  const k = options.k === undefined ? d : options.k;
   checkInteger(fn, 'k', k, 1, d);
   const law = checkLaw(fn, options.law, ['beta'], d) as BetaLaw;
   if (!(typeof share === 'number' && share > 0 && share < 1)) {

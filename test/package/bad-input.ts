@@ -3,34 +3,13 @@
  * ones and expects a DomainError that names it.
  */
 import { gaussian } from 'hullgauge';
+import { conicCalls } from './calls/conic.ts';
+import { dataCalls } from './calls/data.ts';
+import { polytopeCalls } from './calls/polytope.ts';
+import { specialCalls } from './calls/special.ts';
+import type { OptionsCall, PositionalCall, Skipped } from './calls/types.ts';
 
-/** A valid call of a function with one options object. */
-export interface OptionsCall {
-  readonly options: Readonly<Record<string, unknown>>;
-  /** Options that must be whole numbers. */
-  readonly integers?: readonly string[];
-  /** Options that are Counts: 2^53 and LogNumber are welcome. */
-  readonly counts?: readonly string[];
-  /** Options that may be left out. */
-  readonly optional?: readonly string[];
-  /** Options that take objects or arrays, to which only the primitives among the bad values apply. */
-  readonly structured?: readonly string[];
-}
-
-/** A valid call of a function with positional arguments. */
-export interface PositionalCall {
-  readonly args: readonly unknown[];
-  /** Names of the arguments, in order. */
-  readonly names: readonly string[];
-  readonly integers?: readonly string[];
-  readonly optional?: readonly string[];
-  readonly structured?: readonly string[];
-}
-
-/** A function that the walk leaves out, and why. */
-export interface Skipped {
-  readonly skip: string;
-}
+export type { OptionsCall, PositionalCall, Skipped };
 
 const nd = { n: 10, d: 3 };
 
@@ -47,30 +26,10 @@ export const calls: Readonly<Record<string, OptionsCall | PositionalCall | Skipp
   betaPrimeLaw: { args: [3], names: ['b'] },
   studentT: { options: { degreesOfFreedom: 3 } },
 
-  // Conic.
-  originInHull: { options: nd, integers: ['n', 'd'], counts: ['n'] },
-  originInHullLowerBound: {
-    options: { ...nd, depth: 0.3, generalPosition: true },
-    integers: ['n', 'd'],
-    counts: ['n'],
-    optional: ['generalPosition'],
-  },
-  surroundTime: { options: { d: 3 }, integers: ['d'] },
-  labelSeparability: {
-    options: { ...nd, intercept: true },
-    integers: ['n', 'd'],
-    optional: ['intercept'],
-  },
-  logisticFitExists: {
-    options: { ...nd, intercept: true },
-    integers: ['n', 'd'],
-    optional: ['intercept'],
-  },
-  dichotomyCount: {
-    options: { ...nd, intercept: true },
-    integers: ['n', 'd'],
-    optional: ['intercept'],
-  },
+  ...specialCalls,
+  ...conicCalls,
+  ...polytopeCalls,
+  ...dataCalls,
 
   // Plan.
   smallest: { skip: 'takes a function; test/plan/smallest.test.ts' },

@@ -1,0 +1,56 @@
+/** One valid call of every special function. */
+import type { OptionsCall, PositionalCall, Skipped } from './types.ts';
+
+/** The calls by name. */
+export const specialCalls: Readonly<Record<string, OptionsCall | PositionalCall | Skipped>> = {
+  log1mExp: { args: [-0.5], names: ['x'] },
+  log1pmx: { args: [0.5], names: ['x'] },
+  expm1mx: { args: [0.5], names: ['x'] },
+  logGamma: { args: [3.5], names: ['x'] },
+  logGamma1p: { args: [0.5], names: ['x'] },
+  stirlingRemainder: { args: [3], names: ['x'] },
+  erf: { args: [1], names: ['x'] },
+  erfc: { args: [1], names: ['x'] },
+  erfcx: { args: [1], names: ['x'] },
+  millsRatio: { args: [1], names: ['x'] },
+  normalCdf: { args: [1], names: ['x'] },
+  logNormalCdf: { args: [1], names: ['x'] },
+  logAddExp: { args: [-1, -2], names: ['a', 'b'] },
+  logSubExp: { args: [-1, -2], names: ['a', 'b'] },
+  logSumExp: { args: [[-1, -2]], names: ['values'], structured: ['values'] },
+  logGammaRatio: { args: [3, 0.5], names: ['x', 'a'] },
+  logFactorial: { args: [5], names: ['n'], integers: ['n'] },
+  logBeta: { args: [2, 3], names: ['a', 'b'] },
+  logBinomial: { args: [5, 2], names: ['n', 'k'] },
+  normalQuantile: { args: [0.3], names: ['p'] },
+  incompleteBeta: { args: [2, 3, 0.4, 0.6], names: ['a', 'b', 'x', 'y'], optional: ['y'] },
+  incompleteBetaInverse: { args: [2, 3, 0.4], names: ['a', 'b', 'p'] },
+  incompleteGamma: { args: [2, 3], names: ['a', 'x'] },
+  incompleteGammaInverse: { args: [2, 0.3], names: ['a', 'p'] },
+  chiSquaredCdf: { args: [2, 3], names: ['x', 'df'] },
+  chiSquaredQuantile: { args: [0.3, 3], names: ['p', 'df'] },
+  // k may be any integer: beyond 0 to n the answer is 0 or 1.
+  binomialCdf: {
+    args: [3, 10, 0.25, 0.75],
+    names: ['k', 'n', 'p', 'q'],
+    integers: ['n'],
+    optional: ['p', 'q'],
+  },
+  logBinomialPmf: {
+    args: [3, 10, 0.25, 0.75],
+    names: ['k', 'n', 'p', 'q'],
+    integers: ['n'],
+    optional: ['p', 'q'],
+  },
+  binomialQuantile: {
+    args: [0.3, 10, 0.25, 0.75],
+    names: ['prob', 'n', 'p', 'q'],
+    integers: ['n'],
+    optional: ['p', 'q'],
+  },
+  faddeeva: { args: [1, 2], names: ['re', 'im'] },
+  logStirling1: { args: [9, 3], names: ['n', 'k'], integers: ['n', 'k'] },
+  logStirlingB: { args: [9, 3], names: ['n', 'k'], integers: ['n', 'k'] },
+  logStirling1Row: { args: [9], names: ['n'], integers: ['n'] },
+  logStirlingBRow: { args: [9], names: ['n'], integers: ['n'] },
+};
