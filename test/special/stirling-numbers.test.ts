@@ -74,9 +74,9 @@ describe.each(kinds)('Stirling numbers, $name', ({ name, single, row, root }) =>
   });
 
   it('gives single values that agree with rows, from all three methods', () => {
-    for (const n of [61, 62, 100, 101, 333, 1000, 2000]) {
+    for (const n of [61, 62, 100, 101, 333, 1000, 2000, 5000]) {
       const logs = row(n);
-      for (let k = name === 'type B' ? 0 : 1; k < n; k++) {
+      for (let k = name === 'type B' ? 0 : 1; k < n; k += n < 5000 ? 1 : 7) {
         expect(relative(single(n, k), logs[k] as number)).toBeLessThan(1e-15);
       }
       expect(single(n, n)).toBe(0);
