@@ -159,7 +159,7 @@ def gamma_rows():
         for sign in (-1, 1):
             for factor in (0.999, 1.001):
                 gamma_point(a, at_deviate(a, sign * factor * float(mp.sqrt(0.9 * a))), "threshold")
-    for a in (200.0, 200.00001, 1000.0, 1e5):  # both sides of a = 200 and of 200 terms of the series
+    for a in (200.0, 200.00001, 1000.0, 1e5):  # both sides of a = 200 and of 125 terms of the series
         for z in (-12, -5, -2, -0.5, 0.5, 2, 12):
             gamma_point(a, at_deviate(a, z), "threshold")
     for a in (14.999999, 15.0):
