@@ -27,11 +27,12 @@ export function hullCases(kind: 'walk' | 'bridge', side: 'in' | 'out'): readonly
 }
 
 /** Rows of the joint hulls. */
-export const jointCases: readonly ProbabilityCase[] = extra.flatMap((row) => {
-  if (row.quantity !== 'joint' || row.value === null) return [];
-  const { value, log, complement } = row;
-  return [{ args: row.args, value, log, complement, region: 'several' }];
-});
+export const jointCases = (): readonly ProbabilityCase[] =>
+  extra.flatMap((row) => {
+    if (row.quantity !== 'joint' || row.value === null) return [];
+    const { value, log, complement } = row;
+    return [{ args: row.args, value, log, complement, region: 'several' }];
+  });
 
 const outside =
   (ask: typeof walkHull) =>
@@ -51,5 +52,5 @@ export const checks: readonly AccuracyCheck[] = [
     outside(bridgeHull),
     2e-14,
   ),
-  ...probabilityChecks('jointWalkHull', jointCases, jointWalkHull, 2e-14),
+  ...probabilityChecks('jointWalkHull', jointCases(), jointWalkHull, 2e-14),
 ];

@@ -206,7 +206,7 @@ describe('jointWalkHull', () => {
   });
 
   it('states error bounds that cover the true errors', () => {
-    expect(worstErrorShare(jointCases, jointWalkHull)).toBeLessThan(1);
+    expect(worstErrorShare(jointCases(), jointWalkHull)).toBeLessThan(1);
   });
 
   it.each([
