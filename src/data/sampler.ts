@@ -25,7 +25,7 @@ export interface SamplerOptions {
  *
  * @param law - the law of the points; `studentT` with at least 1/8 degree of freedom, `betaPrimeLaw`
  *   with b at least d/2 + 1/16, below which lengths leave the range of doubles
- * @param options - `d`: dimension, an integer >= 1; `seed`: an integer from 0 to 2^53 - 1
+ * @param options - `d`: dimension, an integer from 1 to 2^27; `seed`: an integer from 0 to 2^53 - 1
  * @returns a function that returns the next point, each time in a new array
  * @remarks Cost: about d normal numbers a point.
  * @throws A {@link DomainError} if an argument is out of range
@@ -43,7 +43,7 @@ export interface SamplerOptions {
 export function sampler(law: Law, options: SamplerOptions): () => Float64Array {
   checkOptions('sampler', options, ['d', 'seed']);
   const { d, seed } = options;
-  checkInteger('sampler', 'd', d, 1);
+  checkInteger('sampler', 'd', d, 1, MAX_NUMBERS);
   checkInteger('sampler', 'seed', seed, 0);
   const fill = pointFiller('sampler', law, d, seed);
   return () => {
@@ -52,6 +52,9 @@ export function sampler(law: Law, options: SamplerOptions): () => Float64Array {
     return point;
   };
 }
+
+/** Most coordinates drawn at once: they must fit into memory. */
+export const MAX_NUMBERS = 2 ** 27;
 
 /** Smallest shape of a gamma number whose square root in a denominator never leaves the doubles. */
 const LEAST_SHAPE = 1 / 16;

@@ -6,7 +6,7 @@ import type { Law } from '../law.ts';
 import { binomialInterval } from '../numeric/binomial-interval.ts';
 import { type LongWorkOptions, SLICE, startPace } from './long-work.ts';
 import { checkRow } from './points.ts';
-import { pointFiller } from './sampler.ts';
+import { MAX_NUMBERS, pointFiller } from './sampler.ts';
 
 /** An event: does it happen for these points and the next? */
 export type SimulatedEvent = (points: readonly Float64Array[], next: Float64Array) => boolean;
@@ -47,7 +47,7 @@ export interface Simulation {
  *
  * @param event - called with the n points and the next one; returns whether the event happened. The
  *   arrays are reused: what is to be kept must be copied
- * @param options - `n`: an integer >= 0; `d`: an integer >= 1; `law`, or `sampler`: a function that
+ * @param options - `n` >= 0 and `d` >= 1: integers with (n + 1) d at most 2^27; `law`, or `sampler`: a function that
  *   draws one point; `trials`: an integer >= 1; `seed`: an integer from 0 to 2^53 - 1; `onProgress`
  *   and `signal` as in {@link LongWorkOptions}
  * @returns the hits, their share and its 95 % confidence interval
@@ -82,8 +82,11 @@ export async function simulate(
   if (typeof event !== 'function') throw new DomainError(fn, 'event', 'a function', event);
   checkOptions(fn, options, OPTION_NAMES);
   const { n, d, law, sampler, trials, seed } = options;
-  checkInteger(fn, 'n', n, 0);
-  checkInteger(fn, 'd', d, 1);
+  checkInteger(fn, 'n', n, 0, MAX_NUMBERS);
+  checkInteger(fn, 'd', d, 1, MAX_NUMBERS);
+  if ((n + 1) * d > MAX_NUMBERS) {
+    throw new DomainError(fn, 'n', 'so small that (n + 1) d is at most 2^27', n);
+  }
   checkInteger(fn, 'trials', trials, 1);
   if (seed !== undefined || sampler === undefined) checkInteger(fn, 'seed', seed, 0);
   const draw = drawer(law, sampler, d, seed ?? 0);

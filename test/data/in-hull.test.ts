@@ -7,7 +7,7 @@ import { randomStream } from '../../src/numeric/random.ts';
 import { type LinearSolver, loadLinearSolver } from '../support/linear-program.ts';
 import { faultOf, hullCase, makeCloud } from './hull-cases.ts';
 
-// Ten of each cloud and query; `npm run fuzz` asks for 20,000.
+// Ten of each cloud and query; the long version runs with HULLGAUGE_CASES=20000.
 const CASES = Number(process.env['HULLGAUGE_CASES'] ?? 1080);
 
 const SQUARE = [

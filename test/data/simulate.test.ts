@@ -66,7 +66,7 @@ describe('sampler', () => {
 
   it('refuses laws and seeds out of range', () => {
     expect(() => sampler(gaussian(), { d: 0, seed: 1 })).toThrow(
-      'sampler: d must be an integer >= 1, got 0',
+      'sampler: d must be an integer from 1 to 134217728, got 0',
     );
     expect(() => sampler(gaussian(), { d: 1, seed: -1 })).toThrow('seed');
     expect(() => sampler(gaussian(), { d: 1 } as never)).toThrow(
@@ -191,6 +191,9 @@ describe('simulate', () => {
     );
     await expect(call(() => true, { ...good, sampler: () => [1, 2] })).rejects.toThrow(
       'law must be left out',
+    );
+    await expect(call(() => true, { ...good, n: 2 ** 20, d: 2 ** 20 })).rejects.toThrow(
+      'n must be so small',
     );
     await expect(call(() => true, { ...good, seeds: 1 })).rejects.toThrow('seeds');
     const draws = (point: unknown): object => ({ n: 1, d: 2, trials: 1, sampler: () => point });
