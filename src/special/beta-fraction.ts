@@ -10,7 +10,7 @@
  * from it fewer; beta-expansion.ts takes over where there would be many.
  */
 
-/** Never reached: at most 130 steps have been seen where the fraction is used. */
+/** Never reached: at most 98 steps have been seen where the fraction is used. */
 const MAX_STEPS = 10000;
 
 /** I_x(a, b) B(a, b) / (x^a y^b) for x at or below the mean, by the fraction. */

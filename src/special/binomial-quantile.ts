@@ -3,9 +3,8 @@
  *
  * Newton's iteration on the square root of minus the logarithm of the smaller tail, with the slope from
  * the probability of k, from a normal start with skewness; every step stays inside a bracket of integers
- * and moves at least by one. It takes 4 evaluations of a tail on average.
- * A tail is compared as a number where it is a normal one, so that exact ties are met: for p = 1/2
- * and n <= 53 all tails are exact.
+ * and moves at least by one. It takes 4 evaluations of a tail on average. A tail is compared as a number
+ * where it is a normal one, so that exact ties are met: for p = 1/2 and n <= 53 all tails are exact.
  */
 
 import type { Probability } from '../probability.ts';
@@ -70,7 +69,7 @@ const MAX_STEPS = 100;
  * The smallest k with P[X <= k] >= tail (`lower`), or with P[X > k] <= tail; tail <= 1/2 as a number
  * and as a logarithm.
  */
-export function binomialQuantileOfTail(
+function binomialQuantileOfTail(
   n: number,
   p: number,
   q: number,
@@ -91,19 +90,14 @@ export function binomialQuantileOfTail(
     const isLower = binomialTail(n, k, p, q, out);
     const value = out[0] as number;
     const log = out[1] as number;
-    // the tail that is asked for, the smaller one or its complement
+    // whether the kernel returned the tail that is asked for, or the other
     const given = isLower === lower;
     const givenLog = given ? log : Math.log1p(-value);
-    const excess =
-      given && value > SMALLEST_VALUE && tail > SMALLEST_VALUE
-        ? value / tail < 2 && tail / value < 2
-          ? (value - tail) / tail
-          : Math.log(value / tail)
-        : given
-          ? log - logTail
-          : 1 - value > tail
-            ? Math.max(givenLog - logTail, Number.MIN_VALUE)
-            : 0;
+    const excess = given
+      ? logExcess(value, log, tail, logTail)
+      : 1 - value > tail
+        ? Math.max(givenLog - logTail, Number.MIN_VALUE)
+        : 0;
     if (lower ? excess >= 0 : excess <= 0) above = k;
     else below = k;
     if (above - below <= 1) return above;
@@ -123,6 +117,13 @@ export function binomialQuantileOfTail(
     }
   }
   throw new Error(`binomialQuantile: n = ${n}, p = ${p}: between ${below} and ${above}`);
+}
+
+/** About log(value/tail), with the sign of value - tail wherever both are normal numbers. */
+function logExcess(value: number, log: number, tail: number, logTail: number): number {
+  if (!(value > SMALLEST_VALUE && tail > SMALLEST_VALUE)) return log - logTail;
+  const difference = (value - tail) / tail;
+  return Math.abs(difference) < 0.5 ? difference : Math.log(value / tail);
 }
 
 /** Change of the logarithm of a tail from k - 1 to k, in absolute value. */

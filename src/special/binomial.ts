@@ -17,6 +17,8 @@ import { fairBinomialTail } from './fair-binomial.ts';
 import { checkPair, incompleteBetaKernel } from './incomplete-beta.ts';
 import { storeZero, TAIL_SLOTS } from './tail-result.ts';
 
+const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
+
 /** Largest number of trials. */
 const MAX_TRIALS = 2 ** 53;
 
@@ -100,14 +102,13 @@ export function checkBinomial(fn: string, n: number, p: number, q: number): void
 }
 
 /** {@link binomialCdf} without checks. */
-export function binomialProbability(n: number, k: number, p: number, q: number): Probability {
-  const out = new Float64Array(TAIL_SLOTS);
-  const lower = binomialTail(n, k, p, q, out);
+function binomialProbability(n: number, k: number, p: number, q: number): Probability {
+  const lower = binomialTail(n, k, p, q, work);
   return probabilityFromTail(
-    out[0] as number,
-    out[1] as number,
+    work[0] as number,
+    work[1] as number,
     lower ? 'lower' : 'upper',
-    out[2] as number,
+    work[2] as number,
   );
 }
 
@@ -129,8 +130,6 @@ export function binomialTail(
   if (p === 0.5 && q === 0.5) return fairBinomialTail(n, k, out);
   return !incompleteBetaKernel(k + 1, n - k, p, q, out);
 }
-
-const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
 
 /** {@link logBinomialPmf} without checks; n first. */
 export function logBinomialPmfKernel(n: number, k: number, p: number, q: number): number {

@@ -4,9 +4,9 @@
  * Halley's iteration on F(u) = log I_x(a, b) - log(given tail) in the logit u = log(x/y): F is concave
  * and increasing, F' = f = x^a y^b / B(a, b) / I, F''/F' = a y - b x - f. An upper tail is a lower one
  * with (a, x) and (b, y) exchanged. Starting points: the power law of either end where it holds, else
- * the normal law of cube roots of gamma variables. The last step is applied to x and y as factors, so
- * the smaller of them keeps all its digits; out of the range of doubles the power law gives its
- * logarithm.
+ * the normal law of cube roots of gamma variables, or a gamma variable where one shape is below 1/2.
+ * Steps are applied to x and y as factors, so the smaller of them keeps all its digits; out of the range
+ * of doubles the power law gives its logarithm.
  */
 
 import { checkNumber } from '../domain.ts';
@@ -49,8 +49,9 @@ export interface BetaPoint {
  * @returns x and y = 1 - x, neither derived from the other where that loses digits, and both logarithms,
  *   which remain where x or y underflows; x = 0 for p = 0, y = 0 for p = 1
  * @remarks Cost: 2 evaluations of the incomplete beta function on average, at most 9 for shapes from 0.01
- *   to 1e12 and tails above e^-700, about 100 at the ends of the domain. Relative error of the smaller one of x and y below 1e-14 where a small change of it
- *   changes p as much, absolute error of log(x/y) below 2e-15 max(1, |log(x/y)|).
+ *   to 1e12 and tails above e^-700, up to 190 at the ends of the domain. Relative error of the smaller one
+ *   of x and y below 1e-14 where a small change of it changes p as much, absolute error of log(x/y) below
+ *   2e-15 max(1, |log(x/y)|).
  * @throws A {@link DomainError} if a shape is not a number from 1e-300 to 1e300, or p not a number from 0
  *   to 1 or a Probability
  *

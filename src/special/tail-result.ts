@@ -49,7 +49,7 @@ export function storeTail(high: number, low: number, factor: number, out: Float6
 }
 
 /** Stores a tail known as a number only. */
-export function storeValue(value: number, out: Float64Array): void {
+function storeValue(value: number, out: Float64Array): void {
   const log = Math.log(value);
   out[0] = value;
   out[1] = log;

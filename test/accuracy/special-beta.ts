@@ -9,6 +9,7 @@ import {
   incompleteBetaInverse,
   logBinomialPmf,
 } from 'hullgauge/special';
+import jstat from 'jstat';
 import { fairBinomialTail } from '../../src/special/fair-binomial.ts';
 import { TAIL_SLOTS } from '../../src/special/tail-result.ts';
 import type { AccuracyCase, AccuracyCheck } from '../support/accuracy.ts';
@@ -64,6 +65,8 @@ interface Family {
   readonly names: readonly string[];
   readonly of: (...args: never[]) => Probability;
   readonly upper: boolean;
+  /** The value by a general package, where it takes these arguments. */
+  readonly jstat?: (...args: never[]) => number;
 }
 
 const beta = (a: number, b: number, x: number): Probability => incompleteBeta(a, b, x);
@@ -71,8 +74,18 @@ const betaPair = (a: number, b: number, x: number, y: number): Probability =>
   incompleteBeta(a, b, x, y);
 const binomial = (n: number, k: number, p: number): Probability => binomialCdf(k, n, p);
 
+const jstatBeta = (a: number, b: number, x: number): number => jstat.ibeta(x, a, b);
+const jstatBinomial = (n: number, k: number, p: number): number => jstat.binomial.cdf(k, n, p);
+
 const families: readonly Family[] = [
-  { fn: 'ibeta', name: 'incompleteBeta', names: ['a', 'b', 'x'], of: beta, upper: false },
+  {
+    fn: 'ibeta',
+    name: 'incompleteBeta',
+    names: ['a', 'b', 'x'],
+    of: beta,
+    upper: false,
+    jstat: jstatBeta,
+  },
   { fn: 'ibetac', name: 'incompleteBeta', names: ['a', 'b', 'x'], of: beta, upper: true },
   {
     fn: 'ibetaXY',
@@ -88,39 +101,50 @@ const families: readonly Family[] = [
     of: betaPair,
     upper: true,
   },
-  { fn: 'binomCdf', name: 'binomialCdf', names: ['n', 'k', 'p'], of: binomial, upper: false },
+  {
+    fn: 'binomCdf',
+    name: 'binomialCdf',
+    names: ['n', 'k', 'p'],
+    of: binomial,
+    upper: false,
+    jstat: jstatBinomial,
+  },
   { fn: 'binomSf', name: 'binomialCdf', names: ['n', 'k', 'p'], of: binomial, upper: true },
 ];
 
-const tailChecks = families.flatMap(({ fn, name, names, of, upper }): readonly AccuracyCheck[] => {
-  const value = (...args: never[]): number => (upper ? of(...args).complement : of(...args).value);
-  const log = (...args: never[]): number => (upper ? of(...args).logComplement : of(...args).log);
-  const field = upper ? 'complement' : 'value';
-  const logField = upper ? 'logComplement' : 'log';
-  return [
-    {
-      name: `${name}.${field}`,
-      cases: cases(fn, names, normalValue),
-      compute: value,
-      measure: 'relative',
-      bound: 1.5e-15,
-    },
-    {
-      name: `${name}.${logField}, smaller tail`,
-      cases: cases(fn, names, smallLog),
-      compute: log,
-      measure: 'tail',
-      bound: 4e-16,
-    },
-    {
-      name: `${name}.${logField}, larger tail`,
-      cases: cases(fn, names, largeLog),
-      compute: log,
-      measure: 'relative',
-      bound: 1.5e-15,
-    },
-  ];
-});
+const tailChecks = families.flatMap(
+  ({ fn, name, names, of, upper, jstat: other }): readonly AccuracyCheck[] => {
+    const value = (...args: never[]): number =>
+      upper ? of(...args).complement : of(...args).value;
+    const log = (...args: never[]): number => (upper ? of(...args).logComplement : of(...args).log);
+    const field = upper ? 'complement' : 'value';
+    const logField = upper ? 'logComplement' : 'log';
+    return [
+      {
+        name: `${name}.${field}`,
+        cases: cases(fn, names, normalValue),
+        compute: value,
+        measure: 'relative',
+        bound: 1.5e-15,
+        ...(other === undefined ? {} : { jstat: other }),
+      },
+      {
+        name: `${name}.${logField}, smaller tail`,
+        cases: cases(fn, names, smallLog),
+        compute: log,
+        measure: 'tail',
+        bound: 4e-16,
+      },
+      {
+        name: `${name}.${logField}, larger tail`,
+        cases: cases(fn, names, largeLog),
+        compute: log,
+        measure: 'relative',
+        bound: 1.5e-15,
+      },
+    ];
+  },
+);
 
 const OWN_COLUMNS = { betaTail: 4, fairTail: 2, betaInverse: 3 } as const;
 

@@ -68,9 +68,7 @@ describe('binomialCdf', () => {
     );
   });
 
-  it('reproduces published five-place values', () => {
-    // Tables of the Binomial Probability Distribution (National Bureau of Standards, Applied Mathematics
-    // Series 6, 1950) give sums to seven places; these are its entries as sums from 0 to k to five places.
+  it('reproduces the five places of printed tables', () => {
     const rows: readonly [number, number, number, number][] = [
       [10, 3, 0.2, 0.87913],
       [10, 5, 0.5, 0.62305],

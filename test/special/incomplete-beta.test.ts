@@ -8,7 +8,14 @@ import { betaAmplitude, betaDelta, betaDeviance } from '../../src/special/beta-p
 import { incompleteBetaKernel } from '../../src/special/incomplete-beta.ts';
 import { TAIL_SLOTS } from '../../src/special/tail-result.ts';
 import { betaTailIntegral } from '../support/beta-quadrature.ts';
-import { exactDecimal } from '../support/reference.ts';
+import { difference, exactDecimal, readTable, relativeError } from '../support/reference.ts';
+
+interface BetaRow {
+  readonly fn: string;
+  readonly args: readonly string[];
+  readonly exact?: string;
+  readonly log?: string;
+}
 
 const Ruler = Decimal.clone({ precision: 80, defaults: true });
 const between = (min: number, max: number): fc.Arbitrary<number> =>
@@ -104,6 +111,24 @@ describe('incompleteBeta', () => {
       }),
       { numRuns: 600 },
     );
+  });
+
+  it('bounds its error, and not by far too much, in every region of the reference table', () => {
+    const out = new Float64Array(TAIL_SLOTS);
+    let closest = 0;
+    for (const { fn, args, log, exact } of readTable<BetaRow>('special-beta')) {
+      if (fn !== 'betaTail' || log === undefined) continue;
+      const [a, b, x, y] = args.slice(0, 4).map(Number) as [number, number, number, number];
+      const lower = incompleteBetaKernel(a, b, x, y, out);
+      expect(lower ? 'lower' : 'upper').toBe(args[4]);
+      const [value, computed, bound] = [...out] as [number, number, number];
+      const error = Math.abs(difference(computed, log));
+      expect(error).toBeLessThanOrEqual(bound);
+      if (exact !== undefined) expect(relativeError(value, exact)).toBeLessThanOrEqual(bound);
+      expect(bound).toBeLessThan(2e-15 + 2.5e-16 * Math.abs(computed));
+      closest = Math.max(closest, error / bound);
+    }
+    expect(closest).toBeGreaterThan(0.3);
   });
 
   it('is a polynomial for integer shapes, also where the tail is tiny', () => {
