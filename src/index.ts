@@ -7,7 +7,30 @@
  *
  * @packageDocumentation
  */
+export { type ApproxSeparabilityArgs, approxSeparability } from './conic/approx-separability.ts';
+export { type ApproxTotalOrderOptions, approxTotalOrder } from './conic/approx-total-order.ts';
+export {
+  type ChiBarSquaredOptions,
+  chiBarSquared,
+  type EBarSquaredOptions,
+  eBarSquared,
+  type OrderRestrictedLaw,
+} from './conic/chi-bar-squared.ts';
+export type { Cone } from './conic/cone.ts';
 export { type OriginInHullLowerBoundArgs, originInHullLowerBound } from './conic/depth-bound.ts';
+export {
+  reversedWeights,
+  type SimpleTreeOptions,
+  simpleTree,
+  totalOrder,
+} from './conic/level-probabilities.ts';
+export {
+  type LogisticSignalArgs,
+  type LogisticThresholdArgs,
+  logisticSignal,
+  logisticThreshold,
+} from './conic/logistic-threshold.ts';
+export { type OrthantWeightsOptions, orthantWeights } from './conic/orthant-weights.ts';
 export {
   dichotomyCount,
   type LabelArgs,

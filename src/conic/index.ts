@@ -5,12 +5,21 @@
  * @module
  */
 
+export { type ApproxSeparabilityArgs, approxSeparability } from './approx-separability.ts';
+export { type ApproxTotalOrderOptions, approxTotalOrder } from './approx-total-order.ts';
 export {
   type ArrangementArgs,
   type ArrangementFacesArgs,
   arrangementFaces,
   arrangementRegions,
 } from './arrangement.ts';
+export {
+  type ChiBarSquaredOptions,
+  chiBarSquared,
+  type EBarSquaredOptions,
+  eBarSquared,
+  type OrderRestrictedLaw,
+} from './chi-bar-squared.ts';
 export { type Cone, halfspace, orthant, ray, subspace } from './cone.ts';
 export { polarCone, productCone } from './cone-algebra.ts';
 export { circularCone, weylChamber } from './cone-families.ts';
@@ -22,6 +31,19 @@ export {
   linfDescentCone,
 } from './descent-cones.ts';
 export { coneMeetsSubspace, conesMeet } from './kinematics.ts';
+export {
+  reversedWeights,
+  type SimpleTreeOptions,
+  simpleTree,
+  totalOrder,
+} from './level-probabilities.ts';
+export {
+  type LogisticSignalArgs,
+  type LogisticThresholdArgs,
+  logisticSignal,
+  logisticThreshold,
+} from './logistic-threshold.ts';
+export { type OrthantWeightsOptions, orthantWeights } from './orthant-weights.ts';
 export { polyhedralCone } from './polyhedral-cone.ts';
 export {
   coverEfronCone,
