@@ -25,9 +25,8 @@
  * SIAM Review 56 (2014), doi 10.1137/130932132.
  */
 import { logBinomialKernel } from '../special/log-beta.ts';
-import { log1pmxKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel } from '../special/normal.ts';
-import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
+import { binomialConstant, binomialDeviance, HUGE_COUNT } from './binomial-weight.ts';
 import { contourKernel, logScaledTail } from './orthant-contour.ts';
 import { logGaussianFactor, type PeakKind, peakKernel } from './orthant-peak.ts';
 
@@ -35,8 +34,6 @@ export type { PeakKind } from './orthant-peak.ts';
 
 const LOG_TWO_PI = 1.8378770664093455;
 const EPSILON = 2 ** -52;
-/** From here on n is taken from its logarithm. */
-const HUGE_COUNT = 1e290;
 
 const CONTOUR: Float64Array = /* @__PURE__ */ new Float64Array(4);
 const PEAK: Float64Array = /* @__PURE__ */ new Float64Array(6);
@@ -183,11 +180,7 @@ export function logFaceTermKernel(
   return binomial + choices + ratio + square + external + internal + (Math.log(m) - LOG_TWO_PI);
 }
 
-/**
- * log of C(n, j) q^j (1-q)^(n-j) for 0 < j < n, where q = Q(y0) or 2 Q(y0), in the saddle-point form
- * that subtracts no large logarithms; n may be `Infinity` with only its logarithm known. Source:
- * Fast and accurate computation of binomial probabilities (2000).
- */
+/** log of C(n, j) q^j (1-q)^(n-j) for 0 < j < n, where q = Q(y0), or 2 Q(y0) if doubled. */
 function logBinomialWeight(
   n: number,
   logN: number,
@@ -202,19 +195,7 @@ function logBinomialWeight(
     ? logN + logNormalCdfKernel(-y0) + (doubled ? Math.LN2 : 0)
     : Math.log(n) + Math.log(q);
   const mean = huge ? Math.exp(logMean) : n * q;
-  const rest = n - j;
-  const excess = (mean - j) / j;
-  const below = excess < -0.5 ? j * (Math.log(j) - logMean) + mean - j : -j * log1pmxKernel(excess);
-  const above = huge ? 0 : -rest * log1pmxKernel((j - mean) / rest);
-  const meanError = huge ? Math.abs(logN) : 4;
-  error[0] = EPSILON * (8 + 3 * Math.abs(below) + 3 * above + meanError * Math.abs(mean - j));
-  return (
-    stirlingRemainderKernel(n) -
-    stirlingRemainderKernel(j) -
-    stirlingRemainderKernel(rest) -
-    below -
-    above -
-    0.5 * (LOG_TWO_PI + Math.log(j)) -
-    0.5 * (huge ? 0 : Math.log1p(-j / n))
-  );
+  const logError = EPSILON * (huge ? Math.abs(logN) : 4);
+  const deviance = binomialDeviance(n, j, mean, logMean, logError, error);
+  return binomialConstant(n, j) - deviance;
 }
