@@ -1,7 +1,15 @@
 import { defineConfig } from 'tsup';
 
 /** One entry per public subpath; package.json lists the same names under "exports". */
-export const rooms = ['special', 'conic', 'polytope', 'intrinsic', 'plan', 'data'] as const;
+export const rooms = [
+  'special',
+  'conic',
+  'polytope',
+  'intrinsic',
+  'plan',
+  'data',
+  'precise',
+] as const;
 
 export default defineConfig({
   entry: {

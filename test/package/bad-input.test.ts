@@ -44,6 +44,7 @@ async function refusedFor(call: () => unknown): Promise<string> {
 function badFor(call: OptionsCall | PositionalCall, name: string): readonly unknown[] {
   const bad: unknown[] = call.structured?.includes(name) ? [...BAD_PRIMITIVES] : [...BAD];
   if (!call.optional?.includes(name)) bad.push(undefined);
+  if (call.texts?.includes(name)) bad[bad.indexOf('3')] = 'three';
   if (call.integers?.includes(name)) {
     bad.push(3.5, -1);
     if (!('counts' in call && call.counts?.includes(name))) bad.push(2 ** 53);

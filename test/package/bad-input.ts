@@ -80,4 +80,24 @@ export const calls: Readonly<Record<string, OptionsCall | PositionalCall | Skipp
     structured: ['law', 'targets'],
   },
   logSpaced: { args: [1, 100, 3], names: ['from', 'to', 'perDecade'], integers: ['perDecade'] },
+
+  // Precise.
+  originInHullExact: { options: nd, integers: ['n', 'd'] },
+  dichotomyCountExact: {
+    options: { ...nd, intercept: true },
+    integers: ['n', 'd'],
+    optional: ['intercept'],
+  },
+  originInHullDecimal: { options: { ...nd, digits: 20 }, integers: ['n', 'd', 'digits'] },
+  hullVolumeRatioDecimal: {
+    options: { ...nd, b: 0, digits: 20 },
+    integers: ['n', 'd', 'digits'],
+    texts: ['b'],
+  },
+  incompleteBetaDecimal: {
+    args: [2, 3, 0.5, 20],
+    names: ['a', 'b', 'x', 'digits'],
+    integers: ['digits'],
+    texts: ['a', 'b', 'x'],
+  },
 };
