@@ -71,7 +71,7 @@ function classDistance(
     d,
   );
   const found = minimumNormPoint(atoms, 0);
-  const proven = found.lower > 2 * productError(d, Math.sqrt(most));
+  const proven = found.lower > productError(d, 2 * Math.sqrt(most));
   const apart = found.point.some(
     (x, j) => Math.abs(x) * (scales[j] as number) > (allowed[j] as number),
   );

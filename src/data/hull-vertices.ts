@@ -277,7 +277,7 @@ class VertexSearch {
   /** Adds the point farthest in a direction; returns it, or -1 when it was known. */
   private addFarthest(direction: Float64Array): number {
     const { rows, d, firsts } = this;
-    const error = 2 * productError(d, Math.sqrt(d));
+    const error = productError(d, Math.sqrt(d));
     let best = Number.NEGATIVE_INFINITY;
     const values = new Float64Array(firsts.length);
     firsts.forEach((index, k) => {

@@ -18,6 +18,9 @@ export interface Matrix {
 /** Largest size of a coordinate: squares and their sums stay far from overflow. */
 const MAX_SIZE = 1e150;
 
+/** Most columns where there are as many rows: the factorisations need their square in memory. */
+const MAX_RANK = 4096;
+
 /** Refuses anything but rows of one length that hold finite numbers; names the row and the column. */
 export function checkPoints(fn: string, points: unknown): Matrix {
   if (!Array.isArray(points) || points.length === 0) {
@@ -27,6 +30,9 @@ export function checkPoints(fn: string, points: unknown): Matrix {
   const d = rowLength(points[0]);
   if (!(d > 0)) {
     throw new DomainError(fn, 'points[0]', 'an array of at least one number', points[0]);
+  }
+  if (Math.min(n, d) > MAX_RANK) {
+    throw new DomainError(fn, 'points[0]', `an array of at most ${MAX_RANK} numbers`, points[0]);
   }
   const rows = new Float64Array(n * d);
   for (let i = 0; i < n; i++) copyRow(fn, i, points[i], d, rows, i * d, 'as points[0] has');

@@ -16,6 +16,7 @@ export function differenceAtoms(
   const opposite = new Float64Array(d);
   return {
     dimension: d,
+    size: uCount * vCount,
     lowest: (direction) => {
       for (let j = 0; j < d; j++) opposite[j] = -(direction[j] as number);
       const i = lowestRow(u, uCount, d, direction);

@@ -19,6 +19,8 @@
 export interface AtomSet {
   /** Dimension of the points. */
   readonly dimension: number;
+  /** Number of points. */
+  readonly size: number;
   /** Index of an atom with the smallest product with `direction`; those below `level` matter. */
   lowest(direction: Float64Array, level: number): number;
   /**
@@ -111,6 +113,8 @@ class ActiveSet {
   private readonly set: AtomSet;
   /** Length of a column. */
   private readonly m: number;
+  /** Most active atoms, which is also the length of a column of t. */
+  private readonly most: number;
   private k = 0;
   private readonly atoms: number[] = [];
   private readonly u: Float64Array;
@@ -124,12 +128,13 @@ class ActiveSet {
   constructor(set: AtomSet, m: number) {
     this.set = set;
     this.m = m;
+    this.most = Math.min(set.size, m);
     this.column = new Float64Array(m);
-    this.u = new Float64Array(m + 1);
-    this.s = new Float64Array(m + 1);
+    this.u = new Float64Array(this.most);
+    this.s = new Float64Array(this.most);
     this.r = new Float64Array(m);
-    this.q = new Float64Array(m * (m + 1));
-    this.t = new Float64Array((m + 1) * (m + 1));
+    this.q = new Float64Array(m * this.most);
+    this.t = new Float64Array(this.most * this.most);
   }
 
   /** Residual of e_0, orthogonal to the active columns to rounding; returns its norm. */
@@ -144,13 +149,13 @@ class ActiveSet {
 
   /** Subtracts from v its part in the span; adds the coefficients to column `into` of t. */
   private project(v: Float64Array, into: number): void {
-    const { q, t, m, k } = this;
+    const { q, t, m, k, most } = this;
     for (let c = 0; c < k; c++) {
       const start = c * m;
       let sum = 0;
       for (let i = 0; i < m; i++) sum += (q[start + i] as number) * (v[i] as number);
       for (let i = 0; i < m; i++) v[i] = (v[i] as number) - sum * (q[start + i] as number);
-      if (into >= 0) t[into * (m + 1) + c] = (t[into * (m + 1) + c] as number) + sum;
+      if (into >= 0) t[into * most + c] = (t[into * most + c] as number) + sum;
     }
   }
 
@@ -173,18 +178,18 @@ class ActiveSet {
 
   /** Appends the atom to the factorisation; false when its column depends on the others. */
   private append(atom: number): boolean {
-    const { column, q, t, m, k } = this;
-    if (k === m) return false;
+    const { column, q, t, m, k, most } = this;
+    if (k === most) return false;
     this.set.read(atom, column, 1);
     column[0] = 1;
     const size = Math.sqrt(squaredNorm(column, 0, m));
-    t.fill(0, k * (m + 1), (k + 1) * (m + 1));
+    t.fill(0, k * most, (k + 1) * most);
     this.project(column, k);
     this.project(column, k);
     const rest = Math.sqrt(squaredNorm(column, 0, m));
     if (!(rest > DEPENDENT * size)) return false;
     for (let i = 0; i < m; i++) q[k * m + i] = (column[i] as number) / rest;
-    t[k * (m + 1) + k] = rest;
+    t[k * most + k] = rest;
     this.atoms[k] = atom;
     this.u[k] = 0;
     this.k = k + 1;
@@ -234,18 +239,17 @@ class ActiveSet {
 
   /** Back substitution: s solves t s = (row 0 of q), the least-squares solution for e_0. */
   private solve(): void {
-    const { q, t, s, m, k } = this;
+    const { q, t, s, m, k, most } = this;
     for (let i = k - 1; i >= 0; i--) {
       let sum = q[i * m] as number;
-      for (let j = i + 1; j < k; j++) sum -= (t[j * (m + 1) + i] as number) * (s[j] as number);
-      s[i] = sum / (t[i * (m + 1) + i] as number);
+      for (let j = i + 1; j < k; j++) sum -= (t[j * most + i] as number) * (s[j] as number);
+      s[i] = sum / (t[i * most + i] as number);
     }
   }
 
   /** Drops the atom at position p and rotates the factorisation back into triangular form. */
   private remove(p: number): void {
-    const { q, t, u, m } = this;
-    const stride = m + 1;
+    const { q, t, u, m, most: stride } = this;
     const k = this.k - 1;
     this.atoms.splice(p, 1);
     u.copyWithin(p, p + 1, k + 1);

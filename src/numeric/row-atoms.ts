@@ -14,24 +14,25 @@ export function rowAtoms(rows: Float64Array, n: number, d: number): AtomSet {
   };
   const sample = 32 + 12 * d;
   if (n < 3 * sample) {
-    return { dimension: d, lowest: (direction) => lowestRow(rows, n, d, direction), read };
+    return { dimension: d, size: n, lowest: (direction) => lowestRow(rows, n, d, direction), read };
   }
   const batch = 16 + d;
   const capacity = sample + 20 * batch;
   const near = new Float64Array(capacity * d);
   const names = new Float64Array(capacity);
   const values = new Float64Array(n);
-  let size = 0;
+  let count = 0;
   const add = (index: number): void => {
-    if (size === capacity) return;
-    near.set(rows.subarray(index * d, (index + 1) * d), size * d);
-    names[size++] = index;
+    if (count === capacity) return;
+    near.set(rows.subarray(index * d, (index + 1) * d), count * d);
+    names[count++] = index;
   };
   for (let k = 0; k < sample; k++) add(Math.floor((k * n) / sample));
   return {
     dimension: d,
+    size: n,
     read,
-    lowestAtHand: (direction) => names[lowestRow(near, size, d, direction)] as number,
+    lowestAtHand: (direction) => names[lowestRow(near, count, d, direction)] as number,
     lowest: (direction, level) => {
       const lowest = lowestRow(rows, n, d, direction, values);
       // Those in the lower half of what matters join, up to a batch.
