@@ -188,6 +188,7 @@ export class BetaTail implements Tail {
       this.logTail = this.logTail0 + this.shift;
       this.tail = Math.exp(this.logTail);
     }
+    this.logJacobian = logJacobian;
     this.logHazard = Math.log(2 * (this.b + 1)) + this.logExcess + logJacobian;
     if (this.range === 'folded') this.fold();
   }
@@ -259,6 +260,9 @@ export class BetaTail implements Tail {
     }
     return fractionUsed;
   }
+
+  /** log of ds/du, u the variable of the range. */
+  logJacobian = 0;
 
   /** h - h0, h0 the height of the reference point: tanh(s0 + t) - tanh(s0) without cancellation. */
   get heightShift(): number {

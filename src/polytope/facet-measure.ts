@@ -89,12 +89,12 @@ function betaModel(beta: number, d: number): FacetModel {
         ? (b + 0.5) * tail.widthShift - tail.shift
         : tail.excessShift - 0.5 * tail.widthShift),
     logReferenceWeight: () => (d - 1) * (tail.logExcess - tail.logA - 0.5 * tail.logWidth),
-    logPlain: () => (a + 1) * tail.widthShift,
+    logPlain: () => (a + 1) * tail.widthShift + tail.logJacobian,
     logReferencePlain: () => (a + 1) * tail.logWidth,
     logPlainConstant: norm,
     centreAt: (height, gap) => tail.centreAtHeight(height, gap),
     height: () => tail.height,
-    logSlope: () => tail.logWidth,
+    logSlope: () => tail.logWidth + tail.logJacobian,
   };
 }
 
@@ -111,12 +111,12 @@ function betaPrimeModel(beta: number, d: number): FacetModel {
     logWeight: () =>
       (d - 1) * (tail.logTail > -4 ? (b - 0.5) * tail.widthShift - tail.shift : tail.excessShift),
     logReferenceWeight: () => (d - 1) * (tail.logExcess - tail.logA),
-    logPlain: () => (a - 0.5) * tail.widthShift,
+    logPlain: () => (a - 0.5) * tail.widthShift + tail.logJacobian,
     logReferencePlain: () => (a - 0.5) * tail.logWidth,
     logPlainConstant: norm,
     centreAt: (height) => tail.centreAtArgument(Math.asinh(height)),
     height: () => Math.sinh(tail.s),
-    logSlope: () => -0.5 * tail.logWidth,
+    logSlope: () => -0.5 * tail.logWidth + tail.logJacobian,
   };
 }
 
