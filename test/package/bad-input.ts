@@ -6,6 +6,7 @@ import { gaussian } from 'hullgauge';
 import { conicCalls } from './calls/conic.ts';
 import { dataCalls } from './calls/data.ts';
 import { polytopeCalls } from './calls/polytope.ts';
+import { preciseCalls } from './calls/precise.ts';
 import { specialCalls } from './calls/special.ts';
 import type { OptionsCall, PositionalCall, Skipped } from './calls/types.ts';
 
@@ -30,6 +31,7 @@ export const calls: Readonly<Record<string, OptionsCall | PositionalCall | Skipp
   ...conicCalls,
   ...polytopeCalls,
   ...dataCalls,
+  ...preciseCalls,
 
   // Conic: logistic fits with signal, order-restricted tests.
   logisticThreshold: {
@@ -80,24 +82,4 @@ export const calls: Readonly<Record<string, OptionsCall | PositionalCall | Skipp
     structured: ['law', 'targets'],
   },
   logSpaced: { args: [1, 100, 3], names: ['from', 'to', 'perDecade'], integers: ['perDecade'] },
-
-  // Precise.
-  originInHullExact: { options: nd, integers: ['n', 'd'] },
-  dichotomyCountExact: {
-    options: { ...nd, intercept: true },
-    integers: ['n', 'd'],
-    optional: ['intercept'],
-  },
-  originInHullDecimal: { options: { ...nd, digits: 20 }, integers: ['n', 'd', 'digits'] },
-  hullVolumeRatioDecimal: {
-    options: { ...nd, b: 0, digits: 20 },
-    integers: ['n', 'd', 'digits'],
-    texts: ['b'],
-  },
-  incompleteBetaDecimal: {
-    args: [2, 3, 0.5, 20],
-    names: ['a', 'b', 'x', 'digits'],
-    integers: ['digits'],
-    texts: ['a', 'b', 'x'],
-  },
 };

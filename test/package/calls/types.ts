@@ -11,6 +11,8 @@ export interface OptionsCall {
   readonly optional?: readonly string[];
   /** Options that take objects or arrays, to which only the primitives among the bad values apply. */
   readonly structured?: readonly string[];
+  /** Those that take decimal text, so that '3' is welcome. */
+  readonly texts?: readonly string[];
 }
 
 /** A valid call of a function with positional arguments. */
@@ -18,9 +20,13 @@ export interface PositionalCall {
   readonly args: readonly unknown[];
   /** Names of the arguments, in order. */
   readonly names: readonly string[];
+  /** Whether 2^53 itself is welcome. */
+  readonly takes2to53?: boolean;
   readonly integers?: readonly string[];
   readonly optional?: readonly string[];
   readonly structured?: readonly string[];
+  /** Those that take decimal text, so that '3' is welcome. */
+  readonly texts?: readonly string[];
 }
 
 /** A function that the walk leaves out, and why. */
