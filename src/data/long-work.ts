@@ -76,7 +76,7 @@ interface Host {
 
 /** Resolves after other tasks had their turn: a timer, a click, an abort. */
 function giveWay(): Promise<void> {
-  const host = globalThis as Host;
+  const host = globalThis as unknown as Host;
   return new Promise((resolve) => {
     if (host.setImmediate !== undefined) {
       host.setImmediate(resolve);

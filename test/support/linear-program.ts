@@ -65,7 +65,10 @@ export async function loadLinearSolver(): Promise<LinearSolver> {
               : code === status.unbounded || code === status.unboundedOrInfeasible
                 ? 'unbounded'
                 : 'other';
-        const x = name === 'optimal' ? Float64Array.from(model.getSolution().colValue) : new Float64Array(0);
+        const x =
+          name === 'optimal'
+            ? Float64Array.from(model.getSolution().colValue)
+            : new Float64Array(0);
         return { status: name, objective: model.getObjectiveValue(), x };
       },
     );
