@@ -7,7 +7,7 @@
 import { checkInteger, checkOptions } from '../domain.ts';
 import { ConeProjection } from '../numeric/nonnegative-least-squares.ts';
 import { randomStream } from '../numeric/random.ts';
-import { coordinates, orthonormalBasis, unit } from '../numeric/solid-angle.ts';
+import { coordinates, orthonormalBasis, unit } from '../numeric/small-vectors.ts';
 import { type Cone, makeCone, subspaceKernel } from './cone.ts';
 import { checkGenerators } from './polyhedral-cone.ts';
 

@@ -6,7 +6,7 @@
  * occur, so that every engine finds the same active set. Source: Solving Least Squares Problems,
  * Prentice-Hall (1974), chapter 23.
  */
-import { dot, type Vector } from './solid-angle.ts';
+import { dot, type Vector } from './small-vectors.ts';
 
 /** Squared sine below which a generator counts as dependent on the active ones. */
 const DEPENDENT = 1e-13;

@@ -11,92 +11,18 @@
  * That loses relative accuracy in narrow cones, where the cone is integrated over its simplex instead.
  */
 import { integrateSmooth } from './gauss-legendre.ts';
-
-/** A vector; all vectors of one call have the same length. */
-export type Vector = readonly number[];
+import {
+  coordinates,
+  DEPENDENT,
+  dot,
+  orthogonal,
+  orthonormalBasis,
+  removeAll,
+  unit,
+  type Vector,
+} from './small-vectors.ts';
 
 const TWO_PI = 2 * Math.PI;
-
-export function dot(a: Vector, b: Vector): number {
-  let sum = 0;
-  for (let i = 0; i < a.length; i++) sum += (a[i] as number) * (b[i] as number);
-  return sum;
-}
-
-/** The vector scaled to unit length. */
-export function unit(a: Vector): number[] {
-  let largest = 0;
-  for (const x of a) largest = Math.max(largest, Math.abs(x));
-  if (largest === 0) return [...a];
-  const scaled = a.map((x) => x / largest);
-  const norm = Math.sqrt(dot(scaled, scaled));
-  return scaled.map((x) => x / norm);
-}
-
-/** Determinant of the columns i, j, k of three rows. */
-function minor(a: Vector, b: Vector, c: Vector, i: number, j: number, k: number): number {
-  const [a0, a1, a2] = [a[i] as number, a[j] as number, a[k] as number];
-  const [b0, b1, b2] = [b[i] as number, b[j] as number, b[k] as number];
-  const [c0, c1, c2] = [c[i] as number, c[j] as number, c[k] as number];
-  return a0 * (b1 * c2 - b2 * c1) - a1 * (b0 * c2 - b2 * c0) + a2 * (b0 * c1 - b1 * c0);
-}
-
-/**
- * The vector orthogonal to n - 1 vectors of length n <= 4, as long as the volume that they span.
- */
-export function orthogonal(rows: readonly Vector[], n: number): number[] {
-  const [a = [], b = [], c = []] = rows;
-  if (n === 1) return [1];
-  if (n === 2) return [a[1] as number, -(a[0] as number)];
-  if (n === 3) {
-    const axis = (i: number, j: number): number =>
-      (a[i] as number) * (b[j] as number) - (a[j] as number) * (b[i] as number);
-    return [axis(1, 2), axis(2, 0), axis(0, 1)];
-  }
-  return [
-    minor(a, b, c, 1, 2, 3),
-    -minor(a, b, c, 0, 2, 3),
-    minor(a, b, c, 0, 1, 3),
-    -minor(a, b, c, 0, 1, 2),
-  ];
-}
-
-/** An orthonormal basis of the span, by pivoted Gram-Schmidt; directions shorter than `tolerance` are dropped. */
-export function orthonormalBasis(vectors: readonly Vector[], tolerance: number): number[][] {
-  const basis: number[][] = [];
-  let rest: number[][] = vectors.map((vector) => [...vector]);
-  for (;;) {
-    let longest: number[] | undefined;
-    let square = tolerance * tolerance;
-    for (const vector of rest) {
-      const size = dot(vector, vector);
-      if (size > square) {
-        square = size;
-        longest = vector;
-      }
-    }
-    if (longest === undefined) return basis;
-    // orthogonalised twice: the first pass may cancel
-    const direction = unit(removeAll(longest, basis));
-    basis.push(direction);
-    rest = rest.map((vector) => removeAll(vector, [direction]));
-  }
-}
-
-/** What is left of a vector outside the span of an orthonormal basis. */
-export function removeAll(vector: Vector, basis: readonly Vector[]): number[] {
-  let result = [...vector];
-  for (const direction of basis) {
-    const product = dot(result, direction);
-    result = result.map((x, i) => x - product * (direction[i] as number));
-  }
-  return result;
-}
-
-/** Coordinates in an orthonormal basis. */
-export function coordinates(vector: Vector, basis: readonly Vector[]): number[] {
-  return basis.map((direction) => dot(vector, direction));
-}
 
 /** Angle between two unit vectors over the full turn; accurate also near 0 and near a half. */
 export function planeAngle(a: Vector, b: Vector): number {
@@ -114,15 +40,35 @@ export function planeAngle(a: Vector, b: Vector): number {
 /** Solid angle of a pointed cone spanned by three or more extreme rays in a space of dimension 3. */
 export function spaceAngle(rays: readonly Vector[]): number {
   const ordered = inCyclicOrder(rays);
-  const a = ordered[0] as number[];
+  const opposite = ordered.some((a) => ordered.some((b) => dot(a, b) < NEARLY_OPPOSITE));
+  return (opposite ? angleByExcess(ordered) : angleByFan(ordered)) / (4 * Math.PI);
+}
+
+/** Rays further apart than this cosine spoil the triangles that contain both. */
+const NEARLY_OPPOSITE = -0.9;
+
+function angleByFan(ordered: readonly Vector[]): number {
+  const a = ordered[0] as Vector;
   let sum = 0;
   for (let i = 1; i + 1 < ordered.length; i++) {
-    const b = ordered[i] as number[];
-    const c = ordered[i + 1] as number[];
+    const b = ordered[i] as Vector;
+    const c = ordered[i + 1] as Vector;
     const volume = Math.abs(dot(a, orthogonal([b, c], 3)));
     sum += 2 * Math.atan2(volume, 1 + dot(a, b) + dot(a, c) + dot(b, c));
   }
-  return sum / (4 * Math.PI);
+  return sum;
+}
+
+/** The full turn less the exterior angles, those between the normals of neighbouring sides. */
+function angleByExcess(ordered: readonly Vector[]): number {
+  const sides = ordered.map((ray, i) =>
+    unit(orthogonal([ray, ordered[(i + 1) % ordered.length] as Vector], 3)),
+  );
+  let turns = 1;
+  sides.forEach((side, i) => {
+    turns -= planeAngle(side, sides[(i + 1) % sides.length] as Vector);
+  });
+  return Math.max(turns, 0) * TWO_PI;
 }
 
 /** The extreme rays of a pointed three-dimensional cone, turning once around its axis, in R^3. */
@@ -278,8 +224,6 @@ const PAIRS: readonly (readonly [number, number, number, number])[] = [
 ];
 const MOST_PANELS = 48;
 const EPSILON = 2 ** -52;
-/** Parts shorter than this share of a unit vector count as dependent. */
-export const DEPENDENT = 1e-10;
 
 /** |det A|/(2 pi^2) times the integral of |A u|^-4 over the simplex u >= 0, sum u = 1. */
 function simplexIntegral(rays: readonly Vector[]): number {
