@@ -18,6 +18,7 @@ export {
 } from './conic/chi-bar-squared.ts';
 export type { Cone } from './conic/cone.ts';
 export { type OriginInHullLowerBoundArgs, originInHullLowerBound } from './conic/depth-bound.ts';
+export { coneMeetsSubspace, conesMeet } from './conic/kinematics.ts';
 export {
   reversedWeights,
   type SimpleTreeOptions,
@@ -32,12 +33,26 @@ export {
 } from './conic/logistic-threshold.ts';
 export { type OrthantWeightsOptions, orthantWeights } from './conic/orthant-weights.ts';
 export {
+  type RecoveryArgs,
+  type RecoveryBoundsArgs,
+  recoveryBounds,
+  recoverySuccess,
+} from './conic/recovery.ts';
+export {
   dichotomyCount,
   type LabelArgs,
   labelSeparability,
   logisticFitExists,
 } from './conic/separability.ts';
 export { surroundTime } from './conic/surround-time.ts';
+export {
+  bridgeHull,
+  type JointWalkHullArgs,
+  jointWalkHull,
+  type WalkHullArgs,
+  walkHull,
+} from './conic/walks.ts';
+export { type WeakThresholdArgs, weakThreshold } from './conic/weak-threshold.ts';
 export { type OriginInHullArgs, originInHull } from './conic/wendel.ts';
 export type { Count } from './count.ts';
 export {
