@@ -63,7 +63,7 @@ export interface ArrangementFacesArgs extends ArrangementArgs {
  * arrangementRegions({ n: 3, d: 2 }).value; // => 7
  * arrangementRegions({ n: 3, d: 2, bounded: true }).value; // => 1
  * arrangementRegions({ n: 10, d: 3, central: true }).value; // => 92
- * `${arrangementRegions({ n: 1e6, d: 100 })}`; // => '1.06635067446e+442'
+ * `${arrangementRegions({ n: 1e6, d: 100 })}`; // => '1.0663258859e+442'
  * ```
  */
 export function arrangementRegions(args: ArrangementArgs): LogNumber {

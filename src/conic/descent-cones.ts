@@ -158,7 +158,7 @@ const STEPS_PER_DEVIATION = 8;
  * import { l1StatisticalDimension } from 'hullgauge/conic';
  * const dimension = l1StatisticalDimension({ n: 20, sparsity: 3 });
  * dimension.exact.toPrecision(10); // => '7.956702732'
- * dimension.upper.toPrecision(10); // => '8.516214896'
+ * dimension.upper.toPrecision(10); // => '8.558240833'
  * ```
  */
 export function l1StatisticalDimension(options: { n: number; sparsity: number }): {

@@ -144,7 +144,7 @@ export interface RecoveryBoundsArgs {
  * ```ts
  * import { recoveryBounds } from 'hullgauge';
  * const cone = { ambient: 1000, statisticalDimension: 200 };
- * recoveryBounds({ cone, measurements: 300 }).lower.complement.toPrecision(6); // => '2.02040e-5'
+ * recoveryBounds({ cone, measurements: 300 }).lower.complement.toPrecision(6); // => '0.0000200002'
  * recoveryBounds({ cone, measurements: 300 }).upper.value; // => 1
  * ```
  */

@@ -118,8 +118,8 @@ export interface WeakThresholdArgs {
  * ```ts
  * import { weakThreshold } from 'hullgauge/conic';
  * const limit = weakThreshold({ undersampling: 0.5, model: 'l1' });
- * limit.perMeasurement.toPrecision(10); // => '0.3856899780'
- * limit.perVariable.toPrecision(10); // => '0.1928449890'
+ * limit.perMeasurement.toPrecision(10); // => '0.3856896662'
+ * limit.perVariable.toPrecision(10); // => '0.1928448331'
  * ```
  */
 export function weakThreshold(args: WeakThresholdArgs): {
