@@ -33,7 +33,7 @@ export function resolveCount(
   }
   if (isLogNumber(value)) {
     const log = Number(value.log);
-    if (log > EXACT_LOG && log < Number.POSITIVE_INFINITY) return { n: Math.exp(log), log };
+    if (log > EXACT_LOG && log < Infinity) return { n: Math.exp(log), log };
     const n = Math.round(Math.exp(log));
     if (n >= min && n <= 2 ** 53) return { n, log: Math.log(n) };
   }

@@ -39,8 +39,8 @@ const LN10_LOW = 4.4486172146526799e-7;
 
 /** The positive number with natural logarithm `log`, in decimal, far beyond the range of doubles. */
 export function formatExponential(log: number, logError = 0): string {
-  if (log === Number.NEGATIVE_INFINITY) return '0';
-  if (log === Number.POSITIVE_INFINITY) return 'Infinity';
+  if (log === -Infinity) return '0';
+  if (log === Infinity) return 'Infinity';
   const error = logError + Math.abs(log) * 1.2e-16;
   if (Math.abs(log) < 700) return formatNumber(Math.exp(log), error);
   // Beyond 1e15 not even the exponent's last digit is known.
@@ -68,7 +68,7 @@ function displayTable(text: string, rows: readonly DisplayRow[]): DisplayBundle 
   return {
     'text/plain': text,
     'text/markdown': `| | ${text} |\n| --- | --- |\n${markdown}`,
-    'text/html': `<table><caption>${text}</caption><tbody>${html}</tbody></table>`,
+    'text/html': `<table><caption>${text}</caption>${html}</table>`,
   };
 }
 
@@ -81,7 +81,7 @@ abstract class ShownResult {
   /** Text for a string hint; any arithmetic or comparison throws, so that no tail is lost by accident. */
   [Symbol.toPrimitive](hint: string): string {
     if (hint === 'string') return this.toString();
-    throw new TypeError('not a plain number: read a field such as .value, .complement or .log');
+    throw new TypeError('not a plain number: read .value or .log');
   }
 }
 

@@ -53,12 +53,10 @@ function describe(value: unknown): string {
   if (typeof value === 'string') return JSON.stringify(value);
   if (typeof value === 'bigint') return `${value}n`;
   if (typeof value === 'function') return 'a function';
+  if (typeof value !== 'object' || value === null) return String(value);
   if (Array.isArray(value)) return `an array of length ${value.length}`;
-  if (typeof value === 'object' && value !== null) {
-    const kind: unknown = (value as { kind?: unknown }).kind;
-    return typeof kind === 'string' ? `an object of kind ${JSON.stringify(kind)}` : 'an object';
-  }
-  return String(value);
+  const { kind } = value as { kind?: unknown };
+  return typeof kind === 'string' ? `an object of kind ${describe(kind)}` : 'an object';
 }
 
 /** Largest integer argument where no count beyond exact doubles is meant: $2^{53} - 1$. */
@@ -74,7 +72,7 @@ export function checkInteger(
 ): asserts value is number {
   if (typeof value === 'number' && Number.isInteger(value) && value >= min && value <= max) return;
   const requirement =
-    max < MAX_INTEGER
+    max !== MAX_INTEGER
       ? `an integer from ${min} to ${max}`
       : typeof value === 'number' && value > max
         ? `an integer from ${min} to 2^53 - 1`
@@ -87,8 +85,8 @@ export function checkNumber(
   fn: string,
   parameter: string,
   value: unknown,
-  min: number = Number.NEGATIVE_INFINITY,
-  max: number = Number.POSITIVE_INFINITY,
+  min: number = -Infinity,
+  max: number = Infinity,
 ): asserts value is number {
   if (typeof value === 'number' && value >= min && value <= max) return;
   throw new DomainError(fn, parameter, intervalText(min, max), value);
@@ -103,11 +101,10 @@ export function checkFinite(
   max: number = Number.MAX_VALUE,
 ): asserts value is number {
   if (typeof value === 'number' && value >= min && value <= max) return;
-  const lower = min === -Number.MAX_VALUE ? Number.NEGATIVE_INFINITY : min;
-  const upper = max === Number.MAX_VALUE ? Number.POSITIVE_INFINITY : max;
+  const lower = min === -Number.MAX_VALUE ? -Infinity : min;
+  const upper = max === Number.MAX_VALUE ? Infinity : max;
   const interval = intervalText(lower, upper);
-  const requirement =
-    upper < Number.POSITIVE_INFINITY ? interval : interval.replace('a ', 'a finite ');
+  const requirement = upper < Infinity ? interval : interval.replace('a ', 'a finite ');
   throw new DomainError(fn, parameter, requirement, value);
 }
 
@@ -180,8 +177,8 @@ export function checkOptions(
 }
 
 function intervalText(min: number, max: number): string {
-  const lower = min > Number.NEGATIVE_INFINITY;
-  const upper = max < Number.POSITIVE_INFINITY;
+  const lower = min > -Infinity;
+  const upper = max < Infinity;
   if (lower && upper) return `a number from ${min} to ${max}`;
   if (lower) return `a number >= ${min}`;
   if (upper) return `a number <= ${max}`;

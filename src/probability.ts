@@ -100,26 +100,14 @@ export class Probability extends Displayable {
    */
   static of(fields: ProbabilityFields): Probability {
     const fn = 'Probability.of';
-    if (typeof fields !== 'object' || fields === null) {
-      throw new DomainError(fn, 'fields', 'an object with the four numbers', fields);
-    }
-    const { value, complement, log, logComplement, logError = 0 } = fields;
-    checkNumber(fn, 'value', value, 0, 1);
-    checkNumber(fn, 'complement', complement, 0, 1);
-    checkNumber(fn, 'log', log, Number.NEGATIVE_INFINITY, 0);
-    checkNumber(fn, 'logComplement', logComplement, Number.NEGATIVE_INFINITY, 0);
-    checkNumber(fn, 'logError', logError, 0);
-    const slack = 1e-9;
-    if (Math.abs(value + complement - 1) > slack) {
+    // Anything but an object is refused for the value that it lacks.
+    const { value, complement, log, logComplement, logError = 0 } = fields ?? {};
+    if (Math.abs(value + complement - 1) > SLACK) {
       throw new DomainError(fn, 'complement', `1 - value (value is ${value})`, complement);
     }
-    if (Math.abs(Math.exp(log) - value) > slack * value + Number.MIN_VALUE) {
-      throw new DomainError(fn, 'log', `the logarithm of value (value is ${value})`, log);
-    }
-    if (Math.abs(Math.exp(logComplement) - complement) > slack * complement + Number.MIN_VALUE) {
-      const requirement = `the logarithm of complement (complement is ${complement})`;
-      throw new DomainError(fn, 'logComplement', requirement, logComplement);
-    }
+    checkTail(fn, 'value', value, 'log', log);
+    checkTail(fn, 'complement', complement, 'logComplement', logComplement);
+    checkNumber(fn, 'logError', logError, 0);
     return new Probability(value, complement, log, logComplement, logError);
   }
 
@@ -139,15 +127,7 @@ export class Probability extends Displayable {
    * ```
    */
   static fromLog(log: number, logError = 0): Probability {
-    checkNumber('Probability.fromLog', 'log', log, Number.NEGATIVE_INFINITY, 0);
-    checkNumber('Probability.fromLog', 'logError', logError, 0);
-    return new Probability(
-      Math.exp(log),
-      -Math.expm1(log) || 0,
-      log || 0,
-      logOfComplement(log),
-      logError,
-    );
+    return checkedLog('Probability.fromLog', 'log', log, logError);
   }
 
   /**
@@ -160,9 +140,7 @@ export class Probability extends Displayable {
    */
   static fromLogComplement(logComplement: number, logError = 0): Probability {
     const fn = 'Probability.fromLogComplement';
-    checkNumber(fn, 'logComplement', logComplement, Number.NEGATIVE_INFINITY, 0);
-    checkNumber(fn, 'logError', logError, 0);
-    return complementOf(Probability.fromLog(logComplement, logError));
+    return complementOf(checkedLog(fn, 'logComplement', logComplement, logError));
   }
 
   /**
@@ -174,9 +152,7 @@ export class Probability extends Displayable {
    * @throws A {@link DomainError} if `value` is outside [0, 1] or NaN, or `logError` negative or NaN
    */
   static fromValue(value: number, logError = 0): Probability {
-    checkNumber('Probability.fromValue', 'value', value, 0, 1);
-    checkNumber('Probability.fromValue', 'logError', logError, 0);
-    return new Probability(value, 1 - value, Math.log(value), Math.log1p(-value) || 0, logError);
+    return checkedValue('Probability.fromValue', 'value', value, logError);
   }
 
   /**
@@ -195,8 +171,8 @@ export class Probability extends Displayable {
    * ```
    */
   static fromComplement(complement: number, logError = 0): Probability {
-    checkNumber('Probability.fromComplement', 'complement', complement, 0, 1);
-    return complementOf(Probability.fromValue(complement, logError));
+    const fn = 'Probability.fromComplement';
+    return complementOf(checkedValue(fn, 'complement', complement, logError));
   }
 
   /**
@@ -218,8 +194,7 @@ export class Probability extends Displayable {
       throw new DomainError('Probability.from', 'plain', "an object of kind 'probability'", plain);
     }
     return Probability.of({
-      value: plain.value,
-      complement: plain.complement,
+      ...plain,
       log: Number(plain.log),
       logComplement: Number(plain.logComplement),
       logError: Number(plain.logError),
@@ -229,7 +204,7 @@ export class Probability extends Displayable {
   /** Up to twelve digits; a probability within a millionth of 1 is written as `1 - complement`. */
   override toString(): string {
     if (this.complement < 1e-6) {
-      if (this.logComplement === Number.NEGATIVE_INFINITY && this.logError === 0) return '1';
+      if (this.logComplement === -Infinity && this.logError === 0) return '1';
       return `1 - ${tailText(this.complement, this.logComplement, this.logError)}`;
     }
     return this.value <= 0.5
@@ -240,9 +215,7 @@ export class Probability extends Displayable {
   /** The stored numbers, with `-Infinity` as a string. */
   toJSON(): PlainProbability {
     return {
-      kind: this.kind,
-      value: this.value,
-      complement: this.complement,
+      ...this,
       log: toPlainNumber(this.log),
       logComplement: toPlainNumber(this.logComplement),
       logError: toPlainNumber(this.logError),
@@ -258,9 +231,33 @@ export class Probability extends Displayable {
         tailText(this.complement, this.logComplement, this.value > 0.5 ? this.logError : 0),
       ],
       ['log', formatNumber(this.log)],
-      ['log of complement', formatNumber(this.logComplement)],
-      ['error of the smaller log', formatNumber(this.logError, 1e-2)],
+      ['logComplement', formatNumber(this.logComplement)],
+      ['logError', formatNumber(this.logError, 1e-2)],
     ];
+  }
+}
+
+function checkedLog(fn: string, name: string, log: number, logError: number): Probability {
+  checkNumber(fn, name, log, undefined, 0);
+  checkNumber(fn, 'logError', logError, 0);
+  const complement = -Math.expm1(log) || 0;
+  return new Probability(Math.exp(log), complement, log || 0, logOfComplement(log), logError);
+}
+
+function checkedValue(fn: string, name: string, value: number, logError: number): Probability {
+  checkNumber(fn, name, value, 0, 1);
+  checkNumber(fn, 'logError', logError, 0);
+  return new Probability(value, 1 - value, Math.log(value), Math.log1p(-value) || 0, logError);
+}
+
+/** How far the numbers of one probability may contradict each other. */
+const SLACK = 1e-9;
+
+function checkTail(fn: string, name: string, value: number, logName: string, log: number): void {
+  checkNumber(fn, name, value, 0, 1);
+  checkNumber(fn, logName, log, undefined, 0);
+  if (Math.abs(Math.exp(log) - value) > SLACK * value + Number.MIN_VALUE) {
+    throw new DomainError(fn, logName, `the logarithm of ${name} (which is ${value})`, log);
   }
 }
 

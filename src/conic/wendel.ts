@@ -11,8 +11,7 @@ import { type Count, resolveCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
 import { exactLogError } from '../numeric/target.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
-import { fairBinomialTail } from '../special/fair-binomial.ts';
-import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
+import { fairTailOfPoints } from '../special/fair-binomial.ts';
 
 /** Arguments of {@link originInHull}. */
 export interface OriginInHullArgs {
@@ -85,27 +84,19 @@ export function wendel(n: number, d: number): Probability {
  */
 export function wendelTail(n: number, d: number, out: Float64Array): boolean {
   out[0] = 0;
-  out[1] = Number.NEGATIVE_INFINITY;
+  out[1] = -Infinity;
   out[2] = 0;
   if (n === 0) return true;
   // The only point of R^0 is the target.
   if (d === 0) return false;
   if (n <= d) return true;
-  if (n === Number.POSITIVE_INFINITY) {
+  if (n === Infinity) {
     // More points than doubles can count: the tail is below e^(-1e308), and that is all that is known.
-    out[2] = Number.POSITIVE_INFINITY;
+    out[2] = Infinity;
     return false;
   }
-  if (n === 2 * d) {
-    out[0] = 0.5;
-    out[1] = -Math.LN2;
-    out[2] = exactLogError(Math.LN2);
-    return true;
-  }
-  // n - 1 is no double above 2^53, but n - d and d are.
-  if (n > 2 ** 53) return incompleteBetaKernel(d, n - d, 0.5, 0.5, out);
-  const insideIsSmall = !fairBinomialTail(n - 1, d - 1, out);
-  // Multiples of 2^-53, and single powers of 2, are exact doubles.
-  if (n <= 54 || n === d + 1 || d === 1) out[2] = exactLogError(out[1]);
+  const insideIsSmall = !fairTailOfPoints(n, d, out);
+  // Multiples of 2^-53 and single powers of 2 are exact doubles.
+  if (n <= 54 || n === d + 1 || d === 1 || n === 2 * d) out[2] = exactLogError(out[1]);
   return insideIsSmall;
 }

@@ -66,18 +66,22 @@ export function isCertain(p: Probability, target: Probability): boolean {
 }
 
 /**
- * Whether the smaller tail's value is exact. A kernel says so by an error bound no larger than the
- * rounding of the logarithm itself; every inexact value has at least one rounding more.
+ * Whether the smaller tail's value is exact: it states no error at all, or precisely the bound of
+ * {@link exactLogError}.
  */
 function isExact(p: Probability): boolean {
   const lower = p.log <= p.logComplement;
   const value = lower ? p.value : p.complement;
-  return value >= 2 ** -1022 && p.logError <= exactLogError(lower ? p.log : p.logComplement);
+  if (p.logError === 0) return true;
+  return value >= 2 ** -1022 && p.logError === exactLogError(lower ? p.log : p.logComplement);
 }
 
-/** The error bound to state for the logarithm of a tail whose value is exact. */
+/**
+ * The error bound to state for the logarithm of a tail whose value is exact: the rounding of the
+ * logarithm, with a factor that no other bound has, so that it can be recognised.
+ */
 export function exactLogError(log: number): number {
-  return Math.abs(log) * ROUNDING;
+  return Math.abs(log) * (ROUNDING + 2 ** -75);
 }
 
 /** Whether two tails are both normal doubles, so that values are finer than logarithms. */

@@ -17,7 +17,7 @@
 import { productError, quotientError, sumError } from './double-double.ts';
 import { logGamma1pKernel } from './log-gamma.ts';
 import { preciseLog } from './precise-log.ts';
-import { stirlingRemainderKernel } from './stirling-remainder.ts';
+import { largeStirlingRemainder, stirlingRemainderKernel } from './stirling-remainder.ts';
 
 const TWO_PI = 6.283185307179586476925;
 
@@ -111,8 +111,8 @@ export function addDeviance(
   const total = sum + rest;
   out[0] = total;
   out[1] = sum - total + rest;
-  if (!(sum > Number.NEGATIVE_INFINITY)) {
-    out[0] = Number.NEGATIVE_INFINITY;
+  if (!(sum > -Infinity)) {
+    out[0] = -Infinity;
     out[1] = 0;
   }
 }
@@ -143,9 +143,18 @@ export function betaDeviance(
 export function betaAmplitude(a: number, b: number, out: Float64Array): number {
   const nu = a + b;
   if (a < 0.5 || b < 0.5) return gammaFactor(b) * (gammaFactor(a) / gammaFactor(nu));
-  const remainder =
-    stirlingRemainderKernel(nu) - stirlingRemainderKernel(a) - stirlingRemainderKernel(b);
-  out[1] = (out[1] as number) + remainder;
+  out[1] =
+    (out[1] as number) +
+    (stirlingRemainderKernel(nu) - stirlingRemainderKernel(a) - stirlingRemainderKernel(b));
+  return Math.sqrt(((a / nu) * b) / TWO_PI);
+}
+
+/** {@link betaAmplitude} for a, b >= 6. */
+export function largeBetaAmplitude(a: number, b: number, out: Float64Array): number {
+  const nu = a + b;
+  out[1] =
+    (out[1] as number) +
+    (largeStirlingRemainder(nu) - largeStirlingRemainder(a) - largeStirlingRemainder(b));
   return Math.sqrt(((a / nu) * b) / TWO_PI);
 }
 

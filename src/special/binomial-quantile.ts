@@ -19,7 +19,7 @@ import { TAIL_SLOTS } from './tail-result.ts';
  * $$ \min \{ k : P(X \le k) \ge \mathrm{prob} \} $$
  *
  * @param prob - a number from 0 to 1, or a Probability, which is compared by its smaller tail
- * @param n - number of trials; an integer from 0 to 2^53
+ * @param n - number of trials; an integer from 0 to 2^53 - 1
  * @param p - probability of a success; from 0 to 1, 1/2 if left out
  * @param q - 1 - p, where it is known more exactly than the subtraction gives
  * @returns an integer from 0 to n; 0 for `prob` = 0
@@ -27,7 +27,7 @@ import { TAIL_SLOTS } from './tail-result.ts';
  *   ties are met for p = 1/2 and n <= 53; elsewhere a request within the error of the distribution
  *   function at a step may give either neighbour.
  * @throws A {@link DomainError} if `prob` is not a number from 0 to 1 or a Probability, n no integer from 0
- *   to 2^53, p or q outside [0, 1], or p + q not 1 to rounding
+ *   to 2^53 - 1, p or q outside [0, 1], or p + q not 1 to rounding
  *
  * Source: https://dlmf.nist.gov/8.17.E5; the search is our own.
  *
@@ -78,7 +78,7 @@ function binomialQuantileOfTail(
   lower: boolean,
 ): number {
   if (p === 0 || n === 0) return 0;
-  if (logTail === Number.NEGATIVE_INFINITY) return lower ? 0 : n;
+  if (logTail === -Infinity) return lower ? 0 : n;
   if (q === 0) return n;
   const out = new Float64Array(TAIL_SLOTS);
   let below = -1; // does not reach

@@ -10,7 +10,7 @@
  * coin has its own file, fair-binomial.ts.
  */
 
-import { DomainError } from '../domain.ts';
+import { checkInteger, DomainError } from '../domain.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 import { betaAmplitude, betaDelta, betaDeviance } from './beta-prefix.ts';
 import { fairBinomialTail } from './fair-binomial.ts';
@@ -19,9 +19,6 @@ import { storeZero, TAIL_SLOTS } from './tail-result.ts';
 
 const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
 
-/** Largest number of trials. */
-const MAX_TRIALS = 2 ** 53;
-
 /**
  * The distribution function of the number of successes in n independent trials at an integer k, with
  * both tails.
@@ -29,7 +26,7 @@ const MAX_TRIALS = 2 ** 53;
  * $$ P(X \le k) = \sum_{i=0}^{k} \binom{n}{i} p^i q^{n-i} = I_q(n - k,\, k + 1) $$
  *
  * @param k - number of successes; an integer, 0 comes out below 0 and 1 from n on
- * @param n - number of trials; an integer from 0 to 2^53
+ * @param n - number of trials; an integer from 0 to 2^53 - 1
  * @param p - probability of a success; from 0 to 1, 1/2 if left out
  * @param q - 1 - p, where it is known more exactly than the subtraction gives; of the two the smaller
  *   one is taken as exact
@@ -37,7 +34,7 @@ const MAX_TRIALS = 2 ** 53;
  * @remarks Constant cost in n and k. Relative error of the smaller tail below 1.6e-15 down to 1e-300; its
  *   logarithm L has an absolute error below 1.6e-15 + 1.2e-16 |L|. For p = 1/2 the smaller tail is exact
  *   for n <= 53 and correctly rounded for n <= 106.
- * @throws A {@link DomainError} if k is no integer, n no integer from 0 to 2^53, p or q outside [0, 1], or
+ * @throws A {@link DomainError} if k is no integer, n no integer from 0 to 2^53 - 1, p or q outside [0, 1], or
  *   p + q not 1 to rounding
  *
  * Source: https://dlmf.nist.gov/8.17.E5 for the incomplete beta function behind it.
@@ -63,12 +60,12 @@ export function binomialCdf(k: number, n: number, p: number = 0.5, q: number = 1
  * $$ \ln \left[ \binom{n}{k} p^k q^{n-k} \right] $$
  *
  * @param k - number of successes; an integer
- * @param n - number of trials; an integer from 0 to 2^53
+ * @param n - number of trials; an integer from 0 to 2^53 - 1
  * @param p - probability of a success; from 0 to 1, 1/2 if left out
  * @param q - 1 - p, where it is known more exactly than the subtraction gives
  * @returns the logarithm, at most 0; `-Infinity` where k is impossible
  * @remarks Constant cost. Error below 1e-15 max(1, |result|), for all n.
- * @throws A {@link DomainError} if k is no integer, n no integer from 0 to 2^53, p or q outside [0, 1], or
+ * @throws A {@link DomainError} if k is no integer, n no integer from 0 to 2^53 - 1, p or q outside [0, 1], or
  *   p + q not 1 to rounding
  *
  * Source: "Fast and accurate computation of binomial probabilities" (2000), with the distance from the
@@ -95,9 +92,7 @@ function checkCount(fn: string, k: number): void {
 
 /** Refuses anything but a number of trials and two probabilities with sum 1. */
 export function checkBinomial(fn: string, n: number, p: number, q: number): void {
-  if (!(Number.isInteger(n) && n >= 0 && n <= MAX_TRIALS)) {
-    throw new DomainError(fn, 'n', 'an integer from 0 to 2^53', n);
-  }
+  checkInteger(fn, 'n', n, 0);
   checkPair(fn, 'p', p, 'q', q);
 }
 
@@ -133,10 +128,10 @@ export function binomialTail(
 
 /** {@link logBinomialPmf} without checks; n first. */
 export function logBinomialPmfKernel(n: number, k: number, p: number, q: number): number {
-  if (k < 0 || k > n) return Number.NEGATIVE_INFINITY;
+  if (k < 0 || k > n) return -Infinity;
   if (k === 0) return n === 0 ? 0 : n * logOf(q, p);
   if (k === n) return n * logOf(p, q);
-  if (p === 0 || q === 0) return Number.NEGATIVE_INFINITY;
+  if (p === 0 || q === 0) return -Infinity;
   const rest = n - k;
   betaDelta(k, rest, p, q, work);
   betaDeviance(k, rest, p, q, work[0] as number, work[1] as number, work);

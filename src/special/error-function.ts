@@ -30,7 +30,7 @@ export function expOfMinusHalfSquare(x: number): number {
 function expOfSquare(x: number, factor: number): number {
   const square = x * x;
   const value = Math.exp(factor * square);
-  if (value === Number.POSITIVE_INFINITY) return value;
+  if (value === Infinity) return value;
   return value + value * (factor * productError(x, x, square));
 }
 

@@ -18,7 +18,7 @@
 
 import { expansionIsFaster, gaussianTailSum } from './beta-expansion.ts';
 import { betaFraction } from './beta-fraction.ts';
-import { addDeviance, betaAmplitude } from './beta-prefix.ts';
+import { addDeviance, largeBetaAmplitude } from './beta-prefix.ts';
 import { productError, quotientError, sumError } from './double-double.ts';
 import { storeHalf, storeTail } from './tail-result.ts';
 
@@ -79,6 +79,22 @@ export function fairBinomialTail(n: number, k: number, out: Float64Array): boole
   return false;
 }
 
+/**
+ * {@link fairBinomialTail} for n - 1 tosses and k = b - 1, where n - 1 itself may be no double.
+ */
+export function fairTailOfPoints(n: number, b: number, out: Float64Array): boolean {
+  const gap = n - 2 * b;
+  const low = sumError(n, -2 * b, gap);
+  if (gap === 0 && low === 0) {
+    storeHalf(out);
+    return true;
+  }
+  // Above 2^53 one toss more or less is below the rounding of everything but the gap.
+  if (gap > 0) smallerTail(n - 1, b, n - b, gap, low, out);
+  else smallerTail(n - 1, n - b, b, -gap, -low, out);
+  return gap > 0;
+}
+
 /** P[X <= b - 1], where a = n + 1 - b and a - b = gap + gapTail > 0. */
 function smallerTail(
   n: number,
@@ -93,13 +109,13 @@ function smallerTail(
     storeRounded(value, Math.log(value), out);
     return;
   }
-  if (b <= DIRECT + 1 && n < 2 ** 53) {
+  if (b <= DIRECT + 1) {
     directSum(n, b - 1, out);
     return;
   }
   const nu = n + 1;
   const z2 = -2 * fairDeviance(a, b, nu, sumError(n, 1, nu), gap, gapTail, out);
-  let factor = betaAmplitude(a, b, out);
+  let factor = largeBetaAmplitude(a, b, out);
   if (expansionIsFaster(b, z2)) {
     const variance = (a / nu) * b;
     factor *= gaussianTailSum(variance, -gap / nu, variance / nu, Math.sqrt(z2));
@@ -144,7 +160,7 @@ function fairDeviance(
   return out[0];
 }
 
-/** Up to this j the sum is formed term by term; it is then below 2^1023 for n < 2^53. */
+/** Up to this j the sum is formed term by term; it is then below 2^440 for n < 2^53. */
 const DIRECT = 8;
 
 /** 2^-DEEP is a normal number, and so is the product of a sum with it. */
@@ -155,6 +171,13 @@ const LN2_TAIL = 2.3190468138462996e-17;
 
 /** 2^-n sum_(i <= j) binom(n, i) by Horner's rule in twice the precision. */
 function directSum(n: number, j: number, out: Float64Array): void {
+  if (n >= 2 ** 53) {
+    // n^j/j! is all of the sum, and its logarithm below the rounding of the first one
+    let log = -n * Math.LN2;
+    for (let i = 1; i <= j; i++) log += Math.log(n / i);
+    storeRounded(0, log, out);
+    return;
+  }
   let sum = 1;
   let tail = 0;
   for (let i = j; i >= 1; i--) {

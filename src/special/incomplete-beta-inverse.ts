@@ -123,7 +123,7 @@ export function incompleteBetaInverseKernel(
   logTail: number,
   out: Float64Array,
 ): void {
-  if (logTail === Number.NEGATIVE_INFINITY) {
+  if (logTail === -Infinity) {
     storePoint(0, 1, logTail, 0, out);
     return;
   }
@@ -169,8 +169,8 @@ function solve(
   const byValue = tail > SMALLEST_VALUE;
   let u = Number.isNaN(start) ? 0 : start;
   setLogit(u, out);
-  let left = Number.NEGATIVE_INFINITY;
-  let right = Number.POSITIVE_INFINITY;
+  let left = -Infinity;
+  let right = Infinity;
   let stride = Math.min(Math.max(1 / deviation, RESOLUTION), 4);
   for (let step = 0; step < MAX_STEPS; step++) {
     const x = out[0] as number;
@@ -212,7 +212,7 @@ function solve(
       }
     }
     if (!(u + du > left && u + du < right) || step > NEWTON_STEPS) {
-      if (right - left < Number.POSITIVE_INFINITY) {
+      if (right - left < Infinity) {
         du = left + 0.5 * (right - left) - u;
         if (Math.abs(du) < RESOLUTION * Math.max(1, Math.abs(u))) {
           move(u, du, out);

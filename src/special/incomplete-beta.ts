@@ -106,7 +106,7 @@ export function incompleteBetaKernel(
     storeZero(out);
     return x <= 0;
   }
-  if (a + b === Number.POSITIVE_INFINITY) return hugeShapes(a, b, x, y, out);
+  if (a + b === Infinity) return hugeShapes(a, b, x, y, out);
   betaDelta(a, b, x, y, out);
   const delta = out[0] as number;
   const deltaTail = out[1] as number;

@@ -83,13 +83,13 @@ export function gammaInverseOfLog(a: number, logTail: number, upper: boolean): n
 
 /** `tail` (at most 1/2) is used where it is a normal number, `logTail` elsewhere. */
 function inverseOfTail(a: number, tail: number, logTail: number, upper: boolean): number {
-  if (logTail === Number.NEGATIVE_INFINITY) return upper ? Number.POSITIVE_INFINITY : 0;
+  if (logTail === -Infinity) return upper ? Infinity : 0;
   let x = startingPoint(a, logTail, upper);
   if (x < SMALLEST_NORMAL) return x;
   const out = new Float64Array(GAMMA_TAIL_SLOTS);
   const byValue = tail >= SMALLEST_NORMAL;
   let low = 0;
-  let high = Number.POSITIVE_INFINITY;
+  let high = Infinity;
   for (let step = 0; step < MAX_STEPS; step++) {
     const given = gammaTailKernel(a, x, out) !== upper;
     const value = out[0] as number;

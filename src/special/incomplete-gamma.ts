@@ -160,9 +160,9 @@ export function incompleteGamma(a: number, x: number): Probability {
 
 /** {@link incompleteGamma} without checks. */
 export function incompleteGammaKernel(a: number, x: number): Probability {
-  if (x <= 0) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
-  if (x === Number.POSITIVE_INFINITY) {
-    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  if (x <= 0) return probabilityFromTail(0, -Infinity, 'lower', 0);
+  if (x === Infinity) {
+    return probabilityFromTail(0, -Infinity, 'upper', 0);
   }
   const out = new Float64Array(GAMMA_TAIL_SLOTS);
   const lower = gammaTailKernel(a, x, out);

@@ -4,7 +4,16 @@
  *
  * @module
  */
+
+export { binomialCdf, logBinomialPmf } from './binomial.ts';
+export { binomialQuantile } from './binomial-quantile.ts';
+export { chiSquaredCdf, chiSquaredQuantile } from './chi-squared.ts';
 export { erf, erfc, erfcx, millsRatio } from './error-function.ts';
+export { type ComplexNumber, faddeeva } from './faddeeva.ts';
+export { incompleteBeta } from './incomplete-beta.ts';
+export { type BetaPoint, incompleteBetaInverse } from './incomplete-beta-inverse.ts';
+export { incompleteGamma } from './incomplete-gamma.ts';
+export { incompleteGammaInverse } from './incomplete-gamma-inverse.ts';
 export { logBeta, logBinomial, logFactorial } from './log-beta.ts';
 export {
   expm1mx,
@@ -16,18 +25,10 @@ export {
 } from './log-domain.ts';
 export { logGamma, logGamma1p, logGammaRatio } from './log-gamma.ts';
 export { logNormalCdf, normalCdf, normalQuantile } from './normal.ts';
-export { stirlingRemainder } from './stirling-remainder.ts';
-export { chiSquaredCdf, chiSquaredQuantile } from './chi-squared.ts';
-export { type ComplexNumber, faddeeva } from './faddeeva.ts';
-export { incompleteGamma } from './incomplete-gamma.ts';
-export { incompleteGammaInverse } from './incomplete-gamma-inverse.ts';
 export {
   logStirling1,
   logStirling1Row,
   logStirlingB,
   logStirlingBRow,
 } from './stirling-numbers.ts';
-export { binomialCdf, logBinomialPmf } from './binomial.ts';
-export { binomialQuantile } from './binomial-quantile.ts';
-export { incompleteBeta } from './incomplete-beta.ts';
-export { type BetaPoint, incompleteBetaInverse } from './incomplete-beta-inverse.ts';
+export { stirlingRemainder } from './stirling-remainder.ts';

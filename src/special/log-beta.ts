@@ -46,7 +46,7 @@ export function logBeta(a: number, b: number): number {
 export function logBetaKernel(first: number, second: number): number {
   const a = Math.min(first, second);
   const b = Math.max(first, second);
-  if (b === Number.POSITIVE_INFINITY) return Number.NEGATIVE_INFINITY;
+  if (b === Infinity) return -Infinity;
   if (a < 1) return logGamma1pKernel(a) - Math.log(a) - logGammaRatioKernel(b, a);
   if (a < 8) return logGammaKernel(a) - logGammaRatioKernel(b, a);
   return (
@@ -115,11 +115,11 @@ function exactBinomial(h: number, g: number): number {
 }
 
 /**
- * The logarithm of n! for an integer n from 0 to 2^53 - 1.
+ * The logarithm of n! for an integer n from 0 to 2^53.
  *
  * $$ \ln n! $$
  *
- * @param n - an integer from 0 to 2^53 - 1
+ * @param n - an integer from 0 to 2^53
  * @returns the logarithm, from the exact factorial for n <= 22
  * @remarks Constant cost. Relative error below 6e-16.
  * @throws A {@link DomainError} if `n` is no such integer
@@ -131,7 +131,7 @@ function exactBinomial(h: number, g: number): number {
  * ```
  */
 export function logFactorial(n: number): number {
-  checkInteger('logFactorial', 'n', n, 0);
+  checkInteger('logFactorial', 'n', n, 0, 2 ** 53);
   return logFactorialKernel(n);
 }
 

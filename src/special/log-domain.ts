@@ -31,7 +31,7 @@ export { log1mExpKernel };
  * ```
  */
 export function log1mExp(x: number): number {
-  checkNumber('log1mExp', 'x', x, Number.NEGATIVE_INFINITY, 0);
+  checkNumber('log1mExp', 'x', x, -Infinity, 0);
   return log1mExpKernel(x);
 }
 
@@ -65,7 +65,7 @@ export function logAddExpKernel(a: number, b: number): number {
   const larger = Math.max(a, b);
   const smaller = Math.min(a, b);
   // Two equal infinities would leave NaN as their difference.
-  if (smaller === Number.NEGATIVE_INFINITY || larger === Number.POSITIVE_INFINITY) return larger;
+  if (smaller === -Infinity || larger === Infinity) return larger;
   return larger + Math.log1p(Math.exp(smaller - larger));
 }
 
@@ -91,7 +91,7 @@ export function logSubExp(a: number, b: number): number {
   checkNumber('logSubExp', 'a', a);
   checkNumber('logSubExp', 'b', b);
   if (b > a) throw new DomainError('logSubExp', 'b', `at most a (a is ${a})`, b);
-  if (b === Number.POSITIVE_INFINITY) {
+  if (b === Infinity) {
     throw new DomainError('logSubExp', 'b', 'below Infinity', b);
   }
   return logSubExpKernel(a, b);
@@ -99,8 +99,8 @@ export function logSubExp(a: number, b: number): number {
 
 /** {@link logSubExp} without checks. */
 export function logSubExpKernel(a: number, b: number): number {
-  if (a === b) return Number.NEGATIVE_INFINITY;
-  if (a === Number.POSITIVE_INFINITY) return a;
+  if (a === b) return -Infinity;
+  if (a === Infinity) return a;
   return a + log1mExpKernel(b - a);
 }
 
@@ -141,7 +141,7 @@ export function logSumExp(values: ArrayLike<number>): number {
 
 /** {@link logSumExp} without checks. */
 export function logSumExpKernel(values: ArrayLike<number>): number {
-  let largest = Number.NEGATIVE_INFINITY;
+  let largest = -Infinity;
   let position = -1;
   for (let i = 0; i < values.length; i++) {
     const value = values[i] as number;
@@ -150,7 +150,7 @@ export function logSumExpKernel(values: ArrayLike<number>): number {
       position = i;
     }
   }
-  if (position < 0 || largest === Number.POSITIVE_INFINITY) return largest;
+  if (position < 0 || largest === Infinity) return largest;
   // The largest term is exactly 1 and stays out of the compensated sum of the others.
   let sum = 0;
   let carry = 0;
@@ -190,7 +190,7 @@ export function log1pmx(x: number): number {
 
 /** {@link log1pmx} without checks. */
 export function log1pmxKernel(x: number): number {
-  if (x < -0.5 || x > 1) return x < Number.POSITIVE_INFINITY ? Math.log1p(x) - x : -x;
+  if (x < -0.5 || x > 1) return x < Infinity ? Math.log1p(x) - x : -x;
   const r = x / (2 + x);
   const q = r * r;
   // 0 - ... so that the result at -0 is 0, too
@@ -231,7 +231,7 @@ export function expm1mx(x: number): number {
 /** {@link expm1mx} without checks. */
 export function expm1mxKernel(x: number): number {
   if (x >= -1 && x <= 1) return x * x * evaluatePolynomial(EXPM1MX, x);
-  return x < Number.POSITIVE_INFINITY ? Math.expm1(x) - x : x;
+  return x < Infinity ? Math.expm1(x) - x : x;
 }
 
 /** (e^x - 1 - x)/x^2 in powers of x, |x| <= 1, relative error 1.6e-17. */

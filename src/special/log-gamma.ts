@@ -187,5 +187,5 @@ function logRisingFactorial(x: number, a: number): number {
 /** log((x + a)/x), also where the quotient overflows. */
 function logOnePlusQuotient(a: number, x: number): number {
   const t = a / x;
-  return t < Number.POSITIVE_INFINITY ? Math.log1p(t) : Math.log(a) - Math.log(x);
+  return t < Infinity ? Math.log1p(t) : Math.log(a) - Math.log(x);
 }

@@ -37,8 +37,8 @@ export function normalCdf(x: number): Probability {
   checkNumber('normalCdf', 'x', x);
   const side = x <= 0 ? 'lower' : 'upper';
   const logTail = logNormalCdfKernel(-Math.abs(x));
-  if (logTail === Number.NEGATIVE_INFINITY) {
-    return probabilityFromTail(0, logTail, side, Number.isFinite(x) ? Number.POSITIVE_INFINITY : 0);
+  if (logTail === -Infinity) {
+    return probabilityFromTail(0, logTail, side, Number.isFinite(x) ? Infinity : 0);
   }
   return probabilityFromTail(normalTailKernel(x), logTail, side, 4e-16 * (1 - logTail));
 }

@@ -126,7 +126,7 @@ export function logStirlingBRow(n: number): Float64Array {
 /** {@link logStirling1} without checks. */
 export function logStirling1Kernel(n: number, k: number): number {
   if (k === n) return 0;
-  if (k === 0) return Number.NEGATIVE_INFINITY;
+  if (k === 0) return -Infinity;
   if (n <= RECURRENCE_LIMIT) return logStirlingRow(n, 0, 1)[k] as number;
   return logRisingCoefficient(n - 1, k - 1, 1);
 }

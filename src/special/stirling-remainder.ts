@@ -53,13 +53,16 @@ export function stirlingRemainder(x: number): number {
 
 /** {@link stirlingRemainder} without checks. */
 export function stirlingRemainderKernel(x: number): number {
-  if (x >= LARGE) {
-    const u = 1 / x;
-    return u * evaluatePolynomial(D_LARGE, u * u);
-  }
+  if (x >= LARGE) return largeStirlingRemainder(x);
   if (x >= SMALL) return evaluatePolynomial(D_MIDDLE, (x - 0.3125) / (x + 0.3125)) / (12 * x + 0.5);
   const log = Math.log(x);
   return logGamma1pKernel(x) + (x - x * log) - HALF_LOG_TWO_PI - 0.5 * log;
+}
+
+/** {@link stirlingRemainder} for x >= 6, for callers that need not carry the rest. */
+export function largeStirlingRemainder(x: number): number {
+  const u = 1 / x;
+  return u * evaluatePolynomial(D_LARGE, u * u);
 }
 
 /**

@@ -66,6 +66,6 @@ export function storeHalf(out: Float64Array): void {
 /** Stores an impossible event. */
 export function storeZero(out: Float64Array): void {
   out[0] = 0;
-  out[1] = Number.NEGATIVE_INFINITY;
+  out[1] = -Infinity;
   out[2] = 0;
 }

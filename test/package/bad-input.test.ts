@@ -47,7 +47,8 @@ function badFor(call: OptionsCall | PositionalCall, name: string): readonly unkn
   if (call.texts?.includes(name)) bad[bad.indexOf('3')] = 'three';
   if (call.integers?.includes(name)) {
     bad.push(3.5, -1);
-    if (!('counts' in call && call.counts?.includes(name))) bad.push(2 ** 53);
+    const welcome = 'takes2to53' in call || ('counts' in call && call.counts?.includes(name));
+    if (!welcome) bad.push(2 ** 53);
   }
   return bad;
 }

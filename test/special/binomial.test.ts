@@ -265,9 +265,11 @@ describe('the arguments of the binomial law', () => {
     expect(message(() => binomialCdf(1.5, 3))).toBe('binomialCdf: k must be an integer, got 1.5');
     expect(message(() => binomialCdf(Number.NaN, 3))).toContain('k must be');
     expect(message(() => binomialCdf(Number.POSITIVE_INFINITY, 3))).toContain('k must be');
-    expect(message(() => binomialCdf(1, -1))).toContain('n must be an integer from 0 to 2^53');
+    expect(message(() => binomialCdf(1, -1))).toContain('n must be an integer >= 0');
     expect(message(() => binomialCdf(1, 2.5))).toContain('n must be');
-    expect(message(() => binomialCdf(1, 2 ** 53 + 2))).toContain('n must be');
+    expect(message(() => binomialCdf(1, 2 ** 53))).toContain(
+      'n must be an integer from 0 to 2^53 - 1',
+    );
     expect(message(() => binomialCdf(1, '3' as unknown as number))).toContain('n must be');
     expect(message(() => binomialCdf(1, 3, 1.1))).toContain('p must be');
     expect(message(() => binomialCdf(1, 3, -0.1))).toContain('p must be');
@@ -275,6 +277,6 @@ describe('the arguments of the binomial law', () => {
     expect(message(() => binomialCdf(1, 3, 0.5, 0.6))).toContain('q must be 1 - p');
     expect(message(() => logBinomialPmf(0.5, 3))).toContain('logBinomialPmf: k must be');
     expect(message(() => logBinomialPmf(1, 3, 2))).toContain('p must be');
-    expect(binomialCdf(1, 2 ** 53, 2 ** -53).value).toBeCloseTo(2 / Math.E, 12);
+    expect(binomialCdf(1, 2 ** 53 - 1, 2 ** -53).value).toBeCloseTo(2 / Math.E, 12);
   });
 });

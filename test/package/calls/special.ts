@@ -19,7 +19,7 @@ export const specialCalls: Readonly<Record<string, OptionsCall | PositionalCall 
   logSubExp: { args: [-1, -2], names: ['a', 'b'] },
   logSumExp: { args: [[-1, -2]], names: ['values'], structured: ['values'] },
   logGammaRatio: { args: [3, 0.5], names: ['x', 'a'] },
-  logFactorial: { args: [5], names: ['n'], integers: ['n'] },
+  logFactorial: { args: [5], names: ['n'], integers: ['n'], takes2to53: true },
   logBeta: { args: [2, 3], names: ['a', 'b'] },
   logBinomial: { args: [5, 2], names: ['n', 'k'] },
   normalQuantile: { args: [0.3], names: ['p'] },
