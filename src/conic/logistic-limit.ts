@@ -153,7 +153,8 @@ export function logisticThresholdKernel(b: number, g: number): number {
   if (b === 0 && g === 0) return 0.5;
   const rule = ruleFor(b, g);
   minimise(rule, b > 0);
-  return (SUMS[0] as number) * rule.scale;
+  // 1/2 is the value at t = 0; rounding may exceed it
+  return Math.min(0.5, (SUMS[0] as number) * rule.scale);
 }
 
 /** The threshold with its second-order constants, for b >= 0. */
