@@ -4,7 +4,7 @@
 import { wendel } from '../conic/wendel.ts';
 import { checkChoice, checkInteger, checkOptions } from '../domain.ts';
 import { LogNumber } from '../log-number.ts';
-import { complementOf, type Probability } from '../probability.ts';
+import { complementOf, type Probability, probabilityFromTail } from '../probability.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
 import { MAX_FACE_DIMENSION } from './face-options.ts';
 import { faceLoss, logChoices } from './gaussian-faces.ts';
@@ -55,7 +55,7 @@ const EPSILON = 2 ** -52;
  *
  * @param args - `polytope`, `n`, `d` and `k`; for 'simplexWithOrigin' `survival` is that of the faces
  *   without the origin, and `expected` counts the faces of both kinds
- * @returns `expected` and `survival`; survival is 1 for d = n, and 0 for k >= d < n
+ * @returns `expected` and `survival`; survival is 1 for d = n and 0 for k >= d
  * @remarks Cost: a few to a few hundred terms, 0.1 to 20 ms. Error of the logarithm of the smaller
  *   tail, measured: 3e-14 up to n = 400.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
@@ -82,6 +82,11 @@ export function projectedFaces(args: ProjectedFacesArgs): ProjectedFaces {
   checkInteger(fn, 'n', n, 1);
   checkInteger(fn, 'd', d, 1, polytope === 'cube' ? n : Math.min(n, MAX_FACE_DIMENSION));
   checkInteger(fn, 'k', k, 0, n - 1);
+  if (k >= d) {
+    // A face of the dimension of the image cannot lie on its boundary.
+    const survival = probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
+    return { expected: LogNumber.fromLog(Number.NEGATIVE_INFINITY), survival };
+  }
   const error = new Float64Array(1);
   const count = { n, log: Math.log(n) };
   const v = k + 1;
@@ -99,7 +104,8 @@ export function projectedFaces(args: ProjectedFacesArgs): ProjectedFaces {
   const { expected, survival } = result(choices, bound, faceLoss(count, d, v, 'withCentre'));
   const central = result(logChoices(count, k, error), error[0] as number, wendel(n - k, d - k));
   const log = logAddExpKernel(expected.log, central.expected.log);
-  const logError = Math.max(expected.logError, central.expected.logError) + EPSILON * log;
+  const rounding = log > 0 ? EPSILON * log : 0;
+  const logError = Math.max(expected.logError, central.expected.logError) + rounding;
   return { expected: LogNumber.fromLog(log, logError), survival };
 }
 
