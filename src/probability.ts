@@ -55,7 +55,7 @@ export interface ProbabilityFields {
  * const p = originInHull({ n: 10, d: 3 });
  * p.value; // => 0.91015625
  * p.complement; // => 0.08984375
- * `${originInHull({ n: 4000, d: 3 })}`; // => '1 - 1.21300519733e-1197'
+ * `${originInHull({ n: 4000, d: 3 })}`; // => '1 - 1.21346930113e-1197'
  * ```
  */
 export class Probability extends Displayable {
@@ -167,7 +167,7 @@ export class Probability extends Displayable {
    * ```ts
    * import { Probability } from 'hullgauge';
    * import { normalQuantile } from 'hullgauge/special';
-   * normalQuantile(Probability.fromComplement(1e-300)).toPrecision(12); // => '37.0470964993'
+   * normalQuantile(Probability.fromComplement(1e-300)).toPrecision(12); // => '37.0470962994'
    * ```
    */
   static fromComplement(complement: number, logError = 0): Probability {

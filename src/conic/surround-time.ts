@@ -39,7 +39,7 @@ import { wendel } from './wendel.ts';
  * const time = surroundTime({ d: 40 });
  * time.mean; // => 81
  * time.quantile(0.5); // => 80
- * time.quantile(Probability.fromComplement(1e-12)); // => 188
+ * time.quantile(Probability.fromComplement(1e-12)); // => 169
  * ```
  */
 export function surroundTime(args: { readonly d: number }): Distribution {

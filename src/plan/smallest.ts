@@ -64,7 +64,7 @@ export type FixedArgs<Args, Name> = Args extends unknown ? Omit<Args, Name & key
  * ```ts
  * import { originInHull, smallest } from 'hullgauge';
  * smallest(originInHull, 'n', { d: 40 }, 0.5).value; // => 80
- * smallest(originInHull, 'n', { d: 40 }, { complementAtMost: 1e-12 }).value; // => 188
+ * smallest(originInHull, 'n', { d: 40 }, { complementAtMost: 1e-12 }).value; // => 169
  * ```
  */
 export function smallest<Args, Name extends ParameterOf<Args>>(
