@@ -9,6 +9,7 @@ export const rooms = [
   'plan',
   'data',
   'precise',
+  'notebook',
 ] as const;
 
 export default defineConfig({

@@ -82,4 +82,8 @@ export const calls: Readonly<Record<string, OptionsCall | PositionalCall | Skipp
     structured: ['law', 'targets'],
   },
   logSpaced: { args: [1, 100, 3], names: ['from', 'to', 'perDecade'], integers: ['perDecade'] },
+
+  // Notebook.
+  chart: { skip: 'takes a function; test/notebook/chart.test.ts' },
+  sizingChart: { skip: 'takes a report; test/notebook/chart.test.ts' },
 };
