@@ -178,14 +178,13 @@ export function simpleTree(k: number, options: SimpleTreeOptions = {}): readonly
     const requirement = `from 1e-4 to 1e12 times treatment (treatment is ${treatment})`;
     throw new DomainError(fn, 'control', requirement, control);
   }
+  if (k <= 2) return Object.freeze(k === 1 ? [1] : [0.5, 0.5]);
   const n = k - 1;
   const error = new Float64Array(1);
   const weights: number[] = [];
   // j treatments are pooled with the control
   for (let j = n; j >= 0; j--) {
-    weights.push(
-      n === 0 ? 1 : Math.exp(logOrthantTermKernel(n, Math.log(n), j, ratio, 'line', error)),
-    );
+    weights.push(Math.exp(logOrthantTermKernel(n, Math.log(n), j, ratio, 'line', error)));
   }
   return Object.freeze(weights);
 }
