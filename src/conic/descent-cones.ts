@@ -226,7 +226,7 @@ function exactMean(n: number, sparsity: number): number {
  * @example
  * ```ts
  * import { approxNuclearNormDimension } from 'hullgauge/conic';
- * approxNuclearNormDimension({ rank: 3, rows: 24, columns: 30 }).toPrecision(6); // => '276.278'
+ * approxNuclearNormDimension({ rank: 3, rows: 24, columns: 30 }).toPrecision(6); // => '276.282'
  * ```
  */
 export function approxNuclearNormDimension(options: {
