@@ -306,13 +306,24 @@ export class BetaTail implements Tail {
     return sum;
   }
 
-  /** T by backward recurrence from a depth at which it has converged. */
+  /**
+   * T by backward recurrence from a depth at which it has converged, as a quotient: one division in
+   * place of one a step. All terms are positive.
+   */
   private fraction(x: number): number {
     const a = this.coefficients;
-    const depth = this.depthFor(x);
-    let g = 1;
-    for (let j = depth; j >= 2; j--) g = 1 + ((a[j] as number) * x) / g;
-    return ((a[1] as number) * x) / g;
+    let p = 1;
+    let q = 1;
+    for (let j = this.depthFor(x); j >= 2; j--) {
+      const next = p + (a[j] as number) * x * q;
+      q = p;
+      p = next;
+      if ((j & 31) === 0 && p > 2 ** 400) {
+        p *= 2 ** -400;
+        q *= 2 ** -400;
+      }
+    }
+    return ((a[1] as number) * x * q) / p;
   }
 
   /**
