@@ -63,7 +63,7 @@ export function argumentAxis(
 ): Axis<number | LogNumber> {
   if (values.some((value) => isLogNumber(value) && value.log > DOUBLE_LOG)) {
     return {
-      title: `decimal logarithm of the ${title}`,
+      title: `log10 of the ${title}`,
       scale: { zero: false },
       place: (value) => decimalLog(isLogNumber(value) ? value.log : Math.log(value)),
     };
@@ -95,12 +95,12 @@ function probabilityAxis(results: readonly Probability[], show: Shown): Axis<Pro
     return { title: 'probability', scale, place: ({ value }) => rounded(value) };
   }
   if (show === 'log') {
-    const title = 'decimal logarithm of the probability';
+    const title = 'log10 of the probability';
     return { title, scale: { zero: false }, place: ({ log }) => decimalLog(log) };
   }
   // By its logarithm where a linear axis would show most of it as 0.
   if (spread(results.map(({ logComplement }) => logComplement)) > WIDE) {
-    const title = 'decimal logarithm of 1 - probability';
+    const title = 'log10 of 1 - probability';
     const scale = { zero: false };
     return { title, scale, place: ({ logComplement }) => decimalLog(logComplement) };
   }
@@ -125,7 +125,7 @@ function amountAxis(
   const beyond = Math.max(...logs) > DOUBLE_LOG;
   if (show === 'log' || (show === undefined && positive && (beyond || spread(logs) > WIDE))) {
     if (!positive) throw new DomainError(fn, 'show', "'value' for negative results", show);
-    const title = 'decimal logarithm of the result';
+    const title = 'log10 of the result';
     return { title, scale: { zero: false }, place: (result) => decimalLog(logOf(result)) };
   }
   if (beyond) throw new DomainError(fn, 'show', "'log' for results beyond doubles", show);

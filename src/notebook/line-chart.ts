@@ -2,9 +2,9 @@
  * Curves as a Vega-Lite line chart: exact values solid, limit theorems dashed.
  */
 import type { LogNumber } from '../log-number.ts';
-import { type Axis, argumentAxis, type Result, resultAxis, type Shown } from './axes.ts';
+import { argumentAxis, type Result, resultAxis, type Shown } from './axes.ts';
 import type { LimitCurve } from './limit-curve.ts';
-import { type Chart, colourScale, withLook } from './look.ts';
+import { type Chart, colourScale, NEUTRAL, withLook } from './look.ts';
 
 /** A curve to be drawn. */
 export interface Curve {
@@ -41,6 +41,8 @@ interface Datum {
 
 /** Up to so many values a curve shows its points. */
 const FEW_VALUES = 25;
+/** Name of the exact curves in the legend. */
+const EXACT = 'exact';
 
 /** The chart of some curves. */
 export function lineChart({ title, subtitle, xTitle, xs, curves, show }: LineChart): Chart {
@@ -61,40 +63,34 @@ export function lineChart({ title, subtitle, xTitle, xs, curves, show }: LineCha
       ),
     ),
   );
-  const limitName = `limit theorem ${curves[0]?.limit?.name}`;
+  const limitName = `limit theorem: ${curves.find(({ limit }) => limit)?.limit?.name}`;
   const labels = curves.flatMap(({ label }) => (label === null ? [] : [label]));
-  const kinds = ['exact', limitName];
-  const encoding = (kind: string): object => ({
-    x: encoded('x', x),
-    y: encoded('y', y),
-    ...(labels.length === 0
-      ? {}
-      : {
-          color: { field: 'series', type: 'nominal', title: null, scale: colourScale(labels) },
-        }),
-    ...(limitRows.length === 0
-      ? {}
-      : {
-          strokeDash: {
-            datum: kind,
-            type: 'nominal',
-            title: null,
-            scale: {
-              domain: kinds,
-              range: [
-                [1, 0],
-                [5, 4],
-              ],
-            },
-          },
-        }),
+  const colour = {
+    field: 'series',
+    type: 'nominal',
+    title: null,
+    scale: colourScale(labels),
+    legend: { symbolType: 'stroke' },
+  };
+  const encoding = {
+    x: { field: 'x', type: 'quantitative', title: x.title, scale: x.scale },
+    y: { field: 'y', type: 'quantitative', title: y.title, scale: y.scale },
+    ...(labels.length === 0 ? {} : { color: colour }),
+  };
+  const line = (kind: string, strokeWidth: number): object => ({
+    mark: { type: 'line', strokeWidth, tooltip: true },
+    encoding: limitRows.length === 0 ? {} : { strokeDash: dash(kind, limitName) },
   });
-  const mark = { type: 'line', strokeWidth: 2, point: xs.length <= FEW_VALUES, tooltip: true };
-  const exactLayer = { data: { values: rows }, mark, encoding: encoding('exact') };
+  const points = { mark: { type: 'point', filled: true, size: 40, opacity: 1, tooltip: true } };
+  const exactLayer = {
+    data: { values: rows },
+    encoding,
+    layer: xs.length <= FEW_VALUES ? [line(EXACT, 2), points] : [line(EXACT, 2)],
+  };
   const limitLayer = {
     data: { values: limitRows },
-    mark: { type: 'line', strokeWidth: 1.5 },
-    encoding: encoding(limitName),
+    encoding,
+    layer: [line(limitName, 1.5)],
   };
   const range = x.title === xTitle ? ` from ${ends(rows)}` : '';
   const names = labels.length === 0 ? '' : `; ${labels.join(', ')}`;
@@ -109,8 +105,19 @@ function datum(x: number | null, y: number | null, label: string | null): readon
   return [label === null ? { x, y } : { x, y, series: label }];
 }
 
-function encoded(field: string, { title, scale }: Axis<never>): object {
-  return { field, type: 'quantitative', title, scale };
+/** Solid for exact values, dashed for the limit theorem, with a legend that says so. */
+function dash(kind: string, limitName: string): object {
+  const range = [
+    [1, 0],
+    [5, 4],
+  ];
+  return {
+    datum: kind,
+    type: 'nominal',
+    title: null,
+    scale: { domain: [EXACT, limitName], range },
+    legend: { symbolType: 'stroke', symbolStrokeColor: NEUTRAL },
+  };
 }
 
 /** The rows of a limit curve that lie where the exact ones do. */

@@ -33,6 +33,7 @@ export function withLook(description: string, spec: Readonly<Record<string, unkn
       background: 'white',
       font: 'DejaVu Sans, Helvetica, Arial, sans-serif',
       range: { category: PALETTE },
+      mark: { color: PALETTE[0] },
       axis: { labelFontSize: 12, titleFontSize: 13, titleFontWeight: 'normal', gridColor: '#eee' },
       legend: {
         labelFontSize: 12,

@@ -72,7 +72,7 @@ export function sizingChart(report: SizingReport): Chart {
         type: 'nominal',
         title: null,
         sort: rows.map((row) => row.title),
-        axis: { labelLimit: 320, grid: true },
+        axis: { labelLimit: 0, grid: true },
       },
       color: {
         field: 'target',

@@ -107,7 +107,7 @@ describe('a question over n', () => {
     const svg = await render(spec);
     expect(svg).toContain('number of points n');
     expect(svg).toContain('Does the sample surround the nominal point?');
-    expect(svg).toContain('limit theorem 2d + z sqrt(2d)');
+    expect(svg).toContain('limit theorem: 2d + z sqrt(2d)');
   });
 
   it('shows itself under the hidden symbol and holds nothing but JSON', () => {
@@ -155,7 +155,7 @@ describe('what is drawn', () => {
   it('tails keep their digits', async () => {
     const options = { x: { n: [50, 200, 1000, 5000] }, args: { d: 20 } };
     const small = chart(originInHull, { ...options, show: 'complement' });
-    expect(axis(small, 'y')?.title).toBe('decimal logarithm of 1 - probability');
+    expect(axis(small, 'y')?.title).toBe('log10 of 1 - probability');
     for (const { x, y } of rows(small)) {
       expect(y).toBeCloseTo(originInHull({ n: x, d: 20 }).logComplement / Math.LN10, 8);
     }
@@ -174,7 +174,7 @@ describe('what is drawn', () => {
 
   it('counts that span decades are drawn by their logarithm', async () => {
     const spec = chart(dichotomyCount, { x: { n: [10, 100, 100_000] }, args: { d: 50 } });
-    expect(axis(spec, 'y')?.title).toBe('decimal logarithm of the result');
+    expect(axis(spec, 'y')?.title).toBe('log10 of the result');
     expect(axis(chart(dichotomyCount, { x: { n: [10, 11] }, args: { d: 2 } }), 'y')?.title).toBe(
       'result',
     );
@@ -184,7 +184,7 @@ describe('what is drawn', () => {
   it('numbers of points beyond doubles are drawn by their logarithm', async () => {
     const n = [10, LogNumber.fromLog(800), LogNumber.fromLog(2000)];
     const spec = chart(nextPointInHull, { x: { n }, args: { d: 200 } });
-    expect(axis(spec, 'x')?.title).toBe('decimal logarithm of the number of points n');
+    expect(axis(spec, 'x')?.title).toBe('log10 of the number of points n');
     expect(rows(spec)[1]?.x).toBeCloseTo(800 / Math.LN10, 8);
     await render(spec);
   });
