@@ -14,6 +14,7 @@ import { type NamedRow, readTable } from '../support/reference.ts';
 
 const table = readTable<NamedRow>('conic');
 const extra = readTable<NamedRow>('conic-extra');
+const faces = readTable<NamedRow>('faces');
 
 function cases(quantity: string, field: 'value' | 'log' = 'value'): readonly AccuracyCase[] {
   return [...table, ...extra].flatMap((row) => {
@@ -54,14 +55,25 @@ const successes: readonly ProbabilityCase[] = [...table, ...extra].flatMap((row)
   return [{ args, value, log, complement, region: model }];
 });
 
+/** The same as faces of random projections that survive. */
+const survivals: readonly ProbabilityCase[] = faces.flatMap((row) => {
+  const models: Record<string, string> = { C: 'l1', T0: 'nonnegativeL1', O: 'box' };
+  const model = models[String(row.args['kind'])];
+  if (row.quantity !== 'face_survival' || row.value === null || model === undefined) return [];
+  const support = { [model === 'box' ? 'free' : 'sparsity']: number(row.args, 'k') };
+  const args = { model, n: number(row.args, 'N'), measurements: number(row.args, 'd'), ...support };
+  const { value, log, complement } = row;
+  return [{ args, value, log, complement, region: `${model}, as faces` }];
+});
+
 /** The same for other tests; exported arrays of this folder hold checks. */
-export const recoveryCases = (): readonly ProbabilityCase[] => successes;
+export const recoveryCases = (): readonly ProbabilityCase[] => [...successes, ...survivals];
 
 const volume = (args: NamedRow['args']): number =>
   l1DescentCone(sparse(args)).logIntrinsicVolumes[number(args, 'k')] as number;
 
 export const recoveryChecks: readonly AccuracyCheck[] = [
-  ...probabilityChecks('recoverySuccess', successes, recoverySuccess, 1e-11),
+  ...probabilityChecks('recoverySuccess', recoveryCases(), recoverySuccess, 1e-11),
   {
     name: 'l1DescentCone.logIntrinsicVolumes',
     cases: [...cases('civ.l1_descent', 'log'), ...cases('l1.v', 'log')],
