@@ -44,7 +44,7 @@ export interface ApproxVolumeThresholdArgs {
  * @example
  * ```ts
  * import { approxVolumeThreshold, uniformBall } from 'hullgauge';
- * approxVolumeThreshold({ d: 5000, law: uniformBall() }).log10.toFixed(1); // => '8891.0'
+ * approxVolumeThreshold({ d: 5000, law: uniformBall() }).log10.toFixed(1); // => '8892.8'
  * ```
  */
 export function approxVolumeThreshold(options: ApproxVolumeThresholdArgs): LogNumber {
