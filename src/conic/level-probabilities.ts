@@ -107,7 +107,10 @@ function unequalOrder(given: readonly number[]): number[] {
   // a right spherical triangle: tan(E/2) is the product of the tangents of the half legs
   const tangent = determinant / ((rightSine + left) * (leftSine + right));
   const all = Math.atan(tangent) / TWO_PI;
-  const one = Math.atan2(Math.sqrt(determinant), 1 - left - right) / TWO_PI;
+  // 1 - left - right, the difference of 1 and a cosine near 1 by way of the sine
+  const [most, least] = left > right ? [leftSine, right] : [rightSine, left];
+  const rest = (most * most) / (1 + Math.max(left, right)) - least;
+  const one = Math.atan2(Math.sqrt(determinant), rest) / TWO_PI;
   const two = 0.125 + 0.5 * (lowestLevel(a, b, c) + lowestLevel(b, c, d));
   const three =
     0.5 * (highestLevel(a + b, c, d) + highestLevel(a, b + c, d) + highestLevel(a, b, c + d));

@@ -135,7 +135,7 @@ function minimise(rule: Rule, intercept: boolean): readonly [number, number] {
     const s0 = intercept ? (h01 * g1 - h11 * g0) / determinant : 0;
     const s1 = intercept ? (h01 * g0 - h00 * g1) / determinant : -g1 / h11;
     const decrement = -(g0 * s0 + g1 * s1);
-    if (!(decrement > 1e-25 * value)) return [t0, t1];
+    if (!(decrement > 0)) return [t0, t1];
     let factor = 1;
     objective(rule, t0 + s0, t1 + s1);
     while ((SUMS[0] as number) > value - 0.25 * factor * decrement && decrement > 1e-12 * value) {
@@ -144,6 +144,8 @@ function minimise(rule: Rule, intercept: boolean): readonly [number, number] {
     }
     t0 += factor * s0;
     t1 += factor * s1;
+    // The step squares the error of the line: nothing is left of it.
+    if (decrement <= 1e-18 * value) return [t0, t1];
   }
   throw new Error(`no convergence: the threshold is at most ${(SUMS[0] as number) * rule.scale}`);
 }

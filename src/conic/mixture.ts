@@ -45,8 +45,8 @@ const NEGLIGIBLE = -60;
 const SLACK = 1e-9;
 /** Largest number of weights. */
 const MOST_WEIGHTS = 1_000_001;
-/** Sums of numbers above this have lost nothing to underflow. */
-const SAFE_VALUE = 1e-280;
+/** Sums of numbers above this have lost nothing to underflow: every term is off by 1e-323 at most. */
+const SAFE_VALUE = 1e-300;
 
 /** Refuses anything but non-negative numbers with sum 1. */
 export function checkWeights(fn: string, weights: unknown): asserts weights is ArrayLike<number> {
