@@ -25,7 +25,7 @@ const EPSILON = 2 ** -52;
  * ```ts
  * import { ballVolume } from 'hullgauge/intrinsic';
  * ballVolume(3).value.toPrecision(12); // => (4 * Math.PI / 3).toPrecision(12)
- * ballVolume(5000).log10.toFixed(3); // => '-6169.202'
+ * ballVolume(5000).log10.toFixed(3); // => '-6168.337'
  * ```
  */
 export function ballVolume(d: number, radius = 1): LogNumber {

@@ -69,7 +69,7 @@ export interface FacetHeight extends Distribution {
  * // on the sphere of R^3, (1 + H)/2 has the law Beta(n - 1, 2)
  * const height = facetHeight({ n: 30, d: 3, law: uniformSphere() });
  * height.mean.toPrecision(12); // => (27 / 31).toPrecision(12)
- * height.cdf(0.7).value.toPrecision(8); // => '0.048028898'
+ * height.cdf(0.7).value.toPrecision(8); // => '0.048028899'
  * ```
  */
 export function facetHeight(options: FacetHeightArgs): FacetHeight {

@@ -67,7 +67,7 @@ export interface HullIntrinsicVolumeRatioArgs extends HullVolumeRatioArgs {
  *
  * @example
  * ```ts
- * import { hullVolumeRatio, uniformBall, uniformSphere } from 'hullgauge/polytope';
+ * import { hullVolumeRatio, uniformBall, uniformSphere } from 'hullgauge';
  * hullVolumeRatio({ n: 10, d: 3, law: uniformSphere() }).value.toPrecision(12); // => '0.293706293706'
  * hullVolumeRatio({ n: 4, d: 3, law: uniformBall() }).value.toPrecision(12); // => (9 / 715).toPrecision(12)
  * hullVolumeRatio({ n: 3, d: 3, law: uniformBall() }).value; // => 0
@@ -105,7 +105,7 @@ export function hullVolumeRatio(options: HullVolumeRatioArgs): Probability {
  *
  * @example
  * ```ts
- * import { hullIntrinsicVolumeRatio, uniformSphere } from 'hullgauge/polytope';
+ * import { hullIntrinsicVolumeRatio, uniformSphere } from 'hullgauge';
  * // (n - 1)(n - 2) / ((n + 1)(n + 2)) on the sphere of R^3
  * const ratio = hullIntrinsicVolumeRatio({ n: 10, d: 3, k: 2, law: uniformSphere() });
  * ratio.value.toPrecision(12); // => (72 / 132).toPrecision(12)
