@@ -179,7 +179,7 @@ function heightQuantile(
     if (!(next > low && next < high)) {
       next = Number.isFinite(low + high) ? 0.5 * (low + high) : x - 2 * sign * Math.sign(gap);
     }
-    if (Math.abs(next - x) <= 2e-16 * Math.abs(x) + 1e-13 * deviation) return next;
+    if (Math.abs(next - x) <= 2.3e-16 * Math.abs(x) + 1e-17 * deviation) return next;
     x = next;
   }
   throw new Error(

@@ -140,7 +140,9 @@ describe('facetHeight', () => {
         fc.boolean(),
         fc.double({ min: -300, max: -1e-3, noNaN: true }),
         fc.boolean(),
-        (d, extra, bounded, log, lower) => {
+        (d, extra, bounded, size, lower) => {
+          // near 1 doubles are 1e-16 apart, and the upper tail of a bounded law ends there
+          const log = bounded && !lower ? size / 6 : size;
           const law = bounded ? uniformBall() : gaussian();
           const height = facetHeight({ n: d + extra, d, law });
           const p = lower ? Probability.fromLog(log) : Probability.fromLogComplement(log);
@@ -149,7 +151,7 @@ describe('facetHeight', () => {
           const found = lower ? back.log : back.logComplement;
           // the height is a double: what its last bit means for the tail
           const granularity = 2 ** -51 * Math.abs(x) * Math.exp(height.logPdf(x) - found);
-          const slack = 1e-12 * Math.max(1, Math.abs(log)) + 2 * granularity;
+          const slack = 1e-12 * Math.max(1, Math.abs(log)) + 4 * granularity;
           expect(Math.abs(found - log)).toBeLessThan(slack);
         },
       ),
