@@ -50,7 +50,19 @@ export function poissonBinomialTail(runs: readonly BernoulliRun[], k: number): S
   const size = runSize(parts);
   if (k < 0) return { tail: 0, log: Number.NEGATIVE_INFINITY, side: 'lower', logError: 0 };
   if (k >= size) return { tail: 0, log: Number.NEGATIVE_INFINITY, side: 'upper', logError: 0 };
+  const [run] = parts;
+  if (k === 0 && parts.length === 1 && run?.step === 1 && run.count === 1) {
+    return emptySum(run.from - 1, run.to);
+  }
   return size <= ENUMERATED ? enumeratedTail(parts, k) : contourTail(parts, size, k);
+}
+
+/** P(K = 0) of one run with step 1: the product of 1 - 1/j telescopes, so that ties come out exactly. */
+function emptySum(before: number, last: number): SumTail {
+  const lower = 2 * before <= last;
+  const tail = (lower ? before : last - before) / last;
+  const log = Math.log(tail);
+  return { tail, log, side: lower ? 'lower' : 'upper', logError: EPSILON * (1 + Math.abs(log)) };
 }
 
 /** The same by the recurrence; cost quadratic in the number of variables. */

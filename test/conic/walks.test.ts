@@ -1,10 +1,12 @@
 import fc from 'fast-check';
 import { DomainError, type Probability } from 'hullgauge';
 import { bridgeHull, jointWalkHull, originInHull, walkHull } from 'hullgauge/conic';
+import { smallest } from 'hullgauge/plan';
 import { describe, expect, it } from 'vitest';
 import { randomStream } from '../../src/numeric/random.ts';
 import { hullCases, jointCases } from '../accuracy/conic-walks.ts';
 import { worstErrorShare } from '../support/probability-checks.ts';
+import { type NamedRow, readTable } from '../support/reference.ts';
 
 /** Exact P(K <= d - 1) for a sum of Bernoulli variables 1/q, as numerator and denominator. */
 function exactOutside(odds: readonly bigint[], d: number): [bigint, bigint] {
@@ -105,6 +107,17 @@ describe('walkHull and bridgeHull', () => {
     expect(worstErrorShare(hullCases('walk', 'in'), walkHull)).toBeLessThan(1);
     expect(worstErrorShare(hullCases('bridge', 'in'), bridgeHull)).toBeLessThan(1);
     expect(worstErrorShare(hullCases('walk', 'in'), walkHull)).toBeGreaterThan(0.001);
+  });
+
+  it.each(
+    readTable<NamedRow>('conic').filter(({ quantity }) =>
+      /^(walk|bridge)\.n_for_q$/.test(quantity),
+    ),
+  )('need the tabulated number of steps: $quantity $args', ({ quantity, args, value }) => {
+    const ask = quantity.startsWith('walk') ? walkHull : bridgeHull;
+    const target = { complementAtMost: Number(args['q']) };
+    const answer = smallest(ask, 'steps', { d: Number(args['d']) }, target);
+    expect(answer.value).toBe(Number(value));
   });
 
   it('return exact limits where the answer is certain', () => {
