@@ -120,7 +120,7 @@ function distributionWords(
 ): { readonly title: string; readonly subtitle: string } {
   const [centre, spread] = [mean, Math.sqrt(variance)].map((x) => formatNumber(x, 1e-6));
   const subtitle = `mean ${centre}, standard deviation ${spread}`;
-  return { title: `Is it at most ${xName}?`, subtitle };
+  return { title: `Distribution of ${xName}`, subtitle };
 }
 
 /** The one entry of `x` or `series`. */
