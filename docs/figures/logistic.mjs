@@ -19,6 +19,13 @@ const limits = shares.map((share) => ({
   d: round(n * logisticThreshold({ signal: 0, offset: Math.log(share / (1 - share)) })),
 }));
 
+const color = {
+  field: 'share',
+  type: 'nominal',
+  title: 'rarer class',
+  sort: shares.map((share) => `${100 * share} %`),
+};
+
 /** Vega-Lite specification of the figure in logistic.md. */
 export default look({
   title: 'Pure noise in 120 cases: are the classes separable?',
@@ -29,12 +36,7 @@ export default look({
       encoding: {
         x: { field: 'd', type: 'quantitative', title: 'variables' },
         y: { field: 'p', type: 'quantitative', title: 'probability that no logistic fit exists' },
-        color: {
-          field: 'share',
-          type: 'nominal',
-          title: 'rarer class',
-          sort: shares.map((share) => `${100 * share} %`),
-        },
+        color,
       },
     },
     {
@@ -42,7 +44,7 @@ export default look({
       mark: { type: 'rule', strokeWidth: 1.5, strokeDash: [4, 4] },
       encoding: {
         x: { field: 'd', type: 'quantitative' },
-        color: { field: 'share', type: 'nominal' },
+        color,
       },
     },
   ],

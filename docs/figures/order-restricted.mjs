@@ -11,7 +11,7 @@ const laws = [
 ];
 const curves = laws.flatMap(([law, pValue]) =>
   Array.from({ length: 91 }, (_, i) => {
-    const x = 0.01 + i / 5;
+    const x = 0.01 + 0.1999 * i;
     return { law, x: round(x), p: round(pValue(x)) };
   }),
 );
@@ -22,12 +22,17 @@ export default look({
   data: { values: curves },
   mark: { type: 'line', strokeWidth: 2 },
   encoding: {
-    x: { field: 'x', type: 'quantitative', title: 'likelihood-ratio statistic' },
+    x: {
+      field: 'x',
+      type: 'quantitative',
+      scale: { domain: [0, 18] },
+      title: 'likelihood-ratio statistic',
+    },
     y: {
       field: 'p',
       type: 'quantitative',
       scale: { type: 'log' },
-      axis: { format: '.0e' },
+      axis: { format: 'g', values: [1, 0.1, 0.05, 0.01, 0.001, 0.0001] },
       title: 'p-value',
     },
     color: { field: 'law', type: 'nominal', title: null, sort: laws.map(([law]) => law) },

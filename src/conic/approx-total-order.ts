@@ -50,7 +50,7 @@ export function approxTotalOrder(
   checkInteger(fn, 'trials', trials, 1, 1e9);
   checkInteger(fn, 'seed', seed, 0);
   const k = weights.length;
-  const largest = Math.max(...weights);
+  const largest = weights.reduce((most, weight) => Math.max(most, weight));
   const scaled = weights.map((weight) => weight / largest);
   const deviations = scaled.map((weight) => 1 / Math.sqrt(weight));
   const stream = randomStream(seed);

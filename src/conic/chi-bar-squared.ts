@@ -16,8 +16,7 @@ import { gammaInverseKernel } from '../special/incomplete-gamma-inverse.ts';
 import { logBetaKernel } from '../special/log-beta.ts';
 import { logGammaKernel } from '../special/log-gamma.ts';
 import { checkProbability } from '../special/probability-argument.ts';
-import type { Cone } from './cone.ts';
-import { momentsOf } from './cone.ts';
+import { type Cone, momentsOf } from './cone.ts';
 import {
   type Component,
   checkWeights,
@@ -234,7 +233,7 @@ export function eBarSquared(
   const total = options.observations - 1;
   const levels = momentsOf(weights);
   let within = 0;
-  weights.forEach((weight, j) => {
+  checked.values.forEach((weight, j) => {
     within += (weight * (2 * j) * (total - j)) / (total + 2);
   });
   const variance = (levels.variance + within) / total / total;

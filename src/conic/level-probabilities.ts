@@ -73,14 +73,14 @@ export function checkGroupWeights(
     const requirement = k === undefined ? 'an array of numbers' : `an array of ${k} numbers`;
     throw new DomainError(fn, 'weights', requirement, weights);
   }
-  let largest = 0;
+  let least = 0;
+  let most = 0;
   for (let i = 0; i < weights.length; i++) {
-    const weight: unknown = weights[i];
-    checkPositive(fn, `weights[${i}]`, weight);
-    largest = Math.max(largest, weight);
+    checkPositive(fn, `weights[${i}]`, weights[i]);
+    if (weights[i] < weights[least]) least = i;
+    if (weights[i] > weights[most]) most = i;
   }
-  const least = weights.indexOf(Math.min(...weights));
-  if (weights[least] < SMALLEST_RATIO * largest) {
+  if (weights[least] < SMALLEST_RATIO * weights[most]) {
     const requirement = `at least ${SMALLEST_RATIO} times the largest weight`;
     throw new DomainError(fn, `weights[${least}]`, requirement, weights[least]);
   }

@@ -188,6 +188,20 @@ describe('chiBarSquared', () => {
     expect(law.cdf(1e300).logError).toBeLessThan(1e285);
   });
 
+  it('does not jump where numbers give way to logarithms', () => {
+    const law = chiBarSquared(totalOrder(8));
+    // the upper tail passes 1e-300 between these
+    for (const x of [1385, 1390, 1393, 1395, 1400]) {
+      const { complement, logComplement } = law.cdf(x);
+      expect(Math.abs(Math.log(complement) / logComplement - 1)).toBeLessThan(1e-15);
+      const slope = law.logPdf(x) - logComplement;
+      const ahead = law.cdf(x + 1e-3).logComplement;
+      expect((logComplement - ahead) / 1e-3).toBeCloseTo(Math.exp(slope), 6);
+    }
+    expect(law.cdf(1390).complement).toBeGreaterThan(1e-300);
+    expect(law.cdf(1395).complement).toBeLessThan(1e-300);
+  });
+
   it('passes the uncertainty of a simulated cone on', () => {
     const cone: Cone = approxPolyhedralCone(
       [0, 1, 2].map((i) => [0, 1, 2].map((j) => (i === j ? 1 : 0))),
