@@ -2,18 +2,7 @@
 import { gaussian } from 'hullgauge';
 import { hullVertices, inHull, sampler } from 'hullgauge/data';
 import { loadLinearSolver } from '../support/linear-program.ts';
-import { type BenchRow, printRows } from './measure.ts';
-
-/** Nanoseconds of the least disturbed of a few single calls: these take milliseconds each. */
-async function leastOf(calls: number, call: () => unknown): Promise<number> {
-  let least = Number.POSITIVE_INFINITY;
-  for (let i = 0; i < calls; i++) {
-    const start = performance.now();
-    await call();
-    least = Math.min(least, performance.now() - start);
-  }
-  return 1e6 * least;
-}
+import { type BenchRow, leastOf, printRows } from './measure.ts';
 
 /** 10,000 points in 50 dimensions, with queries inside, near the boundary and outside. */
 export async function benchData(): Promise<void> {
@@ -50,29 +39,37 @@ export async function benchData(): Promise<void> {
       high: new Float64Array(n).fill(Number.POSITIVE_INFINITY),
     };
     const { position } = inHull(points, q);
-    const feasible = solve(feasibility).status === 'optimal';
-    const apart = solve(margin).objective > 1e-6;
+    // Seconds each, so once is enough.
+    let [feasible, apart] = [false, false];
+    const others = {
+      'LP for weights': await leastOf(1, () => {
+        feasible = solve(feasibility).status === 'optimal';
+      }),
+      'LP for a hyperplane': await leastOf(1, () => {
+        apart = solve(margin).objective > 1e-6;
+      }),
+    };
     if (feasible !== (position === 'inside') || apart !== (position === 'outside')) {
       throw new Error(`disagreement at ${place}: ${position}, ${feasible}, ${apart}`);
     }
     rows.push({
       name: `inHull n = ${n}, d = ${d}, ${place}`,
       own: await leastOf(20, () => inHull(points, q)),
-      others: {
-        'LP for weights': await leastOf(3, () => solve(feasibility)),
-        'LP for a hyperplane': await leastOf(3, () => solve(margin)),
-      },
+      others,
       note: position,
     });
   }
   const cloud = Array.from({ length: 2000 }, sampler(gaussian(), { d: 10, seed: 3 }));
   let reports = 0;
-  const own = await leastOf(3, () => hullVertices(cloud, { onProgress: () => reports++ }));
+  let vertices: readonly number[] = [];
+  const own = await leastOf(1, async () => {
+    vertices = await hullVertices(cloud, { onProgress: () => reports++ });
+  });
   rows.push({
     name: 'hullVertices n = 2000, d = 10',
     own,
     others: {},
-    note: `${(await hullVertices(cloud)).length} vertices, ${reports / 3} progress reports a call`,
+    note: `${vertices.length} vertices, ${reports} progress reports`,
   });
   printRows('Membership in the hull of given points, against a general LP package', rows);
 }

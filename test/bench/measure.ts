@@ -1,4 +1,4 @@
-/** Timing for the benchmarks: medians of repeated batches, printed as ratios in one run. */
+/** Timing for the benchmarks: the least disturbed of repeated batches, reported as ratios in one run. */
 
 /** One line of a benchmark. */
 export interface BenchRow {
@@ -12,22 +12,44 @@ export interface BenchRow {
   readonly note?: string;
 }
 
-let sink = 0;
+/** Rows that belong together. */
+export interface BenchTable {
+  /** What the rows have in common. */
+  readonly title: string;
+  /** The rows. */
+  readonly rows: readonly BenchRow[];
+}
 
-/** Median nanoseconds per call over batches that together last about `budget` milliseconds. */
+/** Every table printed so far, for the speed page. */
+export const tables: BenchTable[] = [];
+
+const sink: { last?: unknown } = {};
+
+/**
+ * Nanoseconds per call of the quickest of the batches that together last about `budget` milliseconds:
+ * what else the machine does can only add to a time.
+ */
 export function timePerCall(call: () => unknown, budget = 120): number {
   for (let i = 0; i < 20; i++) consume(call());
   let calls = 1;
-  for (;;) {
-    const elapsed = batch(call, calls);
-    if (elapsed > 2) break;
-    calls *= 2;
-  }
-  const times: number[] = [];
+  while (batch(call, calls) <= 2) calls *= 2;
+  let least = Number.POSITIVE_INFINITY;
   const end = performance.now() + budget;
-  while (performance.now() < end || times.length < 5) times.push(batch(call, calls) / calls);
-  times.sort((a, b) => a - b);
-  return 1e6 * (times[times.length >> 1] as number);
+  for (let batches = 0; batches < 5 || performance.now() < end; batches++) {
+    least = Math.min(least, batch(call, calls) / calls);
+  }
+  return 1e6 * least;
+}
+
+/** Nanoseconds of the quickest of a few single calls, for calls of milliseconds or with promises. */
+export async function leastOf(calls: number, call: () => unknown): Promise<number> {
+  let least = Number.POSITIVE_INFINITY;
+  for (let i = 0; i < calls; i++) {
+    const start = performance.now();
+    await call();
+    least = Math.min(least, performance.now() - start);
+  }
+  return 1e6 * least;
 }
 
 function batch(call: () => unknown, calls: number): number {
@@ -38,19 +60,35 @@ function batch(call: () => unknown, calls: number): number {
 
 // Keeps the optimiser from dropping calls whose result nobody reads.
 function consume(value: unknown): void {
-  if (value === undefined) sink++;
+  sink.last = value;
 }
 
-/** Prints a table: own time, and how many times as long each alternative takes. */
+/** A time with two digits and its unit. */
+export function timeText(nanoseconds: number): string {
+  const units = ['ns', 'µs', 'ms', 's'];
+  let [value, unit] = [nanoseconds, 0];
+  while (value >= 999.5 && unit < 3) {
+    value /= 1000;
+    unit++;
+  }
+  return `${Number(value.toPrecision(2))} ${units[unit]}`;
+}
+
+/** How many times as long an alternative takes, with two digits. */
+export function ratioText(other: number, own: number): string {
+  const ratio = other / own;
+  return ratio < 1e5 ? `x${Number(ratio.toPrecision(2))}` : `x${ratio.toExponential(1)}`;
+}
+
+/** Prints a table, own time and how many times as long each alternative takes, and keeps it for the page. */
 export function printRows(title: string, rows: readonly BenchRow[]): void {
+  tables.push({ title, rows });
   console.log(`\n${title}`);
   for (const { name, own, others, note } of rows) {
     const ratios = Object.entries(others).map(
-      ([other, time]) => `${other} x${(time / own).toPrecision(3)}`,
+      ([other, time]) => `${other} ${ratioText(time, own)}`,
     );
-    const time = own < 1e4 ? `${own.toFixed(0)} ns` : `${(own / 1e3).toFixed(1)} us`;
-    console.log(
-      `  ${name.padEnd(44)} ${time.padStart(10)}  ${ratios.join('  ')}${note ? `  (${note})` : ''}`,
-    );
+    const remark = note ? `  (${note})` : '';
+    console.log(`  ${name.padEnd(44)} ${timeText(own).padStart(8)}  ${ratios.join('  ')}${remark}`);
   }
 }
