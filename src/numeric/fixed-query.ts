@@ -119,6 +119,11 @@ export class FixedQuerySequence {
     }
   }
 
+  /** Sign of B_(k+1) - B_(k-1) where the terms themselves do not tell: the mass lies near n Q(r). */
+  slope(k: number): number {
+    return this.logN + this.logTail - Math.log(k);
+  }
+
   /** Where about k points are expected beyond y: near enough for the climb. */
   private firstMode(k: number): number {
     const target = Math.log(k) - this.logN;
@@ -191,7 +196,8 @@ export class FixedQuerySequence {
   /** log Q(y) - log Q(r) at y = r tanh u. */
   private shiftAt(u: number, logTail: number): number {
     // r - y without cancellation
-    const distance = u > 0 ? (2 * this.r) / (1 + Math.exp(2 * u)) : this.r * (1 - Math.tanh(u));
+    const e = Math.exp(-2 * Math.abs(u));
+    const distance = (2 * this.r * (u > 0 ? e : 1)) / (1 + e);
     if (distance > 1e-3) return logTail - this.logTail;
     // Taylor: (log Q)' = -h, h' = h (h - y), h'' = h ((h - y)(2h - y) - 1)
     const h = 1 / millsRatioKernel(this.r);

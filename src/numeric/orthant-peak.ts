@@ -10,6 +10,7 @@
  * the same nodes, which cost nothing, bound its error.
  */
 import { erfcxKernel, erfKernel } from '../special/error-function.ts';
+import { log1pmxKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel, normalTailKernel } from '../special/normal.ts';
 
 const SQRT_HALF = Math.SQRT1_2;
@@ -19,6 +20,10 @@ const EPSILON = 2 ** -52;
 /** Terms below e^-41 of the largest are dropped. */
 const CUT = -41;
 const MAX_NODES = 100_000;
+/** Peaks below this may belong to N far larger than lambda. */
+const CENTRAL = 0.5;
+/** From this lambda on the peak is so narrow that differences of the tail would be lost. */
+const NARROW = 1e6;
 /** From here on N is taken from its logarithm. */
 const HUGE_COUNT = 1e290;
 
@@ -38,6 +43,7 @@ export type PeakKind =
  *
  * @param N - a number > 0, `Infinity` where only its logarithm is known
  * @param logN - its logarithm
+ * @param drag - with a number s > 0 the integrand has the factor Q(s y) / Q(s y0) besides
  */
 export function peakKernel(
   N: number,
@@ -45,13 +51,17 @@ export function peakKernel(
   lambda: number,
   kind: PeakKind,
   out: Float64Array,
+  drag = 0,
 ): void {
   const p = PEAK;
   p.absolute = kind === 'absolute';
-  const y0 = peak(logN - Math.log(lambda), p.absolute);
+  const y0 = peak(logN - Math.log(lambda), p.absolute, lambda > NARROW);
+  p.central = y0 < CENTRAL || lambda > NARROW;
   p.y0 = y0;
   p.N = N;
   p.lambda = lambda;
+  p.drag = drag;
+  p.logDrag0 = drag > 0 ? logNormalCdfKernel(-drag * y0) : 0;
   p.tail0 = (p.absolute ? 2 : 1) * normalTailKernel(y0);
   p.logF0 = logF(y0, p.absolute);
   p.F0 = p.absolute ? erfKernel(y0 * SQRT_HALF) : 1 - p.tail0;
@@ -90,7 +100,7 @@ export function peakKernel(
   const total = even + odd;
   out[0] = y0;
   out[1] = Math.log(h * total);
-  const sensitivity = y0 < 0.5 ? lambda * y0 : p.countTail0;
+  const sensitivity = p.central ? lambda * y0 : p.countTail0;
   out[2] =
     trapezoidError(Math.abs(even - odd) / total, (2 * Math.abs(fourth - second)) / total) +
     EPSILON * (10 + 4 * Math.min(sensitivity, p.countTail0));
@@ -116,6 +126,7 @@ export function trapezoidError(error2: number, error4: number): number {
 const PEAK = {
   absolute: false,
   huge: false,
+  central: false,
   N: 0,
   lambda: 0,
   y0: 0,
@@ -125,6 +136,8 @@ const PEAK = {
   erfcx0: 0,
   relativeSlope: 0,
   countTail0: 0,
+  drag: 0,
+  logDrag0: 0,
 };
 
 /** log F(y). */
@@ -138,23 +151,29 @@ function logF(y: number, absolute: boolean): number {
 function logRelative(u: number): number {
   const p = PEAK;
   const y = p.y0 + u;
-  const gaussian = p.lambda * u * (p.y0 + 0.5 * u);
-  if (p.y0 < 0.5 && Math.abs(u) < 0.25 && !p.huge) {
-    // N may be far larger than lambda here: F - F0 with relative accuracy.
-    return p.N * Math.log1p(p.relativeSlope * shiftIntegral(p.y0, u)) - gaussian;
+  let gaussian = p.lambda * u * (p.y0 + 0.5 * u);
+  let drag = 0;
+  if (p.drag > 0) drag = logNormalCdfKernel(-p.drag * y) - p.logDrag0;
+  if (p.central && Math.abs(u) * (p.y0 + 0.5) < 0.25) {
+    // N F'/F = lambda y at y0, so the linear terms cancel by hand and N itself drops out.
+    const h = p.relativeSlope;
+    const bend = shiftExcess(p.y0, u);
+    const second = h > 1e-150 ? log1pmxKernel(h * (u + bend)) / h : 0;
+    return p.lambda * (p.y0 * (bend + second) - 0.5 * u * u) + drag;
   }
+  gaussian -= drag;
   if (y < 0.5) return p.N * (logF(y, p.absolute) - p.logF0) - gaussian;
   const growth = (Math.exp(-u * (p.y0 + 0.5 * u)) * erfcxKernel(y * SQRT_HALF)) / p.erfcx0 - 1;
   if (p.huge) return -p.countTail0 * growth - gaussian;
   return p.N * Math.log1p((-p.tail0 * growth) / p.F0) - gaussian;
 }
 
-/** int_0^u exp(-y t - t^2/2) dt by its power series, for |u| < 0.25 and 0 <= y < 0.5. */
-function shiftIntegral(y: number, u: number): number {
+/** int_0^u exp(-y t - t^2/2) dt - u by its power series, for |u| (y + 1/2) < 1/4. */
+function shiftExcess(y: number, u: number): number {
   let before = 0;
   let coefficient = 1;
   let power = u;
-  let sum = u;
+  let sum = 0;
   for (let i = 1; i < 40; i++) {
     const next = -(y * coefficient + before) / i;
     before = coefficient;
@@ -168,8 +187,11 @@ function shiftIntegral(y: number, u: number): number {
   return sum;
 }
 
-/** The root of N F'(y)/F(y) = lambda y, to a few digits, by Newton's method in log y. */
-function peak(logRatio: number, absolute: boolean): number {
+/**
+ * The root of N F'(y)/F(y) = lambda y by Newton's method in log y. A few digits do, except where the
+ * integrand relies on it.
+ */
+function peak(logRatio: number, absolute: boolean, precise: boolean): number {
   const target = logRatio - HALF_LOG_TWO_PI + (absolute ? Math.LN2 : 0);
   let y = Math.sqrt(2 * (logRatio > 30 ? logRatio : Math.log1p(Math.exp(logRatio))));
   if (y < 1e-150) y = 1e-150;
@@ -179,7 +201,7 @@ function peak(logRatio: number, absolute: boolean): number {
     const hazard = Math.exp((absolute ? Math.LN2 : 0) - 0.5 * y * y - HALF_LOG_TWO_PI - log);
     const step = value / (1 + y * (y + hazard));
     y *= Math.exp(Math.max(-50, Math.min(step, 50)));
-    if (Math.abs(step) < 1e-6) break;
+    if (Math.abs(step) < (precise || y < CENTRAL ? 3e-16 : 1e-6)) break;
   }
   return y;
 }

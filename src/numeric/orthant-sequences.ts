@@ -20,7 +20,7 @@
  */
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
-import { logAbsoluteSumKernel, logOrthantTermKernel } from './orthant.ts';
+import { logAbsoluteSumKernel, logOrthantTermKernel, orthantTermSlope } from './orthant.ts';
 import type { LogTerm } from './parity-split.ts';
 
 /** Which of the three sequences. */
@@ -67,4 +67,16 @@ export function orthantSequence(
     error[0] = bound + otherBound * Math.exp(Math.min(0, other - log));
     return logAddExpKernel(log, other);
   };
+}
+
+const KIND = { simplex: 'line', nonnegative: 'half', absolute: 'absolute' } as const;
+
+/** Sign of v_(j+1) - v_(j-1), for 0 < j <= M, where the terms themselves do not tell. */
+export function orthantSequenceSlope(
+  sequence: OrthantSequence,
+  M: number,
+  logM: number,
+  kappa: number,
+): (j: number) => number {
+  return (j) => (j < M ? orthantTermSlope(M, logM, j, kappa, KIND[sequence]) : -1);
 }

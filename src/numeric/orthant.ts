@@ -25,6 +25,7 @@
  * SIAM Review 56 (2014), doi 10.1137/130932132.
  */
 import { logBinomialKernel } from '../special/log-beta.ts';
+import { logAddExpKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel } from '../special/normal.ts';
 import { binomialConstant, binomialDeviance, HUGE_COUNT } from './binomial-weight.ts';
 import { contourKernel, logScaledTail } from './orthant-contour.ts';
@@ -81,12 +82,50 @@ export function logAbsoluteOrthantKernel(N: number, lambda: number, error: Float
 function peakLog(N: number, lambda: number, kind: PeakKind, error: Float64Array): number {
   error[0] = 0;
   if (N === 0) return kind === 'line' ? 0 : -Math.LN2;
-  peakKernel(N, Math.log(N), lambda, kind, PEAK);
+  return peakOfAll(N, Math.log(N), lambda, kind, error);
+}
+
+/** Below this lambda the Gaussian factor is far wider than the rest of the integrand. */
+const WIDE = 0.25;
+
+/** log E_N(lambda) for N >= 1, `Infinity` with only its logarithm known. */
+function peakOfAll(
+  N: number,
+  logN: number,
+  lambda: number,
+  kind: PeakKind,
+  error: Float64Array,
+): number {
+  if (lambda < WIDE && N > 1) return widePeak(N, logN, lambda, kind, error);
+  peakKernel(N, logN, lambda, kind, PEAK);
   const y0 = PEAK[0] as number;
-  const power = N * (PEAK[5] as number);
+  const power = N < HUGE_COUNT ? N * (PEAK[5] as number) : -(PEAK[4] as number);
   const square = 0.5 * lambda * y0 * y0;
   error[0] = (PEAK[2] as number) + EPSILON * (4 + 3 * Math.abs(power) + 2 * square);
   return power - square + (PEAK[1] as number) + logGaussianFactor(lambda);
+}
+
+/** The same by parts: E[Q(sqrt(lambda) max)], an integral over the density of the maximum. */
+function widePeak(
+  N: number,
+  logN: number,
+  lambda: number,
+  kind: PeakKind,
+  error: Float64Array,
+): number {
+  const s = Math.sqrt(lambda);
+  const rest = N - 1;
+  peakKernel(rest, N < HUGE_COUNT ? Math.log(rest) : logN, 1, kind, PEAK, s);
+  const y0 = PEAK[0] as number;
+  const power = N < HUGE_COUNT ? rest * (PEAK[5] as number) : -(PEAK[4] as number);
+  const square = 0.5 * y0 * y0;
+  const drag = logNormalCdfKernel(-s * y0);
+  error[0] =
+    (PEAK[2] as number) + EPSILON * (8 + 3 * Math.abs(power) + 2 * square + 2 * logN - 2 * drag);
+  const log = logN + power - square + (PEAK[1] as number) + drag + logGaussianFactor(1);
+  if (kind === 'absolute') return log + Math.LN2;
+  // On the half line the maximum may also be negative.
+  return kind === 'line' || N > 1e4 ? log : logAddExpKernel(log, -(N + 1) * Math.LN2);
 }
 
 /**
@@ -109,18 +148,13 @@ export function logOrthantTermKernel(
       logNegativeOrthantKernel(j, kappa, error) + (kind === 'absolute' ? j * Math.LN2 : 0);
     return kind === 'line' ? log : log - Math.LN2;
   }
+  if (j === 0) return peakOfAll(n, logN, kappa, kind, error);
   const rest = n - j;
-  peakKernel(rest, j === 0 || n > HUGE_COUNT ? logN : Math.log(rest), lambda, kind, PEAK);
+  peakKernel(rest, n < HUGE_COUNT ? Math.log(rest) : logN, lambda, kind, PEAK);
   const y0 = PEAK[0] as number;
   const external = PEAK[1] as number;
   const tail = PEAK[3] as number;
-  const logF0 = PEAK[5] as number;
-  if (j === 0) {
-    const power = n < HUGE_COUNT ? n * logF0 : -(PEAK[4] as number);
-    const square = 0.5 * kappa * y0 * y0;
-    error[0] = (PEAK[2] as number) + EPSILON * (4 + 3 * Math.abs(power) + 2 * square);
-    return power - square + external + logGaussianFactor(kappa);
-  }
+  if (kind === 'absolute' && tail > 0.5) return plainProduct(n, j, kappa, error);
   contourKernel(j, kappa, false, CONTOUR);
   const a = CONTOUR[0] as number;
   const ratio = j * ((CONTOUR[1] as number) - logScaledTail(y0));
@@ -178,6 +212,37 @@ export function logFaceTermKernel(
     internalBound +
     EPSILON * (8 + 4 * m + 2 * choices + 2 * Math.abs(ratio) + 2 * square);
   return binomial + choices + ratio + square + external + internal + (Math.log(m) - LOG_TWO_PI);
+}
+
+/** The term of kind 'absolute' factor by factor: F is small, and its logarithm too large to cancel. */
+function plainProduct(n: number, j: number, kappa: number, error: Float64Array): number {
+  const choices = logBinomialKernel(n, j) + j * Math.LN2;
+  const internal = logNegativeOrthantKernel(j, kappa, error);
+  const bound = (error[0] as number) + EPSILON * (4 + 2 * choices);
+  const external = logAbsoluteOrthantKernel(n - j, j + kappa, error);
+  error[0] = (error[0] as number) + bound;
+  return choices + internal + external;
+}
+
+/**
+ * Derivative of log of those terms in j, to leading order: its sign says on which side of 0 < j < n
+ * the terms are larger, also where their logarithms are so large that their difference is lost.
+ */
+export function orthantTermSlope(
+  n: number,
+  logN: number,
+  j: number,
+  kappa: number,
+  kind: PeakKind,
+): number {
+  const huge = !(n < HUGE_COUNT);
+  peakKernel(n - j, huge ? logN : Math.log(n - j), j + kappa, kind, PEAK);
+  const y0 = PEAK[0] as number;
+  const logF0 = PEAK[5] as number;
+  contourKernel(j, kappa, false, CONTOUR);
+  const odds = (huge ? logN : Math.log(n - j)) - Math.log(j);
+  const double = kind === 'absolute' ? Math.LN2 : 0;
+  return odds + double + (CONTOUR[1] as number) - logF0 - 0.5 * y0 * y0;
 }
 
 /** log of C(n, j) q^j (1-q)^(n-j) for 0 < j < n, where q = Q(y0), or 2 Q(y0) if doubled. */

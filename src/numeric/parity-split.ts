@@ -62,13 +62,25 @@ export function logOutwardSum(
  * @param term - log v_i for first <= i <= last
  * @param d - the index at which the sequence is split; the value is 0 for d >= last, 1 for d <= first
  * @param last - last index, `Infinity` allowed
+ * @param slope - its sign is that of v_(d+1) - v_(d-1), asked for only where their logarithms are too
+ *   large to tell them apart
  */
-export function paritySplit(term: LogTerm, d: number, first: number, last: number): Probability {
+export function paritySplit(
+  term: LogTerm,
+  d: number,
+  first: number,
+  last: number,
+  slope?: (index: number) => number,
+): Probability {
   if (d >= last) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
   if (d <= first) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
   const error = new Float64Array(1);
-  const below = term(d - 1, error) < term(d + 1, error);
-  let side: 'lower' | 'upper' = below ? 'upper' : 'lower';
+  const left = term(d - 1, error);
+  const leftError = error[0] as number;
+  let rise = term(d + 1, error) - left;
+  // Not above: both may be minus infinity.
+  if (!(Math.abs(rise) > leftError + (error[0] as number)) && slope !== undefined) rise = slope(d);
+  let side: 'lower' | 'upper' = rise > 0 ? 'upper' : 'lower';
   let log = logSide(term, d, first, last, side, error);
   if (log > MOSTLY) {
     // the neighbours of the split misled

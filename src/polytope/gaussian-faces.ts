@@ -12,6 +12,7 @@ import {
   lastOrthantIndex,
   type OrthantSequence,
   orthantSequence,
+  orthantSequenceSlope,
 } from '../numeric/orthant-sequences.ts';
 import { logOutwardSum, paritySplit } from '../numeric/parity-split.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
@@ -41,8 +42,10 @@ export function gaussianMembership(
     return probabilityFromTail(0, Number.NEGATIVE_INFINITY, certain ? 'upper' : 'lower', 0);
   }
   const sequence = SEQUENCE[hull];
-  const term = orthantSequence(sequence, count.n, count.log, 1 / scale / scale);
-  return paritySplit(term, d, 0, lastOrthantIndex(sequence, count.n));
+  const parameters = [sequence, count.n, count.log, 1 / scale / scale] as const;
+  const slope = orthantSequenceSlope(...parameters);
+  const last = lastOrthantIndex(sequence, count.n);
+  return paritySplit(orthantSequence(...parameters), d, 0, last, slope);
 }
 
 /** P(v given points do not span a face of the hull of n >= v points): the complement is survival. */

@@ -132,7 +132,8 @@ function membership(count: ResolvedCount, d: number, r: number): Probability {
     return probabilityFromTail(0, NEVER, 'upper', Number.POSITIVE_INFINITY);
   }
   const sequence = new FixedQuerySequence(n, log, r);
-  return paritySplit((k, error) => sequence.logTerm(k, error), d, 0, n);
+  const slope = (k: number): number => sequence.slope(k);
+  return paritySplit((k, error) => sequence.logTerm(k, error), d, 0, n, slope);
 }
 
 /** The mean of probabilities, each tail averaged by itself. */
