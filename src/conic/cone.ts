@@ -229,7 +229,10 @@ export function orthant(n: number): Cone {
 /** The orthant without checks. */
 export function orthantKernel(n: number): Cone {
   const logs = new Array<number>(n + 1);
-  for (let k = 0; k <= n; k++) logs[k] = logBinomialPmfKernel(n, k, 0.5, 0.5);
+  for (let k = 0; 2 * k <= n; k++) {
+    logs[k] = logBinomialPmfKernel(n, k, 0.5, 0.5);
+    logs[n - k] = logs[k] as number;
+  }
   const data: ConeData = {
     dimension: n,
     lineality: 0,

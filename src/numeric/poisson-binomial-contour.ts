@@ -12,8 +12,9 @@
  * before it has decayed are visited: about 60 whatever the length of the runs. Source: The
  * exponentially convergent trapezoidal rule, SIAM Review 56 (2014), doi 10.1137/130932132.
  */
-import { logFactorialKernel } from '../special/log-beta.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
+import { addGammaRatio } from './complex-gamma-ratio.ts';
+import { fewFailures } from './few-failures.ts';
 import type { BernoulliRun, SumTail } from './poisson-binomial.ts';
 
 const EPSILON = 2 ** -52;
@@ -139,69 +140,6 @@ export function contourTail(runs: readonly BernoulliRun[], size: number, k: numb
   };
 }
 
-/**
- * P(K > k) where nearly all variables are 1: P(K = size - i) = prod p times the elementary symmetric
- * polynomial e_i of the odds against, x = step j - 1. Newton's identities, with e_i = P_1^i c_i / i!:
- * c_i = sum over l of (-1)^(l-1) (P_l/P_1^l) (i-1)!/(i-l)! c_(i-l); terms fall like (i/size)^l.
- */
-function fewFailures(runs: readonly BernoulliRun[], failures: number): SumTail {
-  let log = 0;
-  let bulk = 0;
-  for (const { step, from, to, count } of runs) {
-    const length = to + 1 - from;
-    const ratio = count * logGammaRatioKernel(from, length);
-    log -= ratio + (step === 2 ? count * length * Math.LN2 : 0);
-    bulk += ratio;
-  }
-  const total = powerSum(runs, 1, 1);
-  const sums = [0, 1];
-  for (let l = 2; l <= 24; l++) sums[l] = powerSum(runs, l, total);
-  const c = new Float64Array(failures + 1);
-  c[0] = 1;
-  for (let i = 1; i <= failures; i++) {
-    let weight = 1;
-    let sum = 0;
-    for (let l = 1; l <= Math.min(i, 24); l++) {
-      const term = weight * (sums[l] as number) * (c[i - l] as number);
-      sum += l % 2 === 1 ? term : -term;
-      if (Math.abs(term) < 1e-18) break;
-      weight *= i - l;
-    }
-    c[i] = sum;
-  }
-  // e_(i-1)/e_i = i c_(i-1)/(P_1 c_i), tiny: the sum over fewer failures is short.
-  let tail = 1;
-  for (let i = failures, term = 1; i > 0; i--) {
-    term *= (i * (c[i - 1] as number)) / (total * (c[i] as number));
-    tail += term;
-    if (term < 1e-17) break;
-  }
-  const logFactor = failures * Math.log(total) - logFactorialKernel(failures);
-  log += logFactor + Math.log((c[failures] as number) * tail);
-  const logError =
-    EPSILON * (8 + 2 * failures + 4 * Math.abs(bulk) + 2 * Math.abs(logFactor) + Math.abs(log));
-  return { tail: Math.exp(log), log, side: 'upper', logError };
-}
-
-/** Sum of (step j - 1)^power / total^power over all variables. */
-function powerSum(runs: readonly BernoulliRun[], power: number, total: number): number {
-  let sum = 0;
-  for (const { step, from, to, count } of runs) {
-    if (to - from < LONGEST_PRODUCT) {
-      for (let j = from; j <= to; j++) sum += count * ((step * j - 1) / total) ** power;
-      continue;
-    }
-    // midpoint rule with its first correction, exact for power 1 and 2; the rest is (to)^-4
-    const low = (step * (from - 0.5) - 1) / total;
-    const high = (step * (to + 0.5) - 1) / total;
-    const size = step / total;
-    const integral = (high ** (power + 1) - low ** (power + 1)) / ((power + 1) * size);
-    const slope = power * size * (high ** (power - 1) - low ** (power - 1));
-    sum += count * (integral + slope / 24);
-  }
-  return sum;
-}
-
 /** Leading order of the mean over the circle at the saddle of a law with a large spread. */
 function gaussianMean(r: number, deviation: number): number {
   const pole = r / ((1 - r) * (1 - r));
@@ -300,78 +238,3 @@ function addLogRatios(
   }
   return true;
 }
-
-/**
- * Adds factor * [log Gamma(y + h) - log Gamma(y) - h log y] for real y >= 12 and complex h with
- * |y + h| >= 12 in the right half plane:
- * y (log(1 + w) - w) + (h - 1/2) log(1 + w) + R(y + h) - R(y), w = h/y, R Stirling's remainder.
- */
-function addGammaRatio(
-  y: number,
-  hRe: number,
-  hIm: number,
-  factor: number,
-  out: Float64Array,
-): void {
-  const wRe = hRe / y;
-  const wIm = hIm / y;
-  const logRe = 0.5 * Math.log1p(wRe * (2 + wRe) + wIm * wIm);
-  const logIm = Math.atan2(wIm, 1 + wRe);
-  let excessRe: number;
-  let excessIm: number;
-  if (Math.abs(wRe) + Math.abs(wIm) > 0.4) {
-    excessRe = logRe - wRe;
-    excessIm = logIm - wIm;
-  } else {
-    // log(1 + w) - w = -w^2 (1/2 - w/3 + w^2/4 - ...)
-    let sRe = 0;
-    let sIm = 0;
-    for (let m = wRe * wRe + wIm * wIm < 1e-4 ? 10 : 44; m >= 2; m--) {
-      const nextRe = 1 / m - (sRe * wRe - sIm * wIm);
-      sIm = -(sRe * wIm + sIm * wRe);
-      sRe = nextRe;
-    }
-    const squareRe = wRe * wRe - wIm * wIm;
-    const squareIm = 2 * wRe * wIm;
-    excessRe = -(squareRe * sRe - squareIm * sIm);
-    excessIm = -(squareRe * sIm + squareIm * sRe);
-  }
-  // R(y + h) - R(y), R(z) = 1/(12 z) - 1/(360 z^3) + ...
-  const zRe = y + hRe;
-  const norm = zRe * zRe + hIm * hIm;
-  const uRe = zRe / norm;
-  const uIm = -hIm / norm;
-  const vRe = uRe * uRe - uIm * uIm;
-  const vIm = 2 * uRe * uIm;
-  let sRe = 0;
-  let sIm = 0;
-  let real = 0;
-  const v = 1 / (y * y);
-  for (let m = REMAINDER.length - 1; m >= 0; m--) {
-    const coefficient = REMAINDER[m] as number;
-    const nextRe = coefficient + sRe * vRe - sIm * vIm;
-    sIm = sRe * vIm + sIm * vRe;
-    sRe = nextRe;
-    real = coefficient + real * v;
-  }
-  const remainderRe = sRe * uRe - sIm * uIm - real / y;
-  const remainderIm = sRe * uIm + sIm * uRe;
-  const reFactor = hRe - 0.5;
-  out[0] =
-    (out[0] as number) + factor * (y * excessRe + reFactor * logRe - hIm * logIm + remainderRe);
-  out[1] =
-    (out[1] as number) + factor * (y * excessIm + reFactor * logIm + hIm * logRe + remainderIm);
-}
-
-/** B_2m / (2m (2m - 1)), m = 1..9: Stirling's series. */
-const REMAINDER: readonly number[] = [
-  1 / 12,
-  -1 / 360,
-  1 / 1260,
-  -1 / 1680,
-  1 / 1188,
-  -691 / 360360,
-  1 / 156,
-  -3617 / 122400,
-  43867 / 244188,
-];
