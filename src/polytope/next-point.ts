@@ -59,7 +59,7 @@ const FEW_POINTS = 1e100;
  *   dimensions
  * @remarks Cost grows with the number of terms that matter, a few to a few hundred: 0.1 to 2 ms for
  *   Gaussian points, up to d = 1000 and any n, and ten times that for the other laws. Error of the
- *   logarithm of the smaller tail, measured against 25-digit values: 3e-14 for d <= 100, 3e-13 for
+ *   logarithm of the smaller tail, measured against 25-digit values: 1e-13 for d <= 100, 2e-13 for
  *   d <= 500; for laws near the sphere (-1 < b < 0), where the probability is one minus a number near
  *   1, it is as large as `logError` says. The number holds under the stated assumptions; it does not
  *   replace a safety review.
