@@ -14,7 +14,7 @@ export default defineConfig({
   resolve: { alias },
   test: {
     include: ['test/**/*.test.ts'],
-    exclude: ['test/accuracy/print.test.ts'],
+    exclude: ['test/accuracy/print.test.ts', 'test/bench/**'],
     reporters: ['default', path('support/summary-reporter.ts')],
     testTimeout: 60_000,
   },
