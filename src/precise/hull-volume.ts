@@ -39,7 +39,7 @@ import { bitsFor, floatToDecimal, roundCorrectly, roundQuotient } from './round-
 const MAX_POINTS = 1_000_000;
 /** Largest dimension. */
 const MAX_DIMENSION = 50;
-/** Beyond so many digits only small n and d take less than some two seconds. */
+/** Beyond so many digits only small n and d and whole powers take no more than some two seconds. */
 const MANY_DIGITS = 300;
 /** Most points with many digits. */
 const FEW_POINTS = 100;
@@ -62,8 +62,8 @@ export interface HullVolumeRatioDecimalArgs {
 
 /**
  * Expected share of the unit ball of R^d that the hull of n random points fills, correctly rounded to
- * any number of digits up to 300 for d up to 50 and n up to a million, up to 1,000 for d up to 10 and n
- * up to 100.
+ * any number of digits up to 300 for d up to 50 and n up to a million, up to 1,000 for d up to
+ * 10, n up to 100 and b a multiple of 1/2.
  *
  * For points of the law with density proportional to $(1-|x|^2)^b$ and with $b' = b + (d-1)/2$,
  *
@@ -76,12 +76,12 @@ export interface HullVolumeRatioDecimalArgs {
  * Assumptions: as for `hullVolumeRatio`, the same question in doubles.
  *
  * @param args - `n`: an integer from 0 to a million, to 100 beyond 300 digits; `d`: an integer from 1 to
- *   50, to 10 beyond 300 digits; `b`: -1 for the uniform
- *   sphere, or a number above -1 up to 1000 (on the line at least -0.99), a number meaning the double
- *   exactly and text its decimal value; `digits`: an integer from 1 to 1000
+ *   50, to 10 beyond 300 digits; `b`: -1 for the uniform sphere, or a number above -1 up to 1000 (on the
+ *   line at least -0.99; beyond 300 digits a multiple of 1/2), a number meaning the double exactly and
+ *   text its decimal value; `digits`: an integer from 1 to 1000
  * @returns the ratio rounded to `digits` significant digits, ties to even; exactly 0 for n <= d
- * @remarks Some milliseconds for 30 digits, a tenth of a second where n is a million; for 1,000 digits
- *   about two seconds.
+ * @remarks Some ten milliseconds for 30 digits, a tenth of a second where n is a million; about two
+ *   seconds for 300 digits at the largest n and d, and for 1,000 digits.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
  * Source: "Expected intrinsic volumes and facet numbers of random beta-polytopes", Mathematische
@@ -104,6 +104,10 @@ export function hullVolumeRatioDecimal(args: HullVolumeRatioDecimalArgs): Decima
   checkInteger(fn, 'n', n, 0, many ? FEW_POINTS : MAX_POINTS);
   checkInteger(fn, 'd', d, 1, many ? FEW_DIMENSIONS : MAX_DIMENSION);
   const b = exponent(fn, d, args.b);
+  if (many && (2n * b.numerator) % b.denominator !== 0n) {
+    const requirement = `a multiple of 1/2 beyond ${MANY_DIGITS} digits`;
+    throw new DomainError(fn, 'b', requirement, args.b);
+  }
   if (n <= d) return roundQuotient(0n, 1n, digits);
   // beta = b' + 1
   const beta = sum(b, { numerator: BigInt(d + 1), denominator: 2n });

@@ -232,6 +232,7 @@ describe('hullVolumeRatioDecimal', () => {
   it('refuses what would take long, and exponents next to the two-point law', () => {
     expect(() => hullVolumeRatioDecimal({ n: 101, d: 2, b: 0, digits: 301 })).toThrow(/n must be/);
     expect(() => hullVolumeRatioDecimal({ n: 100, d: 11, b: 0, digits: 301 })).toThrow(/d must be/);
+    expect(() => hullVolumeRatioDecimal({ n: 9, d: 2, b: 0.3, digits: 301 })).toThrow(/b must be/);
     expect(() => hullVolumeRatioDecimal({ n: 9, d: 51, b: 0, digits: 30 })).toThrow(/d must be/);
     expect(() => hullVolumeRatioDecimal({ n: 9, d: 1, b: '-0.999', digits: 9 })).toThrow(/b must/);
     expect(() => hullVolumeRatioDecimal({ n: 9, d: 2, b: -1.1, digits: 9 })).toThrow(/b must/);

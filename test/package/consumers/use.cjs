@@ -1,7 +1,9 @@
 const assert = require('node:assert/strict');
 const { DomainError, originInHull, Probability, sizingReport, smallest } = require('hullgauge');
 const { dichotomyCount, originInHull: fromRoom } = require('hullgauge/conic');
+const { chart } = require('hullgauge/notebook');
 const { logSpaced } = require('hullgauge/plan');
+const { originInHullExact } = require('hullgauge/precise');
 const { logGamma, normalCdf } = require('hullgauge/special');
 
 assert.equal(originInHull({ n: 10, d: 3 }).value, 0.91015625);
@@ -15,3 +17,6 @@ assert.equal(DomainError.name, 'DomainError');
 assert.equal(Probability.name, 'Probability');
 assert.ok(normalCdf(0) instanceof Probability);
 assert.match(String(sizingReport({ d: 3 })), /surround/);
+assert.equal(String(originInHullExact({ n: 10, d: 3 })), '233/256');
+assert.equal(originInHullExact({ n: 10, d: 3 }).toDecimal(4).toString(), '0.9102');
+assert.match(chart(originInHull, { x: { n: [9, 10] }, args: { d: 3 } }).$schema, /vega-lite.v5/);

@@ -1,7 +1,9 @@
 import assert from 'node:assert/strict';
 import { DomainError, originInHull, Probability, sizingReport, smallest } from 'hullgauge';
 import { dichotomyCount, originInHull as fromRoom } from 'hullgauge/conic';
+import { chart } from 'hullgauge/notebook';
 import { logSpaced } from 'hullgauge/plan';
+import { originInHullExact } from 'hullgauge/precise';
 import { logGamma, normalCdf } from 'hullgauge/special';
 
 assert.equal(originInHull({ n: 10, d: 3 }).value, 0.91015625);
@@ -15,3 +17,6 @@ assert.equal(DomainError.name, 'DomainError');
 assert.equal(Probability.name, 'Probability');
 assert.ok(normalCdf(0) instanceof Probability);
 assert.match(String(sizingReport({ d: 3 })), /surround/);
+assert.equal(String(originInHullExact({ n: 10, d: 3 })), '233/256');
+assert.equal(originInHullExact({ n: 10, d: 3 }).toDecimal(4).toString(), '0.9102');
+assert.match(chart(originInHull, { x: { n: [9, 10] }, args: { d: 3 } }).$schema, /vega-lite.v5/);

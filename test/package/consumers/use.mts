@@ -8,7 +8,9 @@ import {
   smallest,
 } from 'hullgauge';
 import { type LabelArgs, labelSeparability } from 'hullgauge/conic';
+import { type Chart, chart } from 'hullgauge/notebook';
 import { logSpaced } from 'hullgauge/plan';
+import { incompleteBetaDecimal, originInHullExact } from 'hullgauge/precise';
 import { normalCdf } from 'hullgauge/special';
 
 const law: Law = gaussian();
@@ -22,4 +24,15 @@ const numbers: readonly number[] = [
   normalCdf(1).complement,
   ...logSpaced(1, 10, 1),
 ];
-export const all: readonly unknown[] = [law, error, numbers, Probability.fromValue(0.5)];
+const spec: Chart = chart(originInHull, { x: { n: [9, 10] }, series: { d: [2, 3] } });
+const exact: bigint = originInHullExact({ n: 10, d: 3 }).numerator;
+const digits: string = incompleteBetaDecimal('0.5', 2, 0.25, 30).toFixed(20);
+export const all: readonly unknown[] = [
+  spec,
+  exact,
+  digits,
+  law,
+  error,
+  numbers,
+  Probability.fromValue(0.5),
+];
