@@ -227,6 +227,7 @@ export class BetaTail implements Tail {
       this.logExcess = gap < 0.5 ? Math.log1p(-gap) : Math.log(a + a * T);
       logTail = this.logA + power - this.logExcess;
       tail = Math.exp(logTail);
+      this.central = 0.5 - tail;
     } else {
       this.central = a * Math.exp(this.logDensity + power) * this.series.central(a * a);
       tail = 0.5 - this.central;

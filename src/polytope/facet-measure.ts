@@ -34,6 +34,8 @@ const HALF_LOG_PI = 0.57236494292470009;
 const HALF_LOG_TWO_PI = 0.91893853320467274;
 /** Singularities of the integrands lie at |Im s| = pi/2: no piece of Gauss-Legendre is longer. */
 const LONGEST_PIECE = 1.5;
+/** Below this a logarithm has steps of 1e-4 and more, and what lies beyond a cut cannot be summed. */
+const UNRESOLVED = -1e12;
 
 /** A law of points in R^d as the count of facets needs it, d >= 2. */
 export interface FacetModel {
@@ -190,6 +192,12 @@ export function facetsBeyond(
   const form = localForm(model, count);
   const integral = integrateHalfLine(form.at, direction, form.width, LONGEST_PIECE);
   const { means } = integral;
+  const start = form.at(0);
+  if (start < UNRESOLVED && !(integral.log > UNRESOLVED)) {
+    // neighbouring doubles are too far apart for an integral; it is the value at the cut over a slope
+    const error = 64 - 8 * EPSILON * start;
+    return { log: form.constant + start, error, commonError: 0, means };
+  }
   if (integral.log === Number.NEGATIVE_INFINITY) {
     return { log: integral.log, error: 0, commonError: 0, means };
   }

@@ -11,8 +11,8 @@ import { logEulerCharacteristic } from './euler-characteristic.ts';
 import { type LogBound, logUpperBound } from './hole-bounds.ts';
 
 const EPSILON = 2 ** -52;
-/** Relative error of the coefficients with alternating signs, measured up to d = 500. */
-export const EULER_ERROR = 5e-11;
+/** Error of log E chi over 1 + |log|; measured: 1e-14 up to d = 200 against 400 digits. */
+export const EULER_ERROR = 1e-12;
 
 /** A probability from its logarithm, by its smaller tail. */
 export function probabilityFromBound({ log, error }: LogBound): Probability {

@@ -89,8 +89,8 @@ const ALWAYS = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 
  * low for d = 2 and n = 50.
  *
  * Cost: a few milliseconds for an exceedance, of the order of d^2 steps for the estimate; some tens of
- * milliseconds for a guarantee. Accuracy: the upper bound within its `logError`, the Euler characteristic
- * 5e-11.
+ * milliseconds for a guarantee. Accuracy: the upper bound within its `logError`; the logarithm of the Euler
+ * characteristic 1e-14 relative up to d = 200 against 400-digit values.
  *
  * Sources: Coverage processes on spheres and condition numbers for linear programming, Annals of
  * Probability 38 (2010), doi:10.1214/09-AOP489; Living on the edge, Information and Inference 3 (2014), for the
