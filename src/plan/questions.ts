@@ -6,6 +6,7 @@ import { labelSeparability } from '../conic/separability.ts';
 import { originInHull } from '../conic/wendel.ts';
 import { type Count, resolveCount } from '../count.ts';
 import type { Law } from '../law.ts';
+import { hausdorffWithin } from '../polytope/hausdorff.ts';
 import { nextPointInHull } from '../polytope/next-point.ts';
 import { hullVolumeRatio } from '../polytope/volume-ratio.ts';
 import { approxVolumeThreshold } from '../polytope/volume-threshold.ts';
@@ -24,6 +25,8 @@ export interface QuestionRow {
   readonly direction: 'rises' | 'falls';
   /** The laws for which there is a formula; undefined where the law does not matter. */
   readonly laws?: readonly Law['family'][];
+  /** The smallest dimension in which it makes sense; 1 if left out. */
+  readonly leastDimension?: number;
   /** The question at n points in d variables. */
   readonly ask: (args: { n: Count; d: number; law: Law }) => Probability;
   /** The size that the limit theorem would give, to stand beside the exact one. */
@@ -65,6 +68,15 @@ export const questions: readonly QuestionRow[] = [
       name: 'phase transition',
       size: (d, share, law) => approxVolumeThreshold({ d, law, share }),
     },
+  },
+  {
+    name: 'hausdorffWithin',
+    title: 'Is every point of the ball within a quarter of its radius from the hull?',
+    assumes: 'points in the unit ball; a proved lower bound of the probability',
+    direction: 'rises',
+    laws: ['beta'],
+    leastDimension: 2,
+    ask: ({ n, d, law }) => hausdorffWithin({ n, d, distance: 0.25, law }),
   },
   {
     name: 'labelSeparability',

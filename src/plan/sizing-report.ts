@@ -88,6 +88,7 @@ export function sizingReport(args: SizingReportArgs): SizingReport {
   });
   const rows = questions
     .filter(({ laws }) => laws === undefined || laws.includes(law.family))
+    .filter(({ leastDimension = 1 }) => d >= leastDimension)
     .map((question) => rowFor(question, d, n, law, targets));
   return new SizingReport(d, law, n, rows);
 }

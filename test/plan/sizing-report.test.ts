@@ -58,6 +58,21 @@ describe('sizingReport', () => {
     expect(sizingReport({ d: 3 }).n).toBeNull();
   });
 
+  it('adds the questions about the ball for laws in the ball', () => {
+    const asked = (d: number): string[] =>
+      sizingReport({ d, n: 100, law: uniformBall(), targets: [0.5] }).rows.map(
+        (row) => row.question,
+      );
+    expect(asked(3)).toEqual([
+      'originInHull',
+      'nextPointInHull',
+      'hullVolumeRatio',
+      'hausdorffWithin',
+      'labelSeparability',
+    ]);
+    expect(asked(1)).not.toContain('hausdorffWithin');
+  });
+
   it('refuses bad targets by their place', () => {
     expect(() => sizingReport({ d: 3, targets: [0.5, 1] })).toThrow(
       'sizingReport: targets[1] must be a number between 0 and 1, got 1',
