@@ -21,8 +21,8 @@ describe('ball-coverage.md', () => {
   it.each(rows)('d = %s', (...row) => {
     const size = (share: number): string => {
       const args = { d: Number(row[0]), law: uniformBall() };
-      const { value, log } = smallest(hullVolumeRatio, 'n', args, share);
-      return value <= 2 ** 53 ? String(value) : `10^${(log / Math.LN10).toFixed(1)}`;
+      const { value, log, exact } = smallest(hullVolumeRatio, 'n', args, share);
+      return exact ? String(value) : `10^${(log / Math.LN10).toFixed(1)}`;
     };
     expect(row.slice(1)).toEqual([size(0.5), size(0.9), size(0.99)]);
   });
