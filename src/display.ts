@@ -20,17 +20,20 @@ const MAX_DIGITS = 12;
 
 /** Digits that a relative error leaves, from 1 to 12. */
 function digitsFor(relativeError: number): number {
-  if (!(relativeError > 0)) return MAX_DIGITS;
   // An error of 1e-6 leaves six digits, though its logarithm rounds to less.
   const digits = Math.floor(-Math.log(relativeError) / Math.LN10 + 1e-9);
   return Math.max(1, Math.min(MAX_DIGITS, digits));
 }
 
+/** Significant digits without the trailing zeros after a point. */
+function toDigits(value: number, digits: number): string {
+  const text = value.toPrecision(digits);
+  return text.includes('.') ? text.replace(/\.?0+(?=e|$)/, '') : text;
+}
+
 /** A double to at most twelve significant digits, without trailing zeros. */
 export function formatNumber(value: number, relativeError = 0): string {
-  const text = value.toPrecision(digitsFor(relativeError));
-  if (!text.includes('.')) return text;
-  return text.replace(/\.?0+(?=e|$)/, '');
+  return toDigits(value, digitsFor(relativeError));
 }
 
 /** ln 10 as a part that times an exponent below 2^31 is exact, and the rest. */
@@ -48,13 +51,12 @@ export function formatExponential(log: number, logError = 0): string {
   let exponent = Math.floor(log / Math.LN10);
   const digits = digitsFor(error);
   const rest = log - exponent * LN10_HIGH - exponent * LN10_LOW;
-  let mantissa = Math.exp(rest).toPrecision(digits);
+  let mantissa = toDigits(Math.exp(rest), digits);
   // Rounding may carry into the exponent.
-  if (mantissa.startsWith('10')) {
-    mantissa = (1).toPrecision(digits);
+  if (mantissa === '10' || mantissa === '1e+1') {
+    mantissa = '1';
     exponent++;
   }
-  if (mantissa.includes('.')) mantissa = mantissa.replace(/\.?0+$/, '');
   return `${mantissa}e${exponent < 0 ? '-' : '+'}${Math.abs(exponent)}`;
 }
 
@@ -81,7 +83,7 @@ abstract class ShownResult {
   /** Text for a string hint; any arithmetic or comparison throws, so that no tail is lost by accident. */
   [Symbol.toPrimitive](hint: string): string {
     if (hint === 'string') return this.toString();
-    throw new TypeError('not a plain number: read .value or .log');
+    throw new TypeError('read .value or .log');
   }
 }
 
@@ -100,6 +102,11 @@ function withNotebookDisplay(base: typeof ShownResult): typeof ShownResult {
  * A result that shows itself in notebooks and refuses to be used as a plain number.
  */
 export const Displayable: typeof ShownResult = /* @__PURE__ */ withNotebookDisplay(ShownResult);
+
+/** Whether a value is an object of one of the library's kinds, from any copy of it or plain data. */
+export function hasKind(value: unknown, kind: string): boolean {
+  return typeof value === 'object' && value !== null && (value as { kind?: unknown }).kind === kind;
+}
 
 /** A number as JSON can hold it: infinities become strings. */
 export function toPlainNumber(value: number): number | string {

@@ -6,6 +6,7 @@ import {
   type DisplayRow,
   formatExponential,
   formatNumber,
+  hasKind,
   toPlainNumber,
 } from './display.ts';
 import { checkNumber, DomainError } from './domain.ts';
@@ -135,5 +136,5 @@ export class LogNumber extends Displayable {
 
 /** Whether a value is a log number, from this copy of the library or another, or its plain data. */
 export function isLogNumber(value: unknown): value is LogNumber {
-  return typeof value === 'object' && value !== null && (value as LogNumber).kind === 'logNumber';
+  return hasKind(value, 'logNumber');
 }

@@ -9,6 +9,7 @@ import {
   type DisplayRow,
   formatExponential,
   formatNumber,
+  hasKind,
   toPlainNumber,
 } from './display.ts';
 import { checkNumber, DomainError } from './domain.ts';
@@ -267,9 +268,7 @@ function tailText(value: number, log: number, logError: number): string {
 
 /** Whether a value is a probability, from this copy of the library or another, or its plain data. */
 export function isProbability(value: unknown): value is Probability {
-  return (
-    typeof value === 'object' && value !== null && (value as Probability).kind === 'probability'
-  );
+  return hasKind(value, 'probability');
 }
 
 /** The probability of the complementary event. */
