@@ -57,7 +57,7 @@ export class LogNumber extends Displayable {
   static fromLog(log: number, logError = 0): LogNumber {
     checkNumber('LogNumber.fromLog', 'log', log);
     checkNumber('LogNumber.fromLog', 'logError', logError, 0);
-    return new LogNumber(log, logError);
+    return make(log, logError);
   }
 
   /**
@@ -69,7 +69,7 @@ export class LogNumber extends Displayable {
    */
   static of(value: number): LogNumber {
     checkNumber('LogNumber.of', 'value', value, 0);
-    return new LogNumber(Math.log(value), 0);
+    return make(Math.log(value), 0);
   }
 
   /**
@@ -87,7 +87,7 @@ export class LogNumber extends Displayable {
     const logError = Number(plain.logError);
     checkNumber('LogNumber.from', 'log', log);
     checkNumber('LogNumber.from', 'logError', logError, 0);
-    return new LogNumber(log, logError);
+    return make(log, logError);
   }
 
   /**
@@ -132,6 +132,11 @@ export class LogNumber extends Displayable {
       ['error of the log', formatNumber(this.logError, 1e-2)],
     ];
   }
+}
+
+// Outside the class: a class that names itself in its body is renamed by the build.
+function make(log: number, logError: number): LogNumber {
+  return new LogNumber(log, logError);
 }
 
 /** Whether a value is a log number, from this copy of the library or another, or its plain data. */

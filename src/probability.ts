@@ -100,16 +100,7 @@ export class Probability extends Displayable {
    * @throws A {@link DomainError} if a field is out of range or the four contradict each other
    */
   static of(fields: ProbabilityFields): Probability {
-    const fn = 'Probability.of';
-    // Anything but an object is refused for the value that it lacks.
-    const { value, complement, log, logComplement, logError = 0 } = fields ?? {};
-    if (Math.abs(value + complement - 1) > SLACK) {
-      throw new DomainError(fn, 'complement', `1 - value (value is ${value})`, complement);
-    }
-    checkTail(fn, 'value', value, 'log', log);
-    checkTail(fn, 'complement', complement, 'logComplement', logComplement);
-    checkNumber(fn, 'logError', logError, 0);
-    return new Probability(value, complement, log, logComplement, logError);
+    return checkedFields(fields);
   }
 
   /**
@@ -194,7 +185,7 @@ export class Probability extends Displayable {
     if (!isProbability(plain)) {
       throw new DomainError('Probability.from', 'plain', "an object of kind 'probability'", plain);
     }
-    return Probability.of({
+    return checkedFields({
       ...plain,
       log: Number(plain.log),
       logComplement: Number(plain.logComplement),
@@ -236,6 +227,20 @@ export class Probability extends Displayable {
       ['logError', formatNumber(this.logError, 1e-2)],
     ];
   }
+}
+
+// Outside the class: a class that names itself in its body is renamed by the CommonJS build.
+function checkedFields(fields: ProbabilityFields): Probability {
+  const fn = 'Probability.of';
+  // Anything but an object is refused for the value that it lacks.
+  const { value, complement, log, logComplement, logError = 0 } = fields ?? {};
+  if (Math.abs(value + complement - 1) > SLACK) {
+    throw new DomainError(fn, 'complement', `1 - value (value is ${value})`, complement);
+  }
+  checkTail(fn, 'value', value, 'log', log);
+  checkTail(fn, 'complement', complement, 'logComplement', logComplement);
+  checkNumber(fn, 'logError', logError, 0);
+  return new Probability(value, complement, log, logComplement, logError);
 }
 
 function checkedLog(fn: string, name: string, log: number, logError: number): Probability {

@@ -1,5 +1,12 @@
 const assert = require('node:assert/strict');
-const { DomainError, originInHull, Probability, sizingReport, smallest } = require('hullgauge');
+const {
+  DomainError,
+  LogNumber,
+  originInHull,
+  Probability,
+  sizingReport,
+  smallest,
+} = require('hullgauge');
 const { dichotomyCount, originInHull: fromRoom } = require('hullgauge/conic');
 const { chart } = require('hullgauge/notebook');
 const { logSpaced } = require('hullgauge/plan');
@@ -15,6 +22,7 @@ assert.deepEqual(logSpaced(1, 10, 1), [1, 10]);
 assert.throws(() => logGamma(-1), DomainError); // one class across subpaths
 assert.equal(DomainError.name, 'DomainError');
 assert.equal(Probability.name, 'Probability');
+assert.equal(LogNumber.name, 'LogNumber');
 assert.ok(normalCdf(0) instanceof Probability);
 assert.match(String(sizingReport({ d: 3 })), /surround/);
 assert.equal(String(originInHullExact({ n: 10, d: 3 })), '233/256');

@@ -1,5 +1,12 @@
 import assert from 'node:assert/strict';
-import { DomainError, originInHull, Probability, sizingReport, smallest } from 'hullgauge';
+import {
+  DomainError,
+  LogNumber,
+  originInHull,
+  Probability,
+  sizingReport,
+  smallest,
+} from 'hullgauge';
 import { dichotomyCount, originInHull as fromRoom } from 'hullgauge/conic';
 import { chart } from 'hullgauge/notebook';
 import { logSpaced } from 'hullgauge/plan';
@@ -15,6 +22,7 @@ assert.deepEqual(logSpaced(1, 10, 1), [1, 10]);
 assert.throws(() => logGamma(-1), DomainError); // one class across subpaths
 assert.equal(DomainError.name, 'DomainError');
 assert.equal(Probability.name, 'Probability');
+assert.equal(LogNumber.name, 'LogNumber');
 assert.ok(normalCdf(0) instanceof Probability);
 assert.match(String(sizingReport({ d: 3 })), /surround/);
 assert.equal(String(originInHullExact({ n: 10, d: 3 })), '233/256');
