@@ -108,8 +108,8 @@ export {
   largest,
   type ParameterOf,
   smallest,
-  type Target,
 } from './plan/smallest.ts';
+export type { Target } from './plan/target.ts';
 export {
   type ApproxVolumeThresholdArgs,
   approxVolumeThreshold,

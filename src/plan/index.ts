@@ -17,5 +17,5 @@ export {
   largest,
   type ParameterOf,
   smallest,
-  type Target,
 } from './smallest.ts';
+export type { Target } from './target.ts';

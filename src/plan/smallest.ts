@@ -2,22 +2,12 @@
  * Inversion: the smallest or largest argument at which a question reaches a target. One mechanism
  * serves every question and every numeric argument.
  */
-import { checkChoice, checkOptions, DomainError } from '../domain.ts';
+import { DomainError } from '../domain.ts';
 import { type Bracket, narrow, type Probe } from '../numeric/monotone-search.ts';
-import { isProbability, Probability } from '../probability.ts';
+import type { Probability } from '../probability.ts';
 import { type Condition, conditionOf, type Evaluation } from './question.ts';
+import { readTarget, type Target, targetText } from './target.ts';
 import { type Walk, walkFrom, walkUp } from './walk.ts';
-
-/**
- * What the probability has to reach: a number means "at least". `complementAtMost` names a target near
- * 1 without losing it. A {@link Probability} may stand for any of the numbers.
- */
-export type Target =
-  | number
-  | Probability
-  | { readonly atLeast: number | Probability }
-  | { readonly atMost: number | Probability }
-  | { readonly complementAtMost: number | Probability };
 
 /** The answer of {@link smallest} and {@link largest}. */
 export interface Answer {
@@ -163,39 +153,6 @@ function bind(
   return conditionOf(question, parameter, args, goal, atMost);
 }
 
-function readTarget(fn: string, target: Target): { goal: Probability; atMost: boolean } {
-  if (typeof target === 'number' || isProbability(target)) {
-    return { goal: toGoal(fn, 'target', target), atMost: false };
-  }
-  const forms = ['atLeast', 'atMost', 'complementAtMost'] as const;
-  checkOptions(fn, target, forms, 'target');
-  const keys = Object.keys(target);
-  if (keys.length !== 1) {
-    throw new DomainError(
-      fn,
-      'target',
-      `exactly one of ${forms.join(', ')}`,
-      `${keys.length} of them`,
-    );
-  }
-  const form = keys[0];
-  checkChoice(fn, 'target', form, forms);
-  const given = (target as Record<string, unknown>)[form];
-  const goal = toGoal(fn, `target.${form}`, given, form === 'complementAtMost');
-  return { goal, atMost: form === 'atMost' };
-}
-
-function toGoal(fn: string, parameter: string, given: unknown, complement = false): Probability {
-  if (typeof given === 'number' && given >= 0 && given <= 1) {
-    return complement ? Probability.fromComplement(given) : Probability.fromValue(given);
-  }
-  if (isProbability(given)) {
-    const plain = Probability.from(given);
-    return complement ? Probability.fromLogComplement(plain.log, plain.logError) : plain;
-  }
-  throw new DomainError(fn, parameter, 'a number from 0 to 1', given);
-}
-
 function start(condition: Condition): Walk {
   const walk = walkUp(condition);
   if (walk !== undefined) return walk;
@@ -321,11 +278,4 @@ function unreachable(fn: string, condition: Condition, walk: Walk, target: Targe
 
 function text(evaluation: Evaluation): string {
   return evaluation.probability.toString();
-}
-
-function targetText(target: Target): unknown {
-  if (typeof target === 'number') return target;
-  if (isProbability(target)) return Probability.from(target).toString();
-  const [form, value] = Object.entries(target)[0] as [string, number | Probability];
-  return `${form} ${isProbability(value) ? Probability.from(value).toString() : value}`;
 }
