@@ -117,7 +117,7 @@ function productStandardErrors(first: Cone, second: Cone): number[] | undefined 
 /**
  * The polar cone: all vectors at a right or obtuse angle to every vector of the cone.
  *
- * $$ C^\circ = \{ y : \langle x, y \rangle \le 0 \text{ for all } x \in C \}, \qquad v_k(C^\circ) = v_{n-k}(C). $$
+ * $$ C^\circ = \lbrace y : \langle x, y \rangle \le 0 \text{ for all } x \in C \rbrace, \qquad v_k(C^\circ) = v_{n-k}(C). $$
  *
  * Exact, given the cone.
  *

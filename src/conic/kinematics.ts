@@ -13,7 +13,7 @@ import { logProductVolume } from './cone-algebra.ts';
 /**
  * The probability that two cones, one of them rotated uniformly at random, share more than the origin.
  *
- * $$ P(C \cap QD \ne \{0\}) = 2 \sum_{i \ge 0} v_{n+1+2i}(C \times D), $$
+ * $$ P(C \cap QD \ne \lbrace 0\rbrace) = 2 \sum_{i \ge 0} v_{n+1+2i}(C \times D), $$
  *
  * for closed convex cones in $\mathbb{R}^n$ that are not both subspaces; two subspaces meet with probability 1
  * if their dimensions exceed $n$ together, else with probability 0.
@@ -65,7 +65,7 @@ export function conesMeet(first: Cone, second: Cone): Probability {
  * The probability that a cone and a uniformly random subspace of the given codimension share more than
  * the origin.
  *
- * $$ P(C \cap L \ne \{0\}) = 2 \sum_{i \ge 0} v_{m+1+2i}(C), \qquad m = \operatorname{codim} L, $$
+ * $$ P(C \cap L \ne \lbrace 0\rbrace) = 2 \sum_{i \ge 0} v_{m+1+2i}(C), \qquad m = \operatorname{codim} L, $$
  *
  * for a closed convex cone that is not a subspace; a subspace of dimension $j$ is met if $j > m$.
  * The complement is $2 (v_{m-1} + v_{m-3} + \dots)$: the probability that m random linear equations

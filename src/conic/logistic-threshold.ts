@@ -74,7 +74,7 @@ export function logisticThreshold(args: LogisticThresholdArgs): number {
  * The largest signal at which a logistic fit with d/n = `ratio` still exists in the limit: the inverse
  * of {@link logisticThreshold}.
  *
- * $$ \gamma^* = \max \{ \gamma : h(\beta_0, \gamma) \ge \text{ratio} \}. $$
+ * $$ \gamma^* = \max \lbrace \gamma : h(\beta_0, \gamma) \ge \text{ratio} \rbrace. $$
  *
  * At offset 0 the threshold falls from 1/2 to 0 as the signal grows. At a large offset a little signal
  * first evens the classes out and raises the threshold; the answer is on the falling side.

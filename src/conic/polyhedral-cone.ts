@@ -31,7 +31,7 @@ const LARGEST_SPAN = 4;
  * The cone of all non-negative combinations of the given vectors, with its exact conic intrinsic volumes,
  * for vectors that span at most four dimensions.
  *
- * $$ C = \Bigl\{ \sum_i y_i g_i : y \ge 0 \Bigr\} \subset \mathbb{R}^n, \qquad
+ * $$ C = \Bigl\lbrace \sum_i y_i g_i : y \ge 0 \Bigr\rbrace \subset \mathbb{R}^n, \qquad
  *    v_k(C) = \sum_{\dim F = k} \angle(F)\, \angle(N_F C). $$
  *
  * The generators may be redundant, dependent, and may contain a subspace between them.

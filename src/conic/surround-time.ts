@@ -17,7 +17,7 @@ import { wendel } from './wendel.ts';
 /**
  * The distribution of the number of points that it takes to surround the target in R^d.
  *
- * With $T = \min\{n : 0 \in \operatorname{conv}(X_1,\dots,X_n)\}$,
+ * With $T = \min\lbrace n : 0 \in \operatorname{conv}(X_1,\dots,X_n)\rbrace$,
  *
  * $$ P(T \le n) = P\bigl(\mathrm{Bin}(n-1,\tfrac12) \ge d\bigr), \qquad
  *    P(T = n) = \binom{n-2}{d-1} 2^{1-n}, $$

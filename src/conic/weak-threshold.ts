@@ -123,7 +123,9 @@ export interface WeakThresholdArgs {
  * ```
  */
 export function weakThreshold(args: WeakThresholdArgs): {
+  /** Non-zeros per measurement, s/m. */
   readonly perMeasurement: number;
+  /** Non-zeros per variable, s/n. */
   readonly perVariable: number;
 } {
   const fn = 'weakThreshold';

@@ -28,7 +28,7 @@ export interface OriginInHullArgs {
  * For independent points whose laws are symmetric about the target (or any joint law unchanged by
  * flipping signs) and that lie in general position, Wendel's formula holds whatever the law:
  *
- * $$ P(0 \in \operatorname{conv}\{X_1,\dots,X_n\}) = P\bigl(\mathrm{Bin}(n-1,\tfrac12) \ge d\bigr)
+ * $$ P(0 \in \operatorname{conv}\lbrace X_1,\dots,X_n\rbrace) = P\bigl(\mathrm{Bin}(n-1,\tfrac12) \ge d\bigr)
  *    = I_{1/2}(d,\, n-d). $$
  *
  * Assumptions: with probability 1 every d of the points are linearly independent, seen from the

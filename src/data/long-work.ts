@@ -11,7 +11,10 @@ export interface LongWorkOptions {
   /** Called after each slice and at the end with the work done and the whole. */
   readonly onProgress?: (done: number, total: number) => void;
   /** The work stops with an error soon after `aborted` turns true; an `AbortSignal` will do. */
-  readonly signal?: { readonly aborted: boolean };
+  readonly signal?: {
+    /** Whether to stop. */
+    readonly aborted: boolean;
+  };
 }
 
 /** Operations in a slice. */

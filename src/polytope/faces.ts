@@ -82,7 +82,7 @@ export function expectedFaces(args: ExpectedFacesArgs): LogNumber {
  * are extreme, for Gaussian points of any mean and covariance, and for ball, sphere, beta, beta-prime
  * and t laws.
  *
- * $$ E f_0(P_n) = n\, P(X_n \notin \operatorname{conv}\{X_1, \dots, X_{n-1}\}), $$
+ * $$ E f_0(P_n) = n\, P(X_n \notin \operatorname{conv}\lbrace X_1, \dots, X_{n-1}\rbrace), $$
  *
  * so it is n times the complement of {@link nextPointInHull} at n - 1 points. It is
  * {@link expectedFaces} with k = 0; formula, assumptions, accuracy and sources are there.

@@ -74,7 +74,7 @@ const ALWAYS = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 
  *
  * Proved, for $0 < t < 1$, $h = 1 - t$, F and v the distribution function and tail of one coordinate:
  *
- * $$P(d_H > t) \le p\, \mathbb{E}\,\#\{\text{facets of height in } (0, h]\} + P(0 \notin P),$$
+ * $$P(d_H > t) \le p\, \mathbb{E}\,\#\lbrace \text{facets of height in } (0, h]\rbrace + P(0 \notin P),$$
  *
  * p the probability that the foot of the perpendicular from 0 lies in its facet; the count first rises
  * with n, and the bound is 1 there. From below the best of the second-moment bound for the uniform measure

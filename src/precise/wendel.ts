@@ -61,7 +61,7 @@ export interface OriginInHullDecimalArgs {
  * The probability that n points surround the target in R^d as an exact fraction in lowest terms, for n
  * up to 100,000.
  *
- * $$ P(0 \in \operatorname{conv}\{X_1,\dots,X_n\}) = 2^{1-n} \sum_{k=d}^{n-1} \binom{n-1}{k} $$
+ * $$ P(0 \in \operatorname{conv}\lbrace X_1,\dots,X_n\rbrace) = 2^{1-n} \sum_{k=d}^{n-1} \binom{n-1}{k} $$
  *
  * Assumptions: as for `originInHull`, the same question in doubles: a joint law unchanged by flipping
  * signs, points in general position; too optimistic for skewed laws.

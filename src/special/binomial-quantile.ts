@@ -16,7 +16,7 @@ import { TAIL_SLOTS } from './tail-result.ts';
 /**
  * The smallest number of successes in n independent trials whose distribution function reaches `prob`.
  *
- * $$ \min \{ k : P(X \le k) \ge \mathrm{prob} \} $$
+ * $$ \min \lbrace k : P(X \le k) \ge \mathrm{prob} \rbrace $$
  *
  * @param prob - a number from 0 to 1, or a Probability, which is compared by its smaller tail
  * @param n - number of trials; an integer from 0 to 2^53 - 1
