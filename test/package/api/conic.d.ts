@@ -1,3 +1,17 @@
+export interface ApproxSeparabilityArgs {
+    readonly n: number;
+    readonly d: number;
+    readonly signal?: number;
+    readonly classShare?: number;
+    readonly offset?: number;
+    readonly intercept?: boolean;
+}
+
+export interface ApproxTotalOrderOptions {
+    readonly trials: number;
+    readonly seed: number;
+}
+
 export interface ArrangementArgs {
     readonly n: number;
     readonly d: number;
@@ -7,6 +21,10 @@ export interface ArrangementArgs {
 
 export interface ArrangementFacesArgs extends ArrangementArgs {
     readonly k: number;
+}
+
+export interface ChiBarSquaredOptions {
+    readonly null?: 'lineality' | 'origin';
 }
 
 export interface Cone {
@@ -23,6 +41,10 @@ export interface Cone {
     readonly standardErrors?: readonly number[];
 }
 
+export interface EBarSquaredOptions {
+    readonly observations: number;
+}
+
 export interface JointWalkHullArgs {
     readonly walks: readonly number[];
     readonly bridges?: readonly number[];
@@ -35,6 +57,23 @@ export interface LabelArgs {
     readonly intercept?: boolean;
 }
 
+export interface LogisticSignalArgs {
+    readonly ratio: number;
+    readonly offset?: number;
+}
+
+export interface LogisticThresholdArgs {
+    readonly signal: number;
+    readonly offset?: number;
+    readonly intercept?: boolean;
+}
+
+export interface OrderRestrictedLaw extends Distribution {
+    readonly weights: readonly number[];
+    pValue(x: number): number;
+    logPdf(x: number): number;
+}
+
 export interface OriginInHullArgs {
     readonly n: Count;
     readonly d: number;
@@ -45,6 +84,10 @@ export interface OriginInHullLowerBoundArgs {
     readonly d: number;
     readonly depth: number;
     readonly generalPosition?: boolean;
+}
+
+export interface OrthantWeightsOptions {
+    readonly covariance: readonly (readonly number[])[];
 }
 
 export interface RandomCone {
@@ -81,6 +124,11 @@ export interface RecoveryBoundsArgs {
     readonly measurements: number;
 }
 
+export interface SimpleTreeOptions {
+    readonly control?: number;
+    readonly treatment?: number;
+}
+
 export interface WalkHullArgs {
     readonly steps: number;
     readonly d: number;
@@ -97,11 +145,22 @@ export declare function approxNuclearNormDimension(options: {
     columns: number;
 }): number;
 
+export declare function approxPolyhedralCone(generators: readonly ArrayLike<number>[], options: {
+    trials: number;
+    seed: number;
+}): Cone;
+
+export declare function approxSeparability(args: ApproxSeparabilityArgs): Probability;
+
+export declare function approxTotalOrder(weights: readonly number[], options: ApproxTotalOrderOptions): readonly number[];
+
 export declare function arrangementFaces(args: ArrangementFacesArgs): LogNumber;
 
 export declare function arrangementRegions(args: ArrangementArgs): LogNumber;
 
 export declare function bridgeHull(options: WalkHullArgs): Probability;
+
+export declare function chiBarSquared(weights: readonly number[] | Cone, options?: ChiBarSquaredOptions): OrderRestrictedLaw;
 
 export declare function circularCone(n: number, angle: number): Cone;
 
@@ -114,6 +173,8 @@ export declare function conesMeet(first: Cone, second: Cone): Probability;
 export declare function coverEfronCone(args: RandomConeArgs): RandomCone;
 
 export declare function dichotomyCount(args: LabelArgs): LogNumber;
+
+export declare function eBarSquared(weights: readonly number[], options: EBarSquaredOptions): OrderRestrictedLaw;
 
 export declare function halfspace(n: number): Cone;
 
@@ -141,13 +202,21 @@ export declare function linfDescentCone(options: {
 
 export declare function logisticFitExists(args: LabelArgs): Probability;
 
+export declare function logisticSignal(args: LogisticSignalArgs): number;
+
+export declare function logisticThreshold(args: LogisticThresholdArgs): number;
+
 export declare function originInHull(args: OriginInHullArgs): Probability;
 
 export declare function originInHullLowerBound(args: OriginInHullLowerBoundArgs): Probability;
 
 export declare function orthant(n: number): Cone;
 
+export declare function orthantWeights(options: OrthantWeightsOptions): readonly number[];
+
 export declare function polarCone(cone: Cone): Cone;
+
+export declare function polyhedralCone(generators: readonly ArrayLike<number>[]): Cone;
 
 export declare function productCone(first: Cone, second: Cone): Cone;
 
@@ -160,7 +229,11 @@ export declare function recoveryBounds(args: RecoveryBoundsArgs): {
 
 export declare function recoverySuccess(args: RecoveryArgs): Probability;
 
+export declare function reversedWeights(weights: readonly number[]): readonly number[];
+
 export declare function schlaefliCone(args: RandomConeArgs): RandomCone;
+
+export declare function simpleTree(k: number, options?: SimpleTreeOptions): readonly number[];
 
 export declare function subspace(options: {
     dimension: number;
@@ -170,6 +243,8 @@ export declare function subspace(options: {
 export declare function surroundTime(args: {
     readonly d: number;
 }): Distribution;
+
+export declare function totalOrder(k: number, weights?: readonly number[]): readonly number[];
 
 export declare function walkHull(options: WalkHullArgs): Probability;
 

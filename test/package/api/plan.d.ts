@@ -14,7 +14,7 @@ export interface SizingAnswer {
     readonly target: number;
     readonly answer: Answer | null;
     readonly reason?: string;
-    readonly limit?: number;
+    readonly limit?: Count;
 }
 
 export declare class SizingReport extends Displayable {

@@ -1,7 +1,18 @@
+export interface BetaPoint {
+    readonly x: number;
+    readonly y: number;
+    readonly logX: number;
+    readonly logY: number;
+}
+
 export interface ComplexNumber {
     readonly re: number;
     readonly im: number;
 }
+
+export declare function binomialCdf(k: number, n: number, p?: number, q?: number): Probability;
+
+export declare function binomialQuantile(prob: number | Probability, n: number, p?: number, q?: number): number;
 
 export declare function chiSquaredCdf(x: number, df: number): Probability;
 
@@ -17,6 +28,10 @@ export declare function expm1mx(x: number): number;
 
 export declare function faddeeva(re: number, im: number): ComplexNumber;
 
+export declare function incompleteBeta(a: number, b: number, x: number, y?: number): Probability;
+
+export declare function incompleteBetaInverse(a: number, b: number, p: number | Probability): BetaPoint;
+
 export declare function incompleteGamma(a: number, x: number): Probability;
 
 export declare function incompleteGammaInverse(a: number, p: number | Probability): number;
@@ -30,6 +45,8 @@ export declare function logAddExp(a: number, b: number): number;
 export declare function logBeta(a: number, b: number): number;
 
 export declare function logBinomial(n: number, k: number): number;
+
+export declare function logBinomialPmf(k: number, n: number, p?: number, q?: number): number;
 
 export declare function logFactorial(n: number): number;
 
