@@ -15,27 +15,45 @@ const MAX_STEPS = 10000;
 
 /** I_x(a, b) B(a, b) / (x^a y^b) for x at or below the mean, by the fraction. */
 export function betaFraction(a: number, b: number, x: number, y: number, lambda: number): number {
-  // The convergents are summed as a series of their differences, with the rounding errors carried: as
-  // a running product they would lose two bits every hundred steps. The first convergent is
-  // 1/(lambda + 1); digits are lost only where the result is far below it, at the mean of large shapes.
+  const nu = a + b;
+  // Forwards only to see how many steps it takes: the differences of the convergents alternate, and at
+  // the mean of large shapes they cancel.
   let d = (a + 1) / a / (lambda + 1);
   let change = d;
   let sum = d;
-  let carry = 0;
-  const nu = a + b;
-  for (let n = 1; n < MAX_STEPS; n++) {
-    const inverse = 1 / (a + 2 * n - 1);
-    const t = n * ((b - n) * x) * inverse;
-    const numerator = (a + n - 1) * inverse * t * ((nu + (n - 1)) * x);
-    const denominator = n + t + ((a + n) / (a + 2 * n + 1)) * (lambda + 1 + n * (1 + y));
+  let steps = 0;
+  while (Math.abs(change) > 3e-17 * sum) {
+    if (++steps === MAX_STEPS) {
+      throw new Error(`fraction of the incomplete beta function at a = ${a}, b = ${b}, x = ${x}`);
+    }
+    const t = innerTerm(a, b, x, steps);
+    const numerator = partialNumerator(a, nu, x, steps, t);
+    const denominator = partialDenominator(a, y, lambda, steps, t);
     const next = 1 / (denominator + numerator * d);
     change *= -numerator * d * next;
     d = next;
-    const term = change + carry;
-    const total = sum + term;
-    carry = sum - total + term;
-    sum = total;
-    if (Math.abs(change) <= 3e-17 * sum) return sum;
+    sum += change;
   }
-  throw new Error(`fraction of the incomplete beta function at a = ${a}, b = ${b}, x = ${x}`);
+  // Backwards every step forgets most of the rounding before it.
+  let below = 0;
+  for (let n = steps; n >= 1; n--) {
+    const t = innerTerm(a, b, x, n);
+    below = partialNumerator(a, nu, x, n, t) / (partialDenominator(a, y, lambda, n, t) + below);
+  }
+  return 1 / ((a / (a + 1)) * (lambda + 1) + below);
+}
+
+/** n (b - n) x / (a + 2 n - 1), a factor of A_n and a part of B_n. */
+function innerTerm(a: number, b: number, x: number, n: number): number {
+  return (n * ((b - n) * x)) / (a + 2 * n - 1);
+}
+
+/** A_n. */
+function partialNumerator(a: number, nu: number, x: number, n: number, t: number): number {
+  return ((a + n - 1) / (a + 2 * n - 1)) * t * ((nu + (n - 1)) * x);
+}
+
+/** B_n. */
+function partialDenominator(a: number, y: number, lambda: number, n: number, t: number): number {
+  return n + t + ((a + n) / (a + 2 * n + 1)) * (lambda + 1 + n * (1 + y));
 }
