@@ -123,7 +123,7 @@ export function linfDescentCone(options: { n: number; saturated: number }): Cone
 
 /**
  * From here on the second-order expansion is exact to rounding: its error is a share of about 1/n of a
- * correction that is itself below 1, as the sums confirm to 6e-15 of the mean.
+ * correction that is itself below 1, as the sums confirm to the 1e-13 that their rounding leaves.
  */
 const EXPANDED = 1e7;
 /** Standard deviations on either side of the mean that the sums for the moments reach. */

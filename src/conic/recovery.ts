@@ -7,9 +7,11 @@
  */
 import { checkChoice, checkInteger, checkNumber, checkOptions, DomainError } from '../domain.ts';
 import { paritySplit } from '../numeric/parity-split.ts';
+import { logSmoothSum } from '../numeric/smooth-sum.ts';
 import { complementOf, type Probability, probabilityFromTail } from '../probability.ts';
 import type { Cone } from './cone.ts';
 import { descentSequence } from './descent-cones.ts';
+import { secondOrderMoments } from './weak-threshold.ts';
 import { wendel } from './wendel.ts';
 
 /** Arguments of {@link recoverySuccess}. */
@@ -55,7 +57,8 @@ export type RecoveryArgs =
  * constant for the other two.
  *
  * Accuracy: relative error of the smaller tail at most $10^{-11} \max(1, |\ln P|)$ for the l1 models up to
- * n = 10000, $10^{-14}$ for the other two; `logError` bounds it in every case.
+ * n = 10000, $10^{-14}$ for the other two; `logError` bounds it in every case. It grows in proportion to
+ * n: $10^{-7}$ at $n = 10^8$, and beyond $10^{15}$ an l1 probability has no digits left.
  *
  * Source: Counting faces of randomly projected polytopes when the projection radically lowers
  * dimension, Journal of the American Mathematical Society 22 (2009), arXiv:math/0607364; Counting
@@ -89,15 +92,48 @@ export function recoverySuccess(args: RecoveryArgs): Probability {
     if (support === 0) return certain();
     // From here on measurements < n. With all coordinates in the support the cone is a half-space.
     if (support === n) return complementOf(certain());
-    const sequence = model === 'l1' ? 'absolute' : 'nonnegative';
-    const { term, first, last } = descentSequence(sequence, n, support);
-    return complementOf(paritySplit(term, measurements, first, last));
+    return l1Success(model, n, support, measurements);
   }
   // The kernel misses R^s x R_+^(n - s): no positive combination of n - s random vectors in R^(m - s)
   if (measurements <= support) {
     return measurements < support || support < n ? complementOf(certain()) : certain();
   }
   return complementOf(wendel(n - support, measurements - support));
+}
+
+/** Beyond this many terms the sum is taken as an integral. */
+const MANY_TERMS = 10_000;
+/** Terms this far below the first do not count. */
+const CUT = 41;
+
+/** The two l1 models for 0 < sparsity < n and measurements < n. */
+function l1Success(
+  model: 'l1' | 'nonnegativeL1',
+  n: number,
+  sparsity: number,
+  measurements: number,
+): Probability {
+  const sequence = model === 'l1' ? 'absolute' : 'nonnegative';
+  const { term, first, last } = descentSequence(sequence, n, sparsity);
+  const { mean, variance } = secondOrderMoments(n, sparsity, model === 'l1' ? 2 : 1);
+  const deviation = Math.sqrt(Math.max(variance, 0));
+  if (measurements > first && deviation > MANY_TERMS / 5) {
+    const error = new Float64Array(1);
+    const direction = measurements >= mean ? 1 : -1;
+    const start = measurements + direction;
+    // over a distance at which rounding does not hide it
+    const distance = Math.max(2, Math.round(deviation / 50));
+    const end = start + direction * distance;
+    const inside = end >= first && end <= last;
+    const fall = inside ? Math.abs(term(start, error) - term(end, error)) / distance : 1;
+    if (Math.min(CUT / fall, 9 * deviation) > 2 * MANY_TERMS) {
+      const scale = Math.min(deviation, 4 / fall);
+      const log = Math.min(0, Math.LN2 + logSmoothSum(term, start, direction, scale, error));
+      const side = direction === 1 ? 'upper' : 'lower';
+      return probabilityFromTail(Math.exp(log), log, side, error[0] as number);
+    }
+  }
+  return complementOf(paritySplit(term, measurements, first, last));
 }
 
 function certain(): Probability {
@@ -107,7 +143,14 @@ function certain(): Probability {
 /** Arguments of {@link recoveryBounds}. */
 export interface RecoveryBoundsArgs {
   /** The descent cone: a cone, or just its ambient and statistical dimension. */
-  readonly cone: Cone | { readonly ambient: number; readonly statisticalDimension: number };
+  readonly cone:
+    | Cone
+    | {
+        /** Dimension of the space. */
+        readonly ambient: number;
+        /** Expected squared length of the projection of a standard Gaussian vector to the cone. */
+        readonly statisticalDimension: number;
+      };
   /** Number of measurements; an integer from 0 to the ambient dimension. */
   readonly measurements: number;
 }
@@ -118,10 +161,10 @@ export interface RecoveryBoundsArgs {
  *
  * With $h(u) = (1+u)\ln(1+u) - u$, $\delta$ the statistical dimension, $\delta^\circ = n - \delta$ and $l = |m - \delta|$,
  *
- * $$ m \ge \delta: \ P(\text{failure}) \le \exp\Bigl(-\tfrac12 \max\bigl\{\delta\, h(l/\delta),\
- *    \delta^\circ h(-l/\delta^\circ)\bigr\}\Bigr), \qquad
- *    m \le \delta: \ P(\text{success}) \le \exp\Bigl(-\tfrac12 \max\bigl\{\delta\, h(-l/\delta),\
- *    \delta^\circ h(l/\delta^\circ)\bigr\}\Bigr). $$
+ * $$ m \ge \delta: \ P(\text{failure}) \le \exp\Bigl(-\tfrac12 \max\bigl\lbrace \delta\, h(l/\delta),\
+ *    \delta^\circ h(-l/\delta^\circ)\bigr\rbrace \Bigr), \qquad
+ *    m \le \delta: \ P(\text{success}) \le \exp\Bigl(-\tfrac12 \max\bigl\lbrace \delta\, h(-l/\delta),\
+ *    \delta^\circ h(l/\delta^\circ)\bigr\rbrace \Bigr). $$
  *
  * The other bound is trivial in each case. Proof: the logarithmic Sobolev inequality bounds the
  * moment generating function of the intrinsic volumes by that of twice a Poisson variable, and the
@@ -149,7 +192,9 @@ export interface RecoveryBoundsArgs {
  * ```
  */
 export function recoveryBounds(args: RecoveryBoundsArgs): {
+  /** Lower bound of the probability. */
   readonly lower: Probability;
+  /** Upper bound of the probability. */
   readonly upper: Probability;
 } {
   const fn = 'recoveryBounds';
