@@ -294,7 +294,10 @@ describe('sizingChart', () => {
   const report = sizingReport({ d: 4, n: 30, law: uniformBall(), targets: [0.5, 0.9] });
 
   it('has the structure that it had', () => {
-    expect(structure(sizingChart(report))).toMatchSnapshot();
+    // Of one question, so that a new one in the report is not a change of the chart.
+    const rows = report.rows.filter(({ question }) => question === 'originInHull');
+    const one = { ...report, rows } as typeof report;
+    expect(structure(sizingChart(one))).toMatchSnapshot();
   });
 
   it('holds the sizes of the report', () => {
