@@ -1,7 +1,8 @@
 /**
  * Installs the packed tarball in an empty project and uses it in each way a reader of the README would.
  *
- * Covers ESM, CommonJS, TypeScript in three resolution modes with library checking on, and Deno.
+ * Covers ESM, CommonJS, TypeScript in three resolution modes with library checking on, and Deno; Bun too
+ * where BUN names its binary.
  */
 import { execFileSync } from 'node:child_process';
 import { cpSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs';
@@ -64,6 +65,13 @@ try {
   scenario('Deno, run with type check', () =>
     run(bin('deno'), 'run', '--check', '--quiet', 'use.mts'),
   );
+  // engines.mjs brings it.
+  const bun = process.env.BUN;
+  if (bun) {
+    for (const file of ['use.mjs', 'use.cjs', 'use.mts']) {
+      scenario(`Bun, ${file}`, () => run(bun, file));
+    }
+  }
 } finally {
   rmSync(project, { recursive: true, force: true });
 }
