@@ -107,38 +107,38 @@ const meetingRows = (quantity: string) =>
   );
 
 export const coneChecks: readonly AccuracyCheck[] = [
-  ...volumeChecks('orthant', 'orthant', (args) => orthant(number(args, 'n')), 1e-13),
-  ...volumeChecks('weylChamber', 'civ.weyl', weyl, 1e-13),
+  ...volumeChecks('orthant', 'orthant', (args) => orthant(number(args, 'n')), 3e-15),
+  ...volumeChecks('weylChamber', 'civ.weyl', weyl, 3e-15),
   moment(
     'weylChamber.statisticalDimension',
     'civ.weyl.statdim',
     (a) => weyl(a).statisticalDimension,
-    1e-14,
+    4e-15,
   ),
-  moment('weylChamber.variance', 'civ.weyl.variance', (a) => weyl(a).variance, 1e-14),
-  ...volumeChecks('circularCone', 'civ.circular', circular, 1e-13),
-  ...volumeChecks('circularCone (extra)', 'circular', circular, 1e-13),
+  moment('weylChamber.variance', 'civ.weyl.variance', (a) => weyl(a).variance, 4e-15),
+  ...volumeChecks('circularCone', 'civ.circular', circular, 3e-15),
+  ...volumeChecks('circularCone (extra)', 'circular', circular, 3e-15),
   moment(
     'circularCone.statisticalDimension',
     'civ.circular.statdim',
     (a) => circular(a).statisticalDimension,
-    1e-14,
+    4e-15,
   ),
-  moment('circularCone.variance', 'civ.circular.variance', (a) => circular(a).variance, 1e-14),
-  ...volumeChecks('polyhedralCone (span 3)', 'civ.cone_R3', rays, 1e-10),
-  ...volumeChecks('polyhedralCone (span 4)', 'civ.cone_R4', rays, 1e-10),
+  moment('circularCone.variance', 'civ.circular.variance', (a) => circular(a).variance, 4e-15),
+  ...volumeChecks('polyhedralCone (span 3)', 'civ.cone_R3', rays, 2e-15),
+  ...volumeChecks('polyhedralCone (span 4)', 'civ.cone_R4', rays, 2e-15),
   ...probabilityChecks(
     'conesMeet',
     meetingRows('kinematic.intersect'),
     (args: NamedRow['args']) => conesMeet(namedCone(args['C']), namedCone(args['K'])),
-    1e-14,
+    4e-15,
   ),
   ...probabilityChecks(
     'coneMeetsSubspace',
     meetingRows('crofton.hit'),
     (args: NamedRow['args']) =>
       coneMeetsSubspace(namedCone(args['C']), { codimension: number(args, 'codim') }),
-    1e-14,
+    4e-15,
   ),
   {
     name: 'coneMeetsSubspace(linfDescentCone).complement',
@@ -148,7 +148,7 @@ export const coneChecks: readonly AccuracyCheck[] = [
         codimension: number(args, 'm'),
       }).complement,
     measure: 'relative',
-    bound: 1e-14,
+    bound: 4e-15,
   },
 ];
 
@@ -206,7 +206,7 @@ const logCheck = (
   cases: cases(quantity, 'log').map((testCase) => ({ ...testCase, region: size(testCase) })),
   compute,
   measure: 'log',
-  bound: 1e-14,
+  bound: 4e-15,
 });
 const schlaefliFaces = (args: NamedRow['args']): number =>
   schlaefliCone(counted(args)).expectedFaces(number(args, 'k')).log;
@@ -228,7 +228,7 @@ export const randomConeChecks: readonly AccuracyCheck[] = [
     'schlaefliCone.statisticalDimension',
     'random_cone.schlaefli_E_statdim',
     (a) => schlaefliCone(counted(a)).statisticalDimension,
-    1e-14,
+    4e-15,
   ),
   logCheck('coverEfronCone.expectedFaces', 'random_cone.cover_efron_E_faces', coverEfronFaces),
   logCheck('coverEfronCone.expectedFaces (extra)', 'coverEfron.f', coverEfronFaces),
@@ -236,6 +236,6 @@ export const randomConeChecks: readonly AccuracyCheck[] = [
     'coverEfronCone.solidAngle',
     'random_cone.cover_efron_E_solid_angle',
     (a) => coverEfronCone(counted(a)).solidAngle,
-    1e-14,
+    4e-15,
   ),
 ];

@@ -73,80 +73,80 @@ const volume = (args: NamedRow['args']): number =>
   l1DescentCone(sparse(args)).logIntrinsicVolumes[number(args, 'k')] as number;
 
 export const recoveryChecks: readonly AccuracyCheck[] = [
-  ...probabilityChecks('recoverySuccess', recoveryCases(), recoverySuccess, 1e-11),
+  ...probabilityChecks('recoverySuccess', recoveryCases(), recoverySuccess, 6e-14),
   {
     name: 'l1DescentCone.logIntrinsicVolumes',
     cases: [...cases('civ.l1_descent', 'log'), ...cases('l1.v', 'log')],
     compute: volume,
     measure: 'log',
-    bound: 1e-11,
+    bound: 6e-14,
   },
   relative(
     'l1DescentCone.variance',
     'variance.l1_exact',
     (a) => l1DescentCone(sparse(a)).variance,
-    1e-11,
+    6e-14,
   ),
   relative(
     'l1DescentCone.statisticalDimension',
     'statdim.l1_exact',
     (a) => l1DescentCone(sparse(a)).statisticalDimension,
-    1e-11,
+    6e-14,
   ),
   relative(
     'l1StatisticalDimension.exact',
     'statdim.l1_exact',
     (a) => l1StatisticalDimension(sparse(a)).exact,
-    1e-11,
+    6e-14,
   ),
   relative(
     'l1StatisticalDimension.upper',
     'statdim.l1_upper',
     (a) => l1StatisticalDimension(sparse(a)).upper,
-    1e-14,
+    2e-15,
   ),
   relative(
     'dimensionBound (one-sided)',
     'statdim.l1_nonneg_upper',
     (a) => dimensionBound(number(a, 'n'), number(a, 's'), 1),
-    1e-14,
+    2e-15,
   ),
   relative(
     'dimensionBound per variable',
     'psi.l1',
     (a) => dimensionBound(1, number(a, 'rho'), 2),
-    1e-14,
+    2e-15,
   ),
   relative(
     'secondOrderMoments.mean',
     'statdim.l1_second_order',
     (a) => secondOrderMoments(number(a, 'n'), number(a, 's'), 2).mean,
-    1e-14,
+    2e-15,
   ),
   relative(
     'secondOrderMoments.variance',
     'variance.l1_second_order',
     (a) => secondOrderMoments(number(a, 'n'), number(a, 's'), 2).variance,
-    1e-14,
+    5e-15,
   ),
   relative(
     'weakThreshold (l1)',
     'weak_threshold.l1',
     (a) => weakThreshold({ undersampling: number(a, 'delta'), model: 'l1' }).perMeasurement,
-    1e-14,
+    2e-15,
   ),
   relative(
     'weakThreshold (nonnegativeL1)',
     'weak_threshold.nonneg',
     (a) =>
       weakThreshold({ undersampling: number(a, 'delta'), model: 'nonnegativeL1' }).perMeasurement,
-    1e-14,
+    2e-15,
   ),
   relative(
     'nuclearLimit',
     'psi.nuclear',
     (a) => nuclearLimit(number(a, 'rho'), number(a, 'nu')),
-    1e-12,
+    1e-15,
   ),
   relative(
     'approxNuclearNormDimension',
@@ -157,6 +157,6 @@ export const recoveryChecks: readonly AccuracyCheck[] = [
       const rank = Math.round(number(a, 'rho') * rows);
       return approxNuclearNormDimension({ rank, rows, columns }) / rows / columns;
     },
-    1e-12,
+    1e-15,
   ),
 ];

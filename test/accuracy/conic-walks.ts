@@ -41,16 +41,16 @@ const outside =
     return { ...p, value: p.complement, log: p.logComplement } as ReturnType<typeof walkHull>;
   };
 
-/** Promise: relative error of both tails, 2e-14 max(1, |log|). */
+/** Promise: relative error of both tails, 4e-15 max(1, |log|). */
 export const checks: readonly AccuracyCheck[] = [
-  ...probabilityChecks('walkHull', hullCases('walk', 'in'), walkHull, 2e-14),
-  ...probabilityChecks('walkHull (outside)', hullCases('walk', 'out'), outside(walkHull), 2e-14),
-  ...probabilityChecks('bridgeHull', hullCases('bridge', 'in'), bridgeHull, 2e-14),
+  ...probabilityChecks('walkHull', hullCases('walk', 'in'), walkHull, 4e-15),
+  ...probabilityChecks('walkHull (outside)', hullCases('walk', 'out'), outside(walkHull), 4e-15),
+  ...probabilityChecks('bridgeHull', hullCases('bridge', 'in'), bridgeHull, 4e-15),
   ...probabilityChecks(
     'bridgeHull (outside)',
     hullCases('bridge', 'out'),
     outside(bridgeHull),
-    2e-14,
+    4e-15,
   ),
-  ...probabilityChecks('jointWalkHull', jointCases(), jointWalkHull, 2e-14),
+  ...probabilityChecks('jointWalkHull', jointCases(), jointWalkHull, 4e-15),
 ];
