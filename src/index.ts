@@ -31,7 +31,7 @@ export {
   logisticSignal,
   logisticThreshold,
 } from './conic/logistic-threshold.ts';
-export { type OrthantWeightsOptions, orthantWeights } from './conic/orthant-weights.ts';
+export { type OrthantWeightsArgs, orthantWeights } from './conic/orthant-weights.ts';
 export {
   type RecoveryArgs,
   type RecoveryBoundsArgs,

@@ -99,13 +99,13 @@ export function betaPrimeLaw(b: number): BetaPrimeLaw {
 /**
  * The multivariate t law: heavier tails than the Gaussian, which is its limit.
  *
- * @param options - `degreesOfFreedom`: positive and finite
+ * @param args - `degreesOfFreedom`: positive and finite
  * @returns the law; in dimension d it is the beta-prime law with b = (degreesOfFreedom + d)/2
  * @throws A {@link DomainError} if an option is unknown or out of range
  */
-export function studentT(options: { readonly degreesOfFreedom: number }): StudentTLaw {
-  checkOptions('studentT', options, ['degreesOfFreedom']);
-  const { degreesOfFreedom } = options;
+export function studentT(args: { readonly degreesOfFreedom: number }): StudentTLaw {
+  checkOptions('studentT', args, ['degreesOfFreedom']);
+  const { degreesOfFreedom } = args;
   checkPositive('studentT', 'degreesOfFreedom', degreesOfFreedom);
   return Object.freeze({ kind: 'law', family: 'studentT', degreesOfFreedom });
 }

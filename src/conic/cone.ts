@@ -124,7 +124,7 @@ export function subspaceKernel(dimension: number, ambient: number): Cone {
  * Source: Intrinsic volumes of polyhedral cones: a combinatorial perspective, Discrete and
  * Computational Geometry 58 (2017), arXiv:1512.06033.
  *
- * @param options - `dimension` of the subspace, an integer from 0 to `ambient`, and `ambient`, the
+ * @param args - `dimension` of the subspace, an integer from 0 to `ambient`, and `ambient`, the
  * dimension of the space, an integer from 0 to 1000000
  * @returns the cone
  * @throws A {@link DomainError} if an argument is not such an integer, or an option is unknown
@@ -136,10 +136,10 @@ export function subspaceKernel(dimension: number, ambient: number): Cone {
  * productCone(subspace({ dimension: 1, ambient: 1 }), orthant(1)).intrinsicVolumes; // => [0, 0.5, 0.5]
  * ```
  */
-export function subspace(options: { dimension: number; ambient: number }): Cone {
+export function subspace(args: { dimension: number; ambient: number }): Cone {
   const fn = 'subspace';
-  checkOptions(fn, options, ['dimension', 'ambient']);
-  const { dimension, ambient } = options;
+  checkOptions(fn, args, ['dimension', 'ambient']);
+  const { dimension, ambient } = args;
   checkInteger(fn, 'ambient', ambient, 0, MAX_AMBIENT);
   checkInteger(fn, 'dimension', dimension, 0, ambient);
   return subspaceKernel(dimension, ambient);

@@ -56,7 +56,7 @@ export function descentSequence(
  * Source: Counting faces of randomly projected polytopes when the projection radically lowers
  * dimension, Journal of the American Mathematical Society 22 (2009), arXiv:math/0607364.
  *
- * @param options - `n`, the dimension, an integer from 1 to 100000, and `sparsity`, the number of
+ * @param args - `n`, the dimension, an integer from 1 to 100000, and `sparsity`, the number of
  * non-zeros, an integer from 0 to n
  * @returns the cone
  * @throws A {@link DomainError} if an argument is not such an integer, or an option is unknown
@@ -69,10 +69,10 @@ export function descentSequence(
  * cone.variance.toPrecision(10); // => '4.904788645'
  * ```
  */
-export function l1DescentCone(options: { n: number; sparsity: number }): Cone {
+export function l1DescentCone(args: { n: number; sparsity: number }): Cone {
   const fn = 'l1DescentCone';
-  checkOptions(fn, options, ['n', 'sparsity']);
-  const { n, sparsity } = options;
+  checkOptions(fn, args, ['n', 'sparsity']);
+  const { n, sparsity } = args;
   checkInteger(fn, 'n', n, 1, LARGEST_DESCENT_CONE);
   checkInteger(fn, 'sparsity', sparsity, 0, n);
   if (sparsity === 0) return subspaceKernel(0, n);
@@ -101,7 +101,7 @@ export function l1DescentCone(options: { n: number; sparsity: number }): Cone {
  * Source: The convex geometry of linear inverse problems, Foundations of Computational Mathematics 12
  * (2012), arXiv:1012.0621.
  *
- * @param options - `n`, the dimension, an integer from 1 to 1000000, and `saturated`, the number of
+ * @param args - `n`, the dimension, an integer from 1 to 1000000, and `saturated`, the number of
  * coordinates of largest modulus, an integer from 1 to n
  * @returns the cone
  * @throws A {@link DomainError} if an argument is not such an integer, or an option is unknown
@@ -112,10 +112,10 @@ export function l1DescentCone(options: { n: number; sparsity: number }): Cone {
  * linfDescentCone({ n: 3, saturated: 2 }).intrinsicVolumes; // => [0, 0.25, 0.5, 0.25]
  * ```
  */
-export function linfDescentCone(options: { n: number; saturated: number }): Cone {
+export function linfDescentCone(args: { n: number; saturated: number }): Cone {
   const fn = 'linfDescentCone';
-  checkOptions(fn, options, ['n', 'saturated']);
-  const { n, saturated } = options;
+  checkOptions(fn, args, ['n', 'saturated']);
+  const { n, saturated } = args;
   checkInteger(fn, 'n', n, 1, 1_000_000);
   checkInteger(fn, 'saturated', saturated, 1, n);
   return productCone(subspaceKernel(n - saturated, n - saturated), orthantKernel(saturated));
@@ -148,7 +148,7 @@ const STEPS_PER_DEVIATION = 8;
  * Source: Living on the edge: phase transitions in convex programs with random data, Information and
  * Inference 3 (2014), arXiv:1303.6672.
  *
- * @param options - `n`, the dimension, an integer from 1 to $2^{53} - 1$, and `sparsity`, the number of
+ * @param args - `n`, the dimension, an integer from 1 to $2^{53} - 1$, and `sparsity`, the number of
  * non-zeros, an integer from 0 to n
  * @returns the statistical dimension and its upper bound
  * @throws A {@link DomainError} if an argument is not such an integer, or an option is unknown
@@ -161,15 +161,15 @@ const STEPS_PER_DEVIATION = 8;
  * dimension.upper.toPrecision(10); // => '8.558240833'
  * ```
  */
-export function l1StatisticalDimension(options: { n: number; sparsity: number }): {
+export function l1StatisticalDimension(args: { n: number; sparsity: number }): {
   /** The statistical dimension. */
   readonly exact: number;
   /** The upper bound by the smallest expected squared distance. */
   readonly upper: number;
 } {
   const fn = 'l1StatisticalDimension';
-  checkOptions(fn, options, ['n', 'sparsity']);
-  const { n, sparsity } = options;
+  checkOptions(fn, args, ['n', 'sparsity']);
+  const { n, sparsity } = args;
   checkInteger(fn, 'n', n, 1);
   checkInteger(fn, 'sparsity', sparsity, 0, n);
   if (sparsity === 0) return { exact: 0, upper: 0 };
@@ -222,7 +222,7 @@ function exactMean(n: number, sparsity: number): number {
  * Source: Living on the edge: phase transitions in convex programs with random data, Information and
  * Inference 3 (2014), arXiv:1303.6672.
  *
- * @param options - `rows` and `columns`, integers from 1, and `rank`, an integer from 0 to the smaller
+ * @param args - `rows` and `columns`, integers from 1, and `rank`, an integer from 0 to the smaller
  * of the two
  * @returns the approximate statistical dimension, between 0 and rows x columns
  * @throws A {@link DomainError} if an argument is not such an integer, or an option is unknown
@@ -233,14 +233,14 @@ function exactMean(n: number, sparsity: number): number {
  * approxNuclearNormDimension({ rank: 3, rows: 24, columns: 30 }).toPrecision(6); // => '276.282'
  * ```
  */
-export function approxNuclearNormDimension(options: {
+export function approxNuclearNormDimension(args: {
   rank: number;
   rows: number;
   columns: number;
 }): number {
   const fn = 'approxNuclearNormDimension';
-  checkOptions(fn, options, ['rank', 'rows', 'columns']);
-  const { rank, rows, columns } = options;
+  checkOptions(fn, args, ['rank', 'rows', 'columns']);
+  const { rank, rows, columns } = args;
   checkInteger(fn, 'rows', rows, 1);
   checkInteger(fn, 'columns', columns, 1);
   const small = Math.min(rows, columns);

@@ -43,7 +43,7 @@ export {
   logisticSignal,
   logisticThreshold,
 } from './logistic-threshold.ts';
-export { type OrthantWeightsOptions, orthantWeights } from './orthant-weights.ts';
+export { type OrthantWeightsArgs, orthantWeights } from './orthant-weights.ts';
 export { polyhedralCone } from './polyhedral-cone.ts';
 export {
   coverEfronCone,

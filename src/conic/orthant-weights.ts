@@ -8,7 +8,7 @@ import { checkFinite, checkOptions, DomainError } from '../domain.ts';
 import { polyhedralCone } from './polyhedral-cone.ts';
 
 /** Options of {@link orthantWeights}. */
-export interface OrthantWeightsOptions {
+export interface OrthantWeightsArgs {
   /** Covariance matrix of the estimators: rows of a symmetric positive definite matrix of 1 to 4 columns. */
   readonly covariance: readonly (readonly number[])[];
 }
@@ -29,7 +29,7 @@ const SINGULAR = 1e-10;
  * $w_2 = \tfrac14 + \arcsin(r)/(2\pi)$, $w_1 = \tfrac12$. Use: variance components, one-sided tests of
  * several parameters. Assumption: the estimators are normal with this covariance, known up to a factor.
  *
- * @param options - `covariance`: the matrix, an array of 1 to 4 rows; only its correlations matter. It is the
+ * @param args - `covariance`: the matrix, an array of 1 to 4 rows; only its correlations matter. It is the
  *   covariance of the *estimators*, the inverse of their information matrix
  * @returns the weights, frozen; index = degrees of freedom, 0 to the number of parameters
  * @remarks Cost: below a millisecond. Absolute error of each weight below 1e-13 for correlation matrices with
@@ -48,14 +48,14 @@ const SINGULAR = 1e-10;
  * chiBarSquared(weights).quantile(0.95).toPrecision(6); // => '4.57731'
  * ```
  */
-export function orthantWeights(options: OrthantWeightsOptions): readonly number[] {
+export function orthantWeights(args: OrthantWeightsArgs): readonly number[] {
   const fn = 'orthantWeights';
-  checkOptions(fn, options, ['covariance']);
-  const correlations = checkCovariance(fn, options.covariance);
+  checkOptions(fn, args, ['covariance']);
+  const correlations = checkCovariance(fn, args.covariance);
   const factor = cholesky(correlations);
   if (factor === undefined) {
     const requirement = 'a positive definite matrix, its correlations not nearly singular';
-    throw new DomainError(fn, 'covariance', requirement, options.covariance);
+    throw new DomainError(fn, 'covariance', requirement, args.covariance);
   }
   return polyhedralCone(inverseColumns(factor)).intrinsicVolumes;
 }

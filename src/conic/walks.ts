@@ -53,7 +53,7 @@ export interface JointWalkHullArgs {
  * Source: Convex hulls of random walks, hyperplane arrangements, and Weyl chambers, Geometric and
  * Functional Analysis 27 (2017), arXiv:1510.04073; in the form of a sum of independent variables.
  *
- * @param options - `steps`, the number of steps, and `d`, the dimension; both integers >= 0
+ * @param args - `steps`, the number of steps, and `d`, the dimension; both integers >= 0
  * @returns the probability that the hull contains the start; 0 for `steps` <= d, 1 for d = 0 and a
  * step or more
  * @throws A {@link DomainError} if an argument is not such an integer, or an option is unknown
@@ -65,10 +65,10 @@ export interface JointWalkHullArgs {
  * walkHull({ steps: 4, d: 3 }).value.toPrecision(12); // => '0.00520833333333'
  * ```
  */
-export function walkHull(options: WalkHullArgs): Probability {
+export function walkHull(args: WalkHullArgs): Probability {
   const fn = 'walkHull';
-  checkOptions(fn, options, ['steps', 'd']);
-  const { steps, d } = options;
+  checkOptions(fn, args, ['steps', 'd']);
+  const { steps, d } = args;
   checkInteger(fn, 'steps', steps, 0);
   checkInteger(fn, 'd', d, 0);
   return hullOfRuns([{ step: 2, from: 1, to: steps, count: 1 }], d);
@@ -92,7 +92,7 @@ export function walkHull(options: WalkHullArgs): Probability {
  * Source: Convex hulls of random walks, hyperplane arrangements, and Weyl chambers, Geometric and
  * Functional Analysis 27 (2017), arXiv:1510.04073; in the form of a sum of independent variables.
  *
- * @param options - `steps`, the number of steps including the last, which returns to the start, and
+ * @param args - `steps`, the number of steps including the last, which returns to the start, and
  * `d`, the dimension; both integers >= 0
  * @returns the probability that the hull contains the start; 0 for `steps` <= d + 1, 1 for d = 0 and
  * two steps or more
@@ -105,10 +105,10 @@ export function walkHull(options: WalkHullArgs): Probability {
  * bridgeHull({ steps: 1e12, d: 60 }).log.toPrecision(12); // => '-17.9447974154'
  * ```
  */
-export function bridgeHull(options: WalkHullArgs): Probability {
+export function bridgeHull(args: WalkHullArgs): Probability {
   const fn = 'bridgeHull';
-  checkOptions(fn, options, ['steps', 'd']);
-  const { steps, d } = options;
+  checkOptions(fn, args, ['steps', 'd']);
+  const { steps, d } = args;
   checkInteger(fn, 'steps', steps, 0);
   checkInteger(fn, 'd', d, 0);
   return hullOfRuns([{ step: 1, from: 2, to: steps, count: 1 }], d);
@@ -136,7 +136,7 @@ export function bridgeHull(options: WalkHullArgs): Probability {
  * Source: derived from the product form in Convex hulls of random walks, hyperplane arrangements, and
  * Weyl chambers, Geometric and Functional Analysis 27 (2017), arXiv:1510.04073; checked by simulation.
  *
- * @param options - `walks` and `bridges`, the numbers of steps of each, and `d`, the dimension;
+ * @param args - `walks` and `bridges`, the numbers of steps of each, and `d`, the dimension;
  * integers >= 0
  * @returns the probability that the hull contains the start; 0 while there are at most d points
  * @throws A {@link DomainError} if an argument is not such an integer or array, or an option is unknown
@@ -149,10 +149,10 @@ export function bridgeHull(options: WalkHullArgs): Probability {
  * originInHull({ n: 6, d: 3 }).value; // => 0.5
  * ```
  */
-export function jointWalkHull(options: JointWalkHullArgs): Probability {
+export function jointWalkHull(args: JointWalkHullArgs): Probability {
   const fn = 'jointWalkHull';
-  checkOptions(fn, options, ['walks', 'bridges', 'd']);
-  const { walks, bridges = [], d } = options;
+  checkOptions(fn, args, ['walks', 'bridges', 'd']);
+  const { walks, bridges = [], d } = args;
   checkLengths(fn, 'walks', walks);
   checkLengths(fn, 'bridges', bridges);
   checkInteger(fn, 'd', d, 0);

@@ -73,12 +73,12 @@ function scaledBody(
 /** Checks the two options of a body of one length and returns them. */
 function sized(
   fn: string,
-  options: unknown,
+  args: unknown,
   name: string,
   standard: number,
 ): { d: number; size: number } {
-  checkOptions(fn, options, ['d', name]);
-  const { d, [name]: size = standard } = options as Record<string, unknown>;
+  checkOptions(fn, args, ['d', name]);
+  const { d, [name]: size = standard } = args as Record<string, unknown>;
   checkInteger(fn, 'd', d, 1, MAX_DIMENSION);
   checkFinite(fn, name, size, 0);
   return { d, size };
@@ -93,7 +93,7 @@ function sized(
  *
  * Source: Introduction to Geometric Probability, Cambridge University Press (1997).
  *
- * @param options - `d`: an integer from 1 to 10000; `radius`: finite and >= 0, 1 if left out
+ * @param args - `d`: an integer from 1 to 10000; `radius`: finite and >= 0, 1 if left out
  * @returns the body
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -103,8 +103,8 @@ function sized(
  * ball({ d: 3 }).intrinsicVolumes[1].value; // => 4
  * ```
  */
-export function ball(options: BallArgs): Body {
-  const { d, size } = sized('ball', options, 'radius', 1);
+export function ball(args: BallArgs): Body {
+  const { d, size } = sized('ball', args, 'radius', 1);
   return scaledBody(d, size, (k, error) => {
     const value = logBallIntrinsicVolumeKernel(d, k);
     error[0] = EPSILON * (4 + 2 * Math.abs(value) + k);
@@ -115,7 +115,7 @@ export function ball(options: BallArgs): Body {
 /**
  * The cube of a given side in $\mathbb{R}^d$, for d from 1 to 10000: $V_k = \binom dk a^k$.
  *
- * @param options - `d`: an integer from 1 to 10000; `side`: finite and >= 0, 1 if left out
+ * @param args - `d`: an integer from 1 to 10000; `side`: finite and >= 0, 1 if left out
  * @returns the body
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -125,8 +125,8 @@ export function ball(options: BallArgs): Body {
  * cube({ d: 7 }).intrinsicVolumes[3].value; // => 35
  * ```
  */
-export function cube(options: CubeArgs): Body {
-  const { d, size } = sized('cube', options, 'side', 1);
+export function cube(args: CubeArgs): Body {
+  const { d, size } = sized('cube', args, 'side', 1);
   return scaledBody(d, size, (k, error) => {
     const value = logBinomialKernel(d, k);
     error[0] = EPSILON * (2 + 2 * value);
@@ -181,7 +181,7 @@ export function box(sides: readonly number[]): Body {
  * Source: Absorption probabilities for Gaussian polytopes and regular spherical simplices, Advances in Applied
  * Probability 52 (2020), arXiv:1704.04968.
  *
- * @param options - `d`: an integer from 1 to 10000; `edge`: finite and >= 0, 1 if left out
+ * @param args - `d`: an integer from 1 to 10000; `edge`: finite and >= 0, 1 if left out
  * @returns the body
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -193,8 +193,8 @@ export function box(sides: readonly number[]): Body {
  * [half.value.toPrecision(12), area.value.toPrecision(12)]; // => ['1.50000000000', Math.sqrt(3 / 16).toPrecision(12)]
  * ```
  */
-export function regularSimplex(options: RegularSimplexArgs): Body {
-  const { d, size } = sized('regularSimplex', options, 'edge', 1);
+export function regularSimplex(args: RegularSimplexArgs): Body {
+  const { d, size } = sized('regularSimplex', args, 'edge', 1);
   return scaledBody(d, size * Math.SQRT1_2, (k, error) => {
     const angle = logPositiveOrthantKernel(d - k, k + 1, error);
     const faces = logBinomialKernel(d + 1, k + 1);
@@ -217,7 +217,7 @@ export function regularSimplex(options: RegularSimplexArgs): Body {
  *
  * Source: Intrinsic volumes and lattice points of crosspolytopes, Monatshefte für Mathematik 115 (1993).
  *
- * @param options - `d`: an integer from 1 to 10000; `scale`: finite and >= 0, 1 if left out
+ * @param args - `d`: an integer from 1 to 10000; `scale`: finite and >= 0, 1 if left out
  * @returns the body
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -228,8 +228,8 @@ export function regularSimplex(options: RegularSimplexArgs): Body {
  * surfaceArea(crossPolytope({ d: 3 })).value.toPrecision(12); // => Math.sqrt(48).toPrecision(12)
  * ```
  */
-export function crossPolytope(options: CrossPolytopeArgs): Body {
-  const { d, size } = sized('crossPolytope', options, 'scale', 1);
+export function crossPolytope(args: CrossPolytopeArgs): Body {
+  const { d, size } = sized('crossPolytope', args, 'scale', 1);
   return scaledBody(d, size, (k, error) => {
     if (k === d) {
       const factorial = logFactorialKernel(d);

@@ -42,7 +42,7 @@ function softplus(x: number): number {
  *
  * Source: Intrinsic volumes of ellipsoids, arXiv:2206.14002.
  *
- * @param options - `semiAxes`: from 1 to 200 finite numbers > 0
+ * @param args - `semiAxes`: from 1 to 200 finite numbers > 0
  * @returns the body
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -53,10 +53,10 @@ function softplus(x: number): number {
  * ellipsoid({ semiAxes: [1, 2] }).intrinsicVolumes[1].value.toPrecision(12); // => '4.84422411027'
  * ```
  */
-export function ellipsoid(options: EllipsoidArgs): Body {
+export function ellipsoid(args: EllipsoidArgs): Body {
   const fn = 'ellipsoid';
-  checkOptions(fn, options, ['semiAxes']);
-  const { semiAxes } = options;
+  checkOptions(fn, args, ['semiAxes']);
+  const { semiAxes } = args;
   if (!Array.isArray(semiAxes) || semiAxes.length < 1 || semiAxes.length > MAX_AXES) {
     throw new DomainError(fn, 'semiAxes', `an array of 1 to ${MAX_AXES} numbers`, semiAxes);
   }

@@ -37,7 +37,7 @@ export interface CapProbabilityArgs {
  *
  * Source: NIST Digital Library of Mathematical Functions, 8.17, https://dlmf.nist.gov/8.17.
  *
- * @param options - `d`: an integer from 1 to a million; `height`: any number, negative for a half-space
+ * @param args - `d`: an integer from 1 to a million; `height`: any number, negative for a half-space
  * that contains the centre; `law`: any law
  * @returns the probability; 0 or 1 beyond the ends of a bounded law
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
@@ -49,13 +49,13 @@ export interface CapProbabilityArgs {
  * capProbability({ d: 2, height: 0.5, law: uniformSphere() }).value.toPrecision(12); // => (1 / 3).toPrecision(12)
  * ```
  */
-export function capProbability(options: CapProbabilityArgs): Probability {
+export function capProbability(args: CapProbabilityArgs): Probability {
   const fn = 'capProbability';
-  checkOptions(fn, options, ['d', 'height', 'law']);
-  const { d, height } = options;
+  checkOptions(fn, args, ['d', 'height', 'law']);
+  const { d, height } = args;
   checkDimension(fn, d);
   checkNumber(fn, 'height', height);
-  const law = checkLaw(fn, options.law, FAMILIES, d);
+  const law = checkLaw(fn, args.law, FAMILIES, d);
   const side = height >= 0 ? 'lower' : 'upper';
   const a = Math.abs(height);
   const nothing = probabilityFromTail(0, Number.NEGATIVE_INFINITY, side, 0);

@@ -58,7 +58,7 @@ export interface FacetHeight extends Distribution {
  *
  * Source: Facets of spherical random polytopes, arXiv:1908.04033.
  *
- * @param options - `n`: an integer > d or a `LogNumber`; `d`: an integer from 2 to a million; `law`: a beta
+ * @param args - `n`: an integer > d or a `LogNumber`; `d`: an integer from 2 to a million; `law`: a beta
  * law or `gaussian()`
  * @returns mean, variance, cdf, quantile, logPdf and the limit
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
@@ -72,14 +72,14 @@ export interface FacetHeight extends Distribution {
  * height.cdf(0.7).value.toPrecision(8); // => '0.048028899'
  * ```
  */
-export function facetHeight(options: FacetHeightArgs): FacetHeight {
+export function facetHeight(args: FacetHeightArgs): FacetHeight {
   const fn = 'facetHeight';
-  checkOptions(fn, options, ['n', 'd', 'law']);
-  const { d } = options;
+  checkOptions(fn, args, ['n', 'd', 'law']);
+  const { d } = args;
   checkDimension(fn, d, 2);
-  const law = checkLaw(fn, options.law, FAMILIES, d) as BetaLaw | GaussianLaw;
+  const law = checkLaw(fn, args.law, FAMILIES, d) as BetaLaw | GaussianLaw;
   if (law.family === 'beta') resolveMarginal(fn, law, d);
-  const count = resolveCount(fn, 'n', options.n, d + 1);
+  const count = resolveCount(fn, 'n', args.n, d + 1);
   const model = facetModel(law, d);
   const bounded = law.family === 'beta';
   const { mean, variance } = heightMoments(model, count);

@@ -78,7 +78,7 @@ export function resolveFacetLaw(fn: string, law: unknown, d: number): ReturnType
  * Source: Expected intrinsic volumes and facet numbers of random beta-polytopes, Mathematische
  * Nachrichten 292 (2019), arXiv:1707.02253.
  *
- * @param options - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `law`: any
+ * @param args - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `law`: any
  * law (Student t with at least 0.02 degrees of freedom); `hull`: `'plain'`, `'symmetric'` or
  * `'withCentre'`
  * @returns the expected number
@@ -91,14 +91,14 @@ export function resolveFacetLaw(fn: string, law: unknown, d: number): ReturnType
  * expectedFacets({ n: 50, d: 10, law: gaussian() }).toString(); // => '93354.9864529'
  * ```
  */
-export function expectedFacets(options: ExpectedFacetsArgs): LogNumber {
+export function expectedFacets(args: ExpectedFacetsArgs): LogNumber {
   const fn = 'expectedFacets';
-  checkOptions(fn, options, ['n', 'd', 'law', 'hull']);
-  const { d } = options;
+  checkOptions(fn, args, ['n', 'd', 'law', 'hull']);
+  const { d } = args;
   checkDimension(fn, d);
-  const law = resolveFacetLaw(fn, options.law, d);
-  const hull = resolveHull(fn, options.hull);
-  const count = resolveCount(fn, 'n', options.n);
+  const law = resolveFacetLaw(fn, args.law, d);
+  const hull = resolveHull(fn, args.hull);
+  const count = resolveCount(fn, 'n', args.n);
   return expectedFacetsKernel(law, d, count, hull);
 }
 
@@ -152,7 +152,7 @@ function endsOfSegment(
  *
  * Source: as for {@link expectedFacets}.
  *
- * @param options - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `height`: a
+ * @param args - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `height`: a
  * number; `law`: any law (Student t with at least 0.02 degrees of freedom)
  * @returns the expected number; exactly 0 for n <= d
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
@@ -164,14 +164,14 @@ function endsOfSegment(
  * below.value.toPrecision(12); // => (0.52224).toPrecision(12)
  * ```
  */
-export function expectedFacetsBelow(options: ExpectedFacetsBelowArgs): LogNumber {
+export function expectedFacetsBelow(args: ExpectedFacetsBelowArgs): LogNumber {
   const fn = 'expectedFacetsBelow';
-  checkOptions(fn, options, ['n', 'd', 'height', 'law']);
-  const { d, height } = options;
+  checkOptions(fn, args, ['n', 'd', 'height', 'law']);
+  const { d, height } = args;
   checkDimension(fn, d);
   checkNumber(fn, 'height', height);
-  const law = resolveFacetLaw(fn, options.law, d);
-  const count = resolveCount(fn, 'n', options.n);
+  const law = resolveFacetLaw(fn, args.law, d);
+  const count = resolveCount(fn, 'n', args.n);
   const none = LogNumber.fromLog(Number.NEGATIVE_INFINITY);
   if (count.n <= d || height === Number.NEGATIVE_INFINITY) return none;
   if (law.family === 'beta' && height < -1) return none;

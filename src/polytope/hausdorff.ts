@@ -96,7 +96,7 @@ const ALWAYS = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 
  * Probability 38 (2010), doi:10.1214/09-AOP489; Living on the edge, Information and Inference 3 (2014), for the
  * kinematic formula; Random secants of a convex body, Journal of Applied Probability 6 (1969).
  *
- * @param options - `n`: an integer >= 1 or a `LogNumber`; `d`: an integer from 2 to 500; `law`: a beta law
+ * @param args - `n`: an integer >= 1 or a `LogNumber`; `d`: an integer from 2 to 500; `law`: a beta law
  * @returns exceedance probabilities, guarantees and an estimate of the mean
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -110,13 +110,13 @@ const ALWAYS = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 
  * [lower, approx, upper].map((p) => p.value.toFixed(2)); // => ['0.04', '0.35', '0.68']
  * ```
  */
-export function hausdorffDistance(options: HausdorffDistanceArgs): HausdorffDistance {
+export function hausdorffDistance(args: HausdorffDistanceArgs): HausdorffDistance {
   const fn = 'hausdorffDistance';
-  checkOptions(fn, options, ['n', 'd', 'law']);
-  const { d } = options;
+  checkOptions(fn, args, ['n', 'd', 'law']);
+  const { d } = args;
   checkDimension(fn, d, 2, MAX_EULER_DIMENSION);
-  const { b: beta } = checkLaw(fn, options.law, ['beta'], d) as BetaLaw;
-  const count = resolveCount(fn, 'n', options.n, 1);
+  const { b: beta } = checkLaw(fn, args.law, ['beta'], d) as BetaLaw;
+  const count = resolveCount(fn, 'n', args.n, 1);
   const estimate = count.n > d ? holeEstimate(d, beta, count) : null;
   return Object.freeze({
     exceedance: (t: number): Exceedance => {
@@ -212,7 +212,7 @@ function bisect(holds: (x: number) => boolean, low: number, high: number): numbe
  *
  * Sources: as for {@link hausdorffDistance}.
  *
- * @param options - `n`: an integer >= 1 or a `LogNumber`; `d`: an integer from 2 to a million; `distance`: a
+ * @param args - `n`: an integer >= 1 or a `LogNumber`; `d`: an integer from 2 to a million; `distance`: a
  * number from 0 to 2; `law`: a beta law
  * @returns a lower bound of P(d_H <= distance)
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
@@ -223,14 +223,14 @@ function bisect(holds: (x: number) => boolean, low: number, high: number): numbe
  * hausdorffWithin({ n: 500, d: 3, distance: 0.05, law: uniformSphere() }).value.toFixed(4); // => '0.9781'
  * ```
  */
-export function hausdorffWithin(options: HausdorffWithinArgs): Probability {
+export function hausdorffWithin(args: HausdorffWithinArgs): Probability {
   const fn = 'hausdorffWithin';
-  checkOptions(fn, options, ['n', 'd', 'distance', 'law']);
-  const { d, distance } = options;
+  checkOptions(fn, args, ['n', 'd', 'distance', 'law']);
+  const { d, distance } = args;
   checkDimension(fn, d, 2);
   checkNumber(fn, 'distance', distance, 0, 2);
-  const law = checkLaw(fn, options.law, ['beta'], d) as BetaLaw;
-  const count = resolveCount(fn, 'n', options.n, 1);
+  const law = checkLaw(fn, args.law, ['beta'], d) as BetaLaw;
+  const count = resolveCount(fn, 'n', args.n, 1);
   if (distance === 2) return ALWAYS;
   if (distance === 0) return NEVER;
   const circle = d === 2 && law.b === -1 ? circleExceedance(count, distance) : null;

@@ -33,7 +33,7 @@ export interface HeightLimit {
  *
  * Source: Facets of spherical random polytopes, arXiv:1908.04033.
  *
- * @param options - `n`: an integer >= 1 or a `LogNumber`; `d`: an integer from 1 to a million
+ * @param args - `n`: an integer >= 1 or a `LogNumber`; `d`: an integer from 1 to a million
  * @returns the rate log(n)/d and the limit, from 0 to 1
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -44,11 +44,11 @@ export interface HeightLimit {
  * [rate, limit.toFixed(4)]; // => [0.5, '0.7951']
  * ```
  */
-export function heightLimit(options: HeightLimitArgs): HeightLimit {
+export function heightLimit(args: HeightLimitArgs): HeightLimit {
   const fn = 'heightLimit';
-  checkOptions(fn, options, ['n', 'd']);
-  checkDimension(fn, options.d);
-  const count = resolveCount(fn, 'n', options.n, 1);
-  const rate = count.log / options.d;
+  checkOptions(fn, args, ['n', 'd']);
+  checkDimension(fn, args.d);
+  const count = resolveCount(fn, 'n', args.n, 1);
+  const rate = count.log / args.d;
   return Object.freeze({ rate, limit: Math.sqrt(-Math.expm1(-2 * rate)) });
 }

@@ -59,7 +59,7 @@ export interface ExpectedHullIntrinsicVolumeArgs extends ExpectedHullVolumeArgs 
  * Source: as for {@link hullVolumeRatio}; for the Gaussian law, The convex hull of a random set of points,
  * Biometrika 52 (1965).
  *
- * @param options - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `law`: any
+ * @param args - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `law`: any
  * law; `hull`: `'plain'`, `'symmetric'` or `'withCentre'`
  * @returns the expected volume; exactly 0 where the hull has none (n <= d, or n < d for the two other
  * hulls), infinite for a beta-prime law with $b \le (d + 1)/2$ (Student t with at most one degree of freedom)
@@ -72,11 +72,11 @@ export interface ExpectedHullIntrinsicVolumeArgs extends ExpectedHullVolumeArgs 
  * expectedHullVolume({ n: 3, d: 2, law: gaussian() }).value.toPrecision(12); // => Math.sqrt(0.75).toPrecision(12)
  * ```
  */
-export function expectedHullVolume(options: ExpectedHullVolumeArgs): LogNumber {
+export function expectedHullVolume(args: ExpectedHullVolumeArgs): LogNumber {
   const fn = 'expectedHullVolume';
-  checkOptions(fn, options, ['n', 'd', 'law', 'hull']);
-  checkDimension(fn, options.d);
-  return expectedVolume(fn, options, options.d);
+  checkOptions(fn, args, ['n', 'd', 'law', 'hull']);
+  checkDimension(fn, args.d);
+  return expectedVolume(fn, args, args.d);
 }
 
 /**
@@ -89,7 +89,7 @@ export function expectedHullVolume(options: ExpectedHullVolumeArgs): LogNumber {
  *
  * Cost, accuracy and source as for {@link expectedHullVolume}.
  *
- * @param options - as for {@link expectedHullVolume}, and `k`: an integer from 0 to d
+ * @param args - as for {@link expectedHullVolume}, and `k`: an integer from 0 to d
  * @returns the expected intrinsic volume; exactly 0 for n <= k (n < k for the two other hulls)
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
  *
@@ -101,19 +101,19 @@ export function expectedHullVolume(options: ExpectedHullVolumeArgs): LogNumber {
  * (2 * half.value).toPrecision(12); // => (4 * Math.PI * 72 / 132).toPrecision(12)
  * ```
  */
-export function expectedHullIntrinsicVolume(options: ExpectedHullIntrinsicVolumeArgs): LogNumber {
+export function expectedHullIntrinsicVolume(args: ExpectedHullIntrinsicVolumeArgs): LogNumber {
   const fn = 'expectedHullIntrinsicVolume';
-  checkOptions(fn, options, ['n', 'd', 'k', 'law', 'hull']);
-  checkDimension(fn, options.d);
-  checkInteger(fn, 'k', options.k, 0, options.d);
-  return expectedVolume(fn, options, options.k);
+  checkOptions(fn, args, ['n', 'd', 'k', 'law', 'hull']);
+  checkDimension(fn, args.d);
+  checkInteger(fn, 'k', args.k, 0, args.d);
+  return expectedVolume(fn, args, args.k);
 }
 
-function expectedVolume(fn: string, options: ExpectedHullVolumeArgs, k: number): LogNumber {
-  const { d } = options;
-  const law = checkLaw(fn, options.law, FAMILIES, d);
-  const hull = resolveHull(fn, options.hull);
-  const count = resolvePoints(fn, options.n);
+function expectedVolume(fn: string, args: ExpectedHullVolumeArgs, k: number): LogNumber {
+  const { d } = args;
+  const law = checkLaw(fn, args.law, FAMILIES, d);
+  const hull = resolveHull(fn, args.hull);
+  const count = resolvePoints(fn, args.n);
   const ball = logBallIntrinsicVolumeKernel(d, k);
   const ballError = EPSILON * (2 + 2 * Math.abs(ball) + 0.5 * k);
   if (law.family === 'beta') {

@@ -54,7 +54,7 @@ export interface SimplexVolume {
  *
  * Source: Isotropic random simplices, Advances in Applied Probability 3 (1971).
  *
- * @param options - `d`: an integer from 1 to a million; `r`: an integer from 1 to d; `law`: any law (on the
+ * @param args - `d`: an integer from 1 to a million; `r`: an integer from 1 to d; `law`: any law (on the
  * line the two-point law is refused: its simplex can degenerate)
  * @returns the moments
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
@@ -67,14 +67,14 @@ export interface SimplexVolume {
  * triangle.moment(1).value.toPrecision(12); // => (35 / (48 * Math.PI)).toPrecision(12)
  * ```
  */
-export function simplexVolume(options: SimplexVolumeArgs): SimplexVolume {
+export function simplexVolume(args: SimplexVolumeArgs): SimplexVolume {
   const fn = 'simplexVolume';
-  checkOptions(fn, options, ['d', 'r', 'law']);
-  const { d } = options;
+  checkOptions(fn, args, ['d', 'r', 'law']);
+  const { d } = args;
   checkInteger(fn, 'd', d, 1, MAX_DIMENSION);
-  const r = options.r === undefined ? d : options.r;
+  const r = args.r === undefined ? d : args.r;
   checkInteger(fn, 'r', r, 1, d);
-  const law = checkLaw(fn, options.law, FAMILIES, d);
+  const law = checkLaw(fn, args.law, FAMILIES, d);
   if (law.family === 'beta' && d === 1 && law.b === -1) {
     throw new DomainError(fn, 'law', 'a law without atoms (no sphere for d = 1)', law);
   }

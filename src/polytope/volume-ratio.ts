@@ -58,7 +58,7 @@ export interface HullIntrinsicVolumeRatioArgs extends HullVolumeRatioArgs {
  * Nachrichten 292 (2019), arXiv:1707.02253; the form used here follows from it by one integration by
  * parts.
  *
- * @param options - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `law`: a
+ * @param args - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `law`: a
  * beta law; `hull`: `'plain'`, `'symmetric'` or `'withCentre'`
  * @returns the ratio as a probability; exactly 0 where the hull has no volume (n <= d, or n < d for
  * the two other hulls)
@@ -73,14 +73,14 @@ export interface HullIntrinsicVolumeRatioArgs extends HullVolumeRatioArgs {
  * hullVolumeRatio({ n: 3, d: 3, law: uniformBall() }).value; // => 0
  * ```
  */
-export function hullVolumeRatio(options: HullVolumeRatioArgs): Probability {
+export function hullVolumeRatio(args: HullVolumeRatioArgs): Probability {
   const fn = 'hullVolumeRatio';
-  checkOptions(fn, options, ['n', 'd', 'law', 'hull']);
-  const { d } = options;
+  checkOptions(fn, args, ['n', 'd', 'law', 'hull']);
+  const { d } = args;
   checkDimension(fn, d);
-  const marginal = resolveMarginal(fn, options.law, d);
-  const hull = resolveHull(fn, options.hull);
-  return volumeRatioKernel(d, marginal, resolvePoints(fn, options.n), hull);
+  const marginal = resolveMarginal(fn, args.law, d);
+  const hull = resolveHull(fn, args.hull);
+  return volumeRatioKernel(d, marginal, resolvePoints(fn, args.n), hull);
 }
 
 /**
@@ -98,7 +98,7 @@ export function hullVolumeRatio(options: HullVolumeRatioArgs): Probability {
  *
  * Cost, accuracy and source as for {@link hullVolumeRatio}.
  *
- * @param options - as for {@link hullVolumeRatio}, and `k`: an integer from 0 to d
+ * @param args - as for {@link hullVolumeRatio}, and `k`: an integer from 0 to d
  * @returns the ratio as a probability; exactly 0 for n <= k (n < k for the two other hulls)
  * @throws A {@link DomainError} if an option is missing, unknown or out of range, or the law has
  * unbounded support
@@ -111,13 +111,13 @@ export function hullVolumeRatio(options: HullVolumeRatioArgs): Probability {
  * ratio.value.toPrecision(12); // => (72 / 132).toPrecision(12)
  * ```
  */
-export function hullIntrinsicVolumeRatio(options: HullIntrinsicVolumeRatioArgs): Probability {
+export function hullIntrinsicVolumeRatio(args: HullIntrinsicVolumeRatioArgs): Probability {
   const fn = 'hullIntrinsicVolumeRatio';
-  checkOptions(fn, options, ['n', 'd', 'k', 'law', 'hull']);
-  const { d, k } = options;
+  checkOptions(fn, args, ['n', 'd', 'k', 'law', 'hull']);
+  const { d, k } = args;
   checkDimension(fn, d);
   checkInteger(fn, 'k', k, 0, d);
-  const marginal = resolveMarginal(fn, options.law, d);
-  const hull = resolveHull(fn, options.hull);
-  return volumeRatioKernel(k, marginal, resolvePoints(fn, options.n), hull);
+  const marginal = resolveMarginal(fn, args.law, d);
+  const hull = resolveHull(fn, args.hull);
+  return volumeRatioKernel(k, marginal, resolvePoints(fn, args.n), hull);
 }

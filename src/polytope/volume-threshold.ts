@@ -36,7 +36,7 @@ export interface ApproxVolumeThresholdArgs {
  * Source: Phase transition for the volume of high-dimensional random polytopes, Random Structures and
  * Algorithms 58 (2021), arXiv:1911.12696.
  *
- * @param options - `d`: an integer from 1 to a million; `k`: an integer from 1 to d; `law`: a beta law with
+ * @param args - `d`: an integer from 1 to a million; `k`: an integer from 1 to d; `law`: a beta law with
  * d/2 + b > 0; `share`: a number strictly between 0 and 1
  * @returns the number of points of the limit theorem, which can be below d + 1 for small d
  * @throws A {@link DomainError} if an option is missing, unknown or out of range
@@ -47,14 +47,14 @@ export interface ApproxVolumeThresholdArgs {
  * approxVolumeThreshold({ d: 5000, law: uniformBall() }).log10.toFixed(1); // => '8892.8'
  * ```
  */
-export function approxVolumeThreshold(options: ApproxVolumeThresholdArgs): LogNumber {
+export function approxVolumeThreshold(args: ApproxVolumeThresholdArgs): LogNumber {
   const fn = 'approxVolumeThreshold';
-  checkOptions(fn, options, ['d', 'k', 'law', 'share']);
-  const { d, share = 0.5 } = options;
+  checkOptions(fn, args, ['d', 'k', 'law', 'share']);
+  const { d, share = 0.5 } = args;
   checkDimension(fn, d);
-  const k = options.k === undefined ? d : options.k;
+  const k = args.k === undefined ? d : args.k;
   checkInteger(fn, 'k', k, 1, d);
-  const law = checkLaw(fn, options.law, ['beta'], d) as BetaLaw;
+  const law = checkLaw(fn, args.law, ['beta'], d) as BetaLaw;
   if (!(typeof share === 'number' && share > 0 && share < 1)) {
     throw new DomainError(fn, 'share', 'a number strictly between 0 and 1', share);
   }

@@ -10,7 +10,7 @@ import { difference, relativeError } from './reference.ts';
 export interface AccuracyCase {
   /** Arguments as the function takes them. */
   readonly args: readonly unknown[];
-  /** The exact result as a decimal string of 30 or more digits. */
+  /** The exact result as a decimal string of 25 or more digits. */
   readonly exact: string;
   /** Which part of the domain the case belongs to, as the table prints it. */
   readonly region: string;

@@ -1,5 +1,5 @@
 /**
- * Reference tables: results with 30 or more digits as decimal strings, kept with their provenance in
+ * Reference tables: results with 25 or more digits as decimal strings, kept with their provenance in
  * `test/reference/`.
  */
 import { readFileSync } from 'node:fs';

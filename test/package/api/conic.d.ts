@@ -86,7 +86,7 @@ export interface OriginInHullLowerBoundArgs {
     readonly generalPosition?: boolean;
 }
 
-export interface OrthantWeightsOptions {
+export interface OrthantWeightsArgs {
     readonly covariance: readonly (readonly number[])[];
 }
 
@@ -139,7 +139,7 @@ export interface WeakThresholdArgs {
     readonly model: 'l1' | 'nonnegativeL1';
 }
 
-export declare function approxNuclearNormDimension(options: {
+export declare function approxNuclearNormDimension(args: {
     rank: number;
     rows: number;
     columns: number;
@@ -158,7 +158,7 @@ export declare function arrangementFaces(args: ArrangementFacesArgs): LogNumber;
 
 export declare function arrangementRegions(args: ArrangementArgs): LogNumber;
 
-export declare function bridgeHull(options: WalkHullArgs): Probability;
+export declare function bridgeHull(args: WalkHullArgs): Probability;
 
 export declare function chiBarSquared(weights: readonly number[] | Cone, options?: ChiBarSquaredOptions): OrderRestrictedLaw;
 
@@ -178,14 +178,14 @@ export declare function eBarSquared(weights: readonly number[], options: EBarSqu
 
 export declare function halfspace(n: number): Cone;
 
-export declare function jointWalkHull(options: JointWalkHullArgs): Probability;
+export declare function jointWalkHull(args: JointWalkHullArgs): Probability;
 
-export declare function l1DescentCone(options: {
+export declare function l1DescentCone(args: {
     n: number;
     sparsity: number;
 }): Cone;
 
-export declare function l1StatisticalDimension(options: {
+export declare function l1StatisticalDimension(args: {
     n: number;
     sparsity: number;
 }): {
@@ -195,7 +195,7 @@ export declare function l1StatisticalDimension(options: {
 
 export declare function labelSeparability(args: LabelArgs): Probability;
 
-export declare function linfDescentCone(options: {
+export declare function linfDescentCone(args: {
     n: number;
     saturated: number;
 }): Cone;
@@ -212,7 +212,7 @@ export declare function originInHullLowerBound(args: OriginInHullLowerBoundArgs)
 
 export declare function orthant(n: number): Cone;
 
-export declare function orthantWeights(options: OrthantWeightsOptions): readonly number[];
+export declare function orthantWeights(args: OrthantWeightsArgs): readonly number[];
 
 export declare function polarCone(cone: Cone): Cone;
 
@@ -235,7 +235,7 @@ export declare function schlaefliCone(args: RandomConeArgs): RandomCone;
 
 export declare function simpleTree(k: number, options?: SimpleTreeOptions): readonly number[];
 
-export declare function subspace(options: {
+export declare function subspace(args: {
     dimension: number;
     ambient: number;
 }): Cone;
@@ -246,7 +246,7 @@ export declare function surroundTime(args: {
 
 export declare function totalOrder(k: number, weights?: readonly number[]): readonly number[];
 
-export declare function walkHull(options: WalkHullArgs): Probability;
+export declare function walkHull(args: WalkHullArgs): Probability;
 
 export declare function weakThreshold(args: WeakThresholdArgs): {
     readonly perMeasurement: number;

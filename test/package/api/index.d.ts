@@ -318,7 +318,7 @@ export interface OriginInHullLowerBoundArgs {
     readonly generalPosition?: boolean;
 }
 
-export interface OrthantWeightsOptions {
+export interface OrthantWeightsArgs {
     readonly covariance: readonly (readonly number[])[];
 }
 
@@ -537,15 +537,15 @@ export declare function approxSeparability(args: ApproxSeparabilityArgs): Probab
 
 export declare function approxTotalOrder(weights: readonly number[], options: ApproxTotalOrderOptions): readonly number[];
 
-export declare function approxVolumeThreshold(options: ApproxVolumeThresholdArgs): LogNumber;
+export declare function approxVolumeThreshold(args: ApproxVolumeThresholdArgs): LogNumber;
 
 export declare function betaLaw(b: number): BetaLaw;
 
 export declare function betaPrimeLaw(b: number): BetaPrimeLaw;
 
-export declare function bridgeHull(options: WalkHullArgs): Probability;
+export declare function bridgeHull(args: WalkHullArgs): Probability;
 
-export declare function capProbability(options: CapProbabilityArgs): Probability;
+export declare function capProbability(args: CapProbabilityArgs): Probability;
 
 export declare function chiBarSquared(weights: readonly number[] | Cone, options?: ChiBarSquaredOptions): OrderRestrictedLaw;
 
@@ -561,37 +561,37 @@ export declare function eBarSquared(weights: readonly number[], options: EBarSqu
 
 export declare function expectedFaces(args: ExpectedFacesArgs): LogNumber;
 
-export declare function expectedFacets(options: ExpectedFacetsArgs): LogNumber;
+export declare function expectedFacets(args: ExpectedFacetsArgs): LogNumber;
 
-export declare function expectedFacetsBelow(options: ExpectedFacetsBelowArgs): LogNumber;
+export declare function expectedFacetsBelow(args: ExpectedFacetsBelowArgs): LogNumber;
 
-export declare function expectedHullIntrinsicVolume(options: ExpectedHullIntrinsicVolumeArgs): LogNumber;
+export declare function expectedHullIntrinsicVolume(args: ExpectedHullIntrinsicVolumeArgs): LogNumber;
 
-export declare function expectedHullVolume(options: ExpectedHullVolumeArgs): LogNumber;
+export declare function expectedHullVolume(args: ExpectedHullVolumeArgs): LogNumber;
 
 export declare function expectedVertices(args: ExpectedVerticesArgs): LogNumber;
 
-export declare function facetHeight(options: FacetHeightArgs): FacetHeight;
+export declare function facetHeight(args: FacetHeightArgs): FacetHeight;
 
 export declare function gaussian(): GaussianLaw;
 
-export declare function hausdorffDistance(options: HausdorffDistanceArgs): HausdorffDistance;
+export declare function hausdorffDistance(args: HausdorffDistanceArgs): HausdorffDistance;
 
-export declare function hausdorffWithin(options: HausdorffWithinArgs): Probability;
+export declare function hausdorffWithin(args: HausdorffWithinArgs): Probability;
 
-export declare function heightLimit(options: HeightLimitArgs): HeightLimit;
+export declare function heightLimit(args: HeightLimitArgs): HeightLimit;
 
-export declare function hullIntrinsicVolumeRatio(options: HullIntrinsicVolumeRatioArgs): Probability;
+export declare function hullIntrinsicVolumeRatio(args: HullIntrinsicVolumeRatioArgs): Probability;
 
 export declare function hullVertices(points: Points, options?: LongWorkOptions): Promise<number[]>;
 
-export declare function hullVolumeRatio(options: HullVolumeRatioArgs): Probability;
+export declare function hullVolumeRatio(args: HullVolumeRatioArgs): Probability;
 
 export declare function inHull(points: Points, query: ArrayLike<number>, options?: InHullOptions): HullMembership;
 
 export declare function interpolationAudit(points: Points, options?: InterpolationAuditOptions): Promise<InterpolationAudit>;
 
-export declare function jointWalkHull(options: JointWalkHullArgs): Probability;
+export declare function jointWalkHull(args: JointWalkHullArgs): Probability;
 
 export declare function labelSeparability(args: LabelArgs): Probability;
 
@@ -609,7 +609,7 @@ export declare function originInHull(args: OriginInHullArgs): Probability;
 
 export declare function originInHullLowerBound(args: OriginInHullLowerBoundArgs): Probability;
 
-export declare function orthantWeights(options: OrthantWeightsOptions): readonly number[];
+export declare function orthantWeights(args: OrthantWeightsArgs): readonly number[];
 
 export declare function pointInHull(args: PointInHullArgs): Probability;
 
@@ -632,7 +632,7 @@ export declare function separable(points: Points, labels: ArrayLike<number | boo
 
 export declare function simpleTree(k: number, options?: SimpleTreeOptions): readonly number[];
 
-export declare function simplexVolume(options: SimplexVolumeArgs): SimplexVolume;
+export declare function simplexVolume(args: SimplexVolumeArgs): SimplexVolume;
 
 export declare function simulate(event: SimulatedEvent, options: SimulateOptions): Promise<Simulation>;
 
@@ -640,7 +640,7 @@ export declare function sizingReport(args: SizingReportArgs): SizingReport;
 
 export declare function smallest<Args, Name extends ParameterOf<Args>>(question: (args: Args) => Probability, parameter: Name, args: FixedArgs<Args, Name>, target: Target): Answer;
 
-export declare function studentT(options: {
+export declare function studentT(args: {
     readonly degreesOfFreedom: number;
 }): StudentTLaw;
 
@@ -654,7 +654,7 @@ export declare function uniformBall(): BetaLaw;
 
 export declare function uniformSphere(): BetaLaw;
 
-export declare function walkHull(options: WalkHullArgs): Probability;
+export declare function walkHull(args: WalkHullArgs): Probability;
 
 export declare function weakThreshold(args: WeakThresholdArgs): {
     readonly perMeasurement: number;

@@ -27,23 +27,23 @@ export interface RegularSimplexArgs {
     readonly edge?: number | undefined;
 }
 
-export declare function ball(options: BallArgs): Body;
+export declare function ball(args: BallArgs): Body;
 
 export declare function ballVolume(d: number, radius?: number): LogNumber;
 
 export declare function box(sides: readonly number[]): Body;
 
-export declare function crossPolytope(options: CrossPolytopeArgs): Body;
+export declare function crossPolytope(args: CrossPolytopeArgs): Body;
 
-export declare function cube(options: CubeArgs): Body;
+export declare function cube(args: CubeArgs): Body;
 
-export declare function ellipsoid(options: EllipsoidArgs): Body;
+export declare function ellipsoid(args: EllipsoidArgs): Body;
 
 export declare function flagCoefficient(d: number, k: number): LogNumber;
 
 export declare function meanWidth(body: Body): number;
 
-export declare function regularSimplex(options: RegularSimplexArgs): Body;
+export declare function regularSimplex(args: RegularSimplexArgs): Body;
 
 export declare function sphereArea(d: number, radius?: number): LogNumber;
 

@@ -153,33 +153,33 @@ export interface SimplexVolumeArgs {
     readonly law: Law;
 }
 
-export declare function approxVolumeThreshold(options: ApproxVolumeThresholdArgs): LogNumber;
+export declare function approxVolumeThreshold(args: ApproxVolumeThresholdArgs): LogNumber;
 
-export declare function capProbability(options: CapProbabilityArgs): Probability;
+export declare function capProbability(args: CapProbabilityArgs): Probability;
 
 export declare function expectedFaces(args: ExpectedFacesArgs): LogNumber;
 
-export declare function expectedFacets(options: ExpectedFacetsArgs): LogNumber;
+export declare function expectedFacets(args: ExpectedFacetsArgs): LogNumber;
 
-export declare function expectedFacetsBelow(options: ExpectedFacetsBelowArgs): LogNumber;
+export declare function expectedFacetsBelow(args: ExpectedFacetsBelowArgs): LogNumber;
 
-export declare function expectedHullIntrinsicVolume(options: ExpectedHullIntrinsicVolumeArgs): LogNumber;
+export declare function expectedHullIntrinsicVolume(args: ExpectedHullIntrinsicVolumeArgs): LogNumber;
 
-export declare function expectedHullVolume(options: ExpectedHullVolumeArgs): LogNumber;
+export declare function expectedHullVolume(args: ExpectedHullVolumeArgs): LogNumber;
 
 export declare function expectedVertices(args: ExpectedVerticesArgs): LogNumber;
 
-export declare function facetHeight(options: FacetHeightArgs): FacetHeight;
+export declare function facetHeight(args: FacetHeightArgs): FacetHeight;
 
-export declare function hausdorffDistance(options: HausdorffDistanceArgs): HausdorffDistance;
+export declare function hausdorffDistance(args: HausdorffDistanceArgs): HausdorffDistance;
 
-export declare function hausdorffWithin(options: HausdorffWithinArgs): Probability;
+export declare function hausdorffWithin(args: HausdorffWithinArgs): Probability;
 
-export declare function heightLimit(options: HeightLimitArgs): HeightLimit;
+export declare function heightLimit(args: HeightLimitArgs): HeightLimit;
 
-export declare function hullIntrinsicVolumeRatio(options: HullIntrinsicVolumeRatioArgs): Probability;
+export declare function hullIntrinsicVolumeRatio(args: HullIntrinsicVolumeRatioArgs): Probability;
 
-export declare function hullVolumeRatio(options: HullVolumeRatioArgs): Probability;
+export declare function hullVolumeRatio(args: HullVolumeRatioArgs): Probability;
 
 export declare function nextPointInHull(args: NextPointInHullArgs): Probability;
 
@@ -189,4 +189,4 @@ export declare function projectedFaces(args: ProjectedFacesArgs): ProjectedFaces
 
 export declare function queriesInHull(args: QueriesInHullArgs): Probability;
 
-export declare function simplexVolume(options: SimplexVolumeArgs): SimplexVolume;
+export declare function simplexVolume(args: SimplexVolumeArgs): SimplexVolume;
