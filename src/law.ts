@@ -51,17 +51,49 @@ export interface StudentTLaw {
   readonly degreesOfFreedom: number;
 }
 
-/** The standard normal law N(0, I) on R^d. */
+/**
+ * The standard normal law N(0, I) on R^d, and any other mean and covariance where the question does not
+ * change under affine maps: membership, vertices and faces.
+ *
+ * @returns the law
+ *
+ * @example
+ * ```ts
+ * import { expectedFacets, gaussian } from 'hullgauge';
+ * expectedFacets({ n: 50, d: 10, law: gaussian() }).toString(); // => '93354.9864529'
+ * ```
+ */
 export function gaussian(): GaussianLaw {
   return Object.freeze({ kind: 'law', family: 'gaussian' });
 }
 
-/** The uniform law on the unit ball of R^d. */
+/**
+ * The uniform law on the unit ball of R^d: {@link betaLaw} with b = 0.
+ *
+ * @returns the law
+ *
+ * @example
+ * ```ts
+ * import { betaLaw, uniformBall } from 'hullgauge';
+ * uniformBall(); // => betaLaw(0)
+ * ```
+ */
 export function uniformBall(): BetaLaw {
   return betaLaw(0);
 }
 
-/** The uniform law on the unit sphere of R^d. */
+/**
+ * The uniform law on the unit sphere of R^d, two points of equal probability for d = 1: {@link betaLaw}
+ * with b = -1.
+ *
+ * @returns the law
+ *
+ * @example
+ * ```ts
+ * import { betaLaw, uniformSphere } from 'hullgauge';
+ * uniformSphere(); // => betaLaw(-1)
+ * ```
+ */
 export function uniformSphere(): BetaLaw {
   return betaLaw(-1);
 }
@@ -90,6 +122,15 @@ export function betaLaw(b: number): BetaLaw {
  * @param b - exponent, finite and positive; every function that takes the law asks for b > d/2
  * @returns the law
  * @throws A {@link DomainError} if `b` is out of range
+ *
+ * @example
+ * ```ts
+ * import { betaPrimeLaw, capProbability, studentT } from 'hullgauge';
+ * // in dimension d a t law of nu degrees of freedom, up to its scale, has b = (nu + d)/2
+ * const height = { d: 3, height: 0.5 };
+ * const p = capProbability({ ...height, law: betaPrimeLaw(4) }).value;
+ * capProbability({ ...height, law: studentT({ degreesOfFreedom: 5 }) }).value; // => p
+ * ```
  */
 export function betaPrimeLaw(b: number): BetaPrimeLaw {
   checkPositive('betaPrimeLaw', 'b', b);
@@ -97,11 +138,21 @@ export function betaPrimeLaw(b: number): BetaPrimeLaw {
 }
 
 /**
- * The multivariate t law: heavier tails than the Gaussian, which is its limit.
+ * The multivariate t law on R^d: heavier tails than the Gaussian, which is its limit after scaling.
+ *
+ * Standardised as the beta-prime law: its density is proportional to $(1 + |x|^2)^{-(\nu + d)/2}$ with $\nu$
+ * degrees of freedom, so lengths are those of the usual t divided by $\sqrt{\nu}$.
  *
  * @param args - `degreesOfFreedom`: positive and finite
  * @returns the law; in dimension d it is the beta-prime law with b = (degreesOfFreedom + d)/2
  * @throws A {@link DomainError} if an option is unknown or out of range
+ *
+ * @example
+ * ```ts
+ * import { nextPointInHull, studentT } from 'hullgauge';
+ * const law = studentT({ degreesOfFreedom: 3 });
+ * `${nextPointInHull({ n: 1000, d: 6, law })}`; // => '0.937771058208'
+ * ```
  */
 export function studentT(args: { readonly degreesOfFreedom: number }): StudentTLaw {
   checkOptions('studentT', args, ['degreesOfFreedom']);

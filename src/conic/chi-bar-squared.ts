@@ -132,7 +132,9 @@ function lawOf(
  * mean is 0" against "the mean is in C"; if the null hypothesis is the subspace that C contains, as for
  * equal against ordered means, that subspace's dimension is taken off the degrees of freedom. The wrong
  * choice shifts them and can double a p-value, so a cone with a subspace has to name its null
- * hypothesis. Assumptions: normal estimates with known covariance, C in the metric of its inverse.
+ * hypothesis. Assumptions: normal estimates with known covariance, C in the metric of its inverse. With an
+ * estimated covariance p-values are approximate and as a rule too small; {@link eBarSquared} is exact for one
+ * unknown variance.
  *
  * @param weights - level probabilities indexed by degrees of freedom, with sum 1 within 1e-9, as
  *   {@link totalOrder}, {@link simpleTree} and {@link orthantWeights} give them; or a {@link Cone}

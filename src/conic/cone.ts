@@ -165,7 +165,7 @@ export function ray(): Cone {
 /**
  * The half-space of $\mathbb{R}^n$, for n from 1 to 1000000.
  *
- * Exact: $v_{n-1} = v_n = \tfrac12$.
+ * Exact: $v_{n-1} = v_n = \tfrac12$. Cost: proportional to n.
  *
  * @param n - ambient dimension, an integer from 1 to 1000000
  * @returns the cone

@@ -51,7 +51,8 @@ export type RecoveryArgs =
  * Assumptions: $A x = y$ with an $m \times n$ matrix whose kernel is a uniformly random subspace (a
  * Gaussian matrix); for `'nonnegativeFeasible'` and `'box'` any law of the columns that is in general
  * position and unchanged by independent changes of sign. The signs and positions of the non-zeros do
- * not matter, nor do their sizes. No noise.
+ * not matter, nor do their sizes. No noise. For designed matrices the number is an orientation, nothing is
+ * proved; it does not replace a safety review.
  *
  * Cost: a few hundred one-dimensional integrals at most for the l1 models, about 10 ms at n = 1000;
  * constant for the other two.

@@ -95,6 +95,8 @@ export function logisticFitExists(args: LabelArgs): Probability {
  *
  * $$ C(n, p) = 2 \sum_{k=0}^{p-1} \binom{n-1}{k}, \qquad p = d + 1 \text{ (}d\text{ without intercept)}. $$
  *
+ * Assumptions: the points are in general position; otherwise the count is smaller.
+ *
  * @param args - `n`: number of points; `d`: number of slopes; `intercept`: `true` if left out
  * @returns the count; all $2^n$ for n <= p, 1 for no points, 0 for points but no coefficient
  * @remarks At most 300 terms, constant cost beyond. Relative error of the logarithm below 2e-15.

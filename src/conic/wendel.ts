@@ -40,8 +40,8 @@ export interface OriginInHullArgs {
  *   dimension, an integer from 0 to 2^53 - 1
  * @returns the probability; exactly 0 for n <= d, exactly 1/2 at n = 2d; correctly rounded for n <= 54
  * @remarks Constant cost, a microsecond or less. Relative error of the smaller tail below 2e-15 down to
- *   1e-300, of its logarithm below 1e-15; measured figures on the accuracy page. The number holds under the stated assumptions; it does not replace a
- *   safety review.
+ *   1e-300, of its logarithm below 1e-15; measured figures on the accuracy page. The number holds under
+ *   the stated assumptions; it does not replace a safety review.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
  * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111. Upper

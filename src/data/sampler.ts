@@ -20,8 +20,14 @@ export interface SamplerOptions {
 /**
  * Makes a function that draws points from a law, the same points for the same seed on every engine.
  *
- * Gaussian points are from N(0, I), all others from the standard law. Draws use only operations that
- * the language defines exactly, so not even the last bit depends on the engine.
+ * With g a standard normal vector and G an independent gamma number of shape a, points are
+ *
+ * $$ g \text{ (Gaussian)}, \qquad \frac{g}{\sqrt{|g|^2 + 2 G}} \text{ (beta, } a = b + 1), \qquad
+ *    \frac{g}{\sqrt{2 G}} \text{ (beta prime, } a = b - \tfrac d2), $$
+ *
+ * of the standard laws: N(0, I) for the Gaussian one. Draws use only operations that the language defines
+ * exactly, so not even the last bit depends on the engine. The numbers are pseudorandom, for simulation,
+ * not for secrets.
  *
  * @param law - the law of the points; `studentT` with at least 1/8 degree of freedom, `betaPrimeLaw`
  *   with b at least d/2 + 1/16, below which lengths leave the range of doubles
@@ -29,6 +35,10 @@ export interface SamplerOptions {
  * @returns a function that returns the next point, each time in a new array
  * @remarks Cost: about d normal numbers a point.
  * @throws A {@link DomainError} if an argument is out of range
+ *
+ * Sources: A convenient method for generating normal variables, SIAM Review, 1964, doi:10.1137/1006063; A
+ * simple method for generating gamma variables, ACM Transactions on Mathematical Software, 2000,
+ * doi:10.1145/358407.358414.
  *
  * @example
  * ```ts

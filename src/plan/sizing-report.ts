@@ -62,7 +62,8 @@ export interface SizingRow {
  * @param args - `d`: number of variables; `n`: planned points; `law`: `gaussian()` if left out;
  *   `targets`: probabilities inside (0, 1), `[0.5, 0.9, 0.99]` if left out
  * @returns rows as data, and as text, Markdown and JSON
- * @remarks The numbers hold under the assumptions named in each row; they do not replace a safety
+ * @remarks Cost: for each question and target some 20 evaluations of the question, a tenth of a second to a
+ *   second in all. The numbers hold under the assumptions named in each row; they do not replace a safety
  *   review or the practice and codes that apply.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *

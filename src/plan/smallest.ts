@@ -46,7 +46,8 @@ export type FixedArgs<Args, Name> = Args extends unknown ? Omit<Args, Name & key
  * @param target - a number (at least), `{ atLeast }`, `{ atMost }` or `{ complementAtMost }`
  * @returns the value, its logarithm, whether it is certain, the values that remain possible, and the
  *   probability there
- * @remarks About 10 to 25 evaluations of the question.
+ * @remarks Cost: about 10 to 25 evaluations of the question. The answer holds under the assumptions of the
+ *   question; for one that is not monotone it may be neither smallest nor unique.
  * @throws A {@link DomainError} if an argument is wrong, or if the question does not reach the target
  *   anywhere in its domain; the message names the limit that it reaches
  *
@@ -87,6 +88,7 @@ export function smallest<Args, Name extends ParameterOf<Args>>(
  * @param target - a number (at least), `{ atLeast }`, `{ atMost }` or `{ complementAtMost }`
  * @returns the value, its logarithm, whether it is certain, the values that remain possible, and the
  *   probability there
+ * @remarks Cost and caution as for {@link smallest}.
  * @throws A {@link DomainError} if an argument is wrong, if the question does not reach the target
  *   anywhere, or if it holds for every larger value, so that there is no largest
  *

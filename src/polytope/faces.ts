@@ -48,7 +48,9 @@ const EPSILON = 2 ** -52;
  * directly. With `hull: 'symmetric'` the points are $\pm X_1, \dots, \pm X_n$; with 'withCentre' the
  * faces through the centre count, where it is a vertex.
  *
- * @param args - `n`, `d`, `k`, `law`, and optionally `hull`
+ * @param args - `n`: an integer >= 0, a double above 2^53 or a `LogNumber`; `d`: an integer from 1 to 10000;
+ *   `k`: an integer from 0 to d - 1; `law`: any law, beta-prime and t laws with at least 1/2 degree of
+ *   freedom (2b - d); `hull`: `'plain'`, for the Gaussian law also `'symmetric'` or `'withCentre'`
  * @returns the number; 0 where there are too few points for a face, binomial(n, k + 1) for n <= d + 1
  * @remarks Cost: one angle a term, at most d/2 terms; 0.1 to 10 ms up to d = 1000. Error of the
  *   logarithm, measured: 3e-14 for d <= 100, 2e-13 for d <= 500.
@@ -87,8 +89,9 @@ export function expectedFaces(args: ExpectedFacesArgs): LogNumber {
  * so it is n times the complement of {@link nextPointInHull} at n - 1 points. It is
  * {@link expectedFaces} with k = 0; formula, assumptions, accuracy and sources are there.
  *
- * @param args - `n`, `d`, `law`, and optionally `hull`
+ * @param args - `n`, `d`, `law` and `hull`, as for {@link expectedFaces}
  * @returns the number; exactly n for n <= d + 1 and for the sphere in two or more dimensions
+ * @remarks Cost and accuracy as {@link expectedFaces}.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain, or if there
  *   is no formula for the combination
  *

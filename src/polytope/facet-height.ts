@@ -51,7 +51,9 @@ export interface FacetHeight extends Distribution {
  * distribution.
  *
  * `limit` stands beside the exact law: it is approached slowly, with an error of the order
- * $\ln d / d$ (0.795 against an exact 0.785 at d = 500 and log n = 250 on the sphere).
+ * $\ln d / d$ (0.795 against an exact mean of 0.786 at d = 500 and log n = 250 on the sphere).
+ *
+ * Assumes independent points of one of these laws; for another law it is nothing.
  *
  * Cost: a fraction of a millisecond for each value of the cdf, a few milliseconds for a quantile. Accuracy:
  * bounded by the `logError` of each probability; mean 1e-14, variance 1e-12 relative up to d = 5000.

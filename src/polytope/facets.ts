@@ -144,8 +144,9 @@ function endsOfSegment(
  * n > d: how many shallow cuts to expect.
  *
  * The height of a facet is the distance of its hyperplane from the centre of the law, negative when the
- * centre lies beyond it. The number is the integral of {@link expectedFacets} from below up to `height`;
- * an upper bound for the probability that any facet cuts so deep.
+ * centre lies beyond it. The number is the integral of {@link expectedFacets} from below up to `height`,
+ * under the same assumptions (for the Gaussian law: N(0, I), since heights are no affine invariants), and
+ * an upper bound of the probability that any facet cuts so deep.
  *
  * Cost: one integral by some 200 nodes, about 150 microseconds. Accuracy: bounded by `logError`; the
  * number is that of the double `height`, to which it is sensitive where n and d are large.

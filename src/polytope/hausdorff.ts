@@ -88,6 +88,10 @@ const ALWAYS = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 
  * for fixed d, wider for larger d. `approxMean` is the integral of `approx`: within 1 % for d = 3 and 4, 7 %
  * low for d = 2 and n = 50.
  *
+ * Assumes independent points of a beta law in a perfect ball. Points that avoid a part of the ball, or depend
+ * on each other, come closer to it less often: bound and estimate are then optimistic. They do not replace a
+ * safety review.
+ *
  * Cost: a few milliseconds for an exceedance, of the order of d^2 steps for the estimate; some tens of
  * milliseconds for a guarantee. Accuracy: the upper bound within its `logError`; the logarithm of the Euler
  * characteristic 1e-14 relative up to d = 200 against 400-digit values.
@@ -207,6 +211,7 @@ function bisect(holds: (x: number) => boolean, low: number, high: number): numbe
  *
  * One minus the upper bound of {@link hausdorffDistance}; for points on the circle the exact probability. It
  * rises with n and with the distance, and is 0 for the smaller n, for which the bound says nothing.
+ * Assumptions and caution are there.
  *
  * Cost: two integrals, about half a millisecond. Accuracy: bounded by `logError`.
  *

@@ -87,7 +87,8 @@ export function expectedHullVolume(args: ExpectedHullVolumeArgs): LogNumber {
  * expected value is that of {@link expectedHullVolume} with k in place of d under the mean, times
  * $V_k(B) = \binom{d}{k} \kappa_d / \kappa_{d-k}$.
  *
- * Cost, accuracy and source as for {@link expectedHullVolume}.
+ * Assumptions, cost, accuracy and source as for {@link expectedHullVolume}; for a covariance other than the
+ * identity there is no such factor where k < d.
  *
  * @param args - as for {@link expectedHullVolume}, and `k`: an integer from 0 to d
  * @returns the expected intrinsic volume; exactly 0 for n <= k (n < k for the two other hulls)

@@ -54,7 +54,10 @@ const FEW_POINTS = 1e100;
  * share one random scale with the query (the dependent elliptical model) the Gaussian number holds.
  * It is optimistic when the query comes from a shifted or wider law than the sample.
  *
- * @param args - `n`, `d`, and optionally `law`, `queryScale` and `hull`
+ * @param args - `n`: an integer >= 0, a double above 2^53 or a `LogNumber`; `d`: an integer from 1 to 10000;
+ *   `law`: any law, beta-prime and t laws with at least 1/2 degree of freedom (2b - d), Gaussian if left
+ *   out; `queryScale`: a number from 0 to 1e100, for other laws than the Gaussian 0 or 1, 1 if left out;
+ *   `hull`: `'plain'`, for the Gaussian law also `'symmetric'` or `'withCentre'`
  * @returns the probability; exactly 0 for n <= d (plain hull) and for the sphere in two or more
  *   dimensions
  * @remarks Cost grows with the number of terms that matter, a few to a few hundred: 0.1 to 2 ms for

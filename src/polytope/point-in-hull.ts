@@ -52,10 +52,12 @@ const NEVER = Number.NEGATIVE_INFINITY;
  * points of that sample and larger for new ones, more so the larger d/n; there is no formula for it
  * here, and the number is an approximation then.
  *
- * @param args - `n`, `d` and `mahalanobisDistance`
+ * @param args - `n`: an integer >= 0, a double above 2^53 or a `LogNumber`; `d`: an integer from 1 to 1000;
+ *   `mahalanobisDistance`: a number from 0 to 1e6
  * @returns the probability; exactly 0 for n <= d; at distance 0 that of {@link originInHull}
  * @remarks Cost: 2 to 20 ms at d = 10, up to 50 ms at d = 500. Error of the logarithm of the smaller
- *   tail, measured: 1e-14 for d <= 100.
+ *   tail, measured: 1e-14 for d <= 100. The number holds under the stated assumptions; it does not replace
+ *   a safety review.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
  * Source: Absorption probabilities for Gaussian polytopes and regular spherical simplices, Advances
@@ -86,9 +88,10 @@ export function pointInHull(args: PointInHullArgs): Probability {
  * Assumptions as there. The mean is right however the queries depend on each other, as long as they
  * are independent of the sample.
  *
- * @param args - `n`, `d` and `mahalanobisDistances`
+ * @param args - `n` and `d`, as for {@link pointInHull}; `mahalanobisDistances`: at least one number from 0
+ *   to 1e6
  * @returns the mean probability, both tails averaged by themselves
- * @remarks Cost: one {@link pointInHull} per different distance.
+ * @remarks Cost: one {@link pointInHull} per different distance. Accuracy, caution and source are there.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain, or the list
  *   is empty
  *

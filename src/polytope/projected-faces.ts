@@ -53,7 +53,11 @@ const EPSILON = 2 ** -52;
  * 'simplexWithOrigin'. A vector of the cube with k free coordinates is the only one with its
  * measurements with the survival probability of 'cube'.
  *
- * @param args - `polytope`, `n`, `d` and `k`; for 'simplexWithOrigin' `survival` is that of the faces
+ * Assumptions: the kernel of the projection is a uniformly random subspace, as that of a Gaussian matrix.
+ * For a designed matrix the number is an orientation, nothing is proved.
+ *
+ * @param args - `polytope`: one of the four; `n`: an integer from 1 to 2^53 - 1; `d`: an integer from 1 to n, at
+ *   most 10000 but for the cube; `k`: an integer from 0 to n - 1; for 'simplexWithOrigin' `survival` is that of the faces
  *   without the origin, and `expected` counts the faces of both kinds
  * @returns `expected` and `survival`; survival is 1 for d = n and 0 for k >= d
  * @remarks Cost: a few to a few hundred terms, 0.1 to 20 ms. Error of the logarithm of the smaller

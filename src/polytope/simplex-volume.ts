@@ -50,6 +50,9 @@ export interface SimplexVolume {
  * $q < 2\beta - d$ (fewer than the degrees of freedom of a Student t). Mean and variance of the
  * logarithm are the derivatives at q = 0.
  *
+ * Assumes independent points of the standard law; for a covariance C and r = d multiply volumes by
+ * $\sqrt{\det C}$.
+ *
  * Cost: r steps. Accuracy: the logarithm of a moment within the result's `logError`, 1e-15 per factor.
  *
  * Source: Isotropic random simplices, Advances in Applied Probability 3 (1971).

@@ -47,7 +47,8 @@ export interface HullIntrinsicVolumeRatioArgs extends HullVolumeRatioArgs {
  * $1 - L^d$, so neither tail comes from the other by subtraction. With `hull: 'symmetric'` P is the
  * hull of n pairs $\pm X_i$, with `'withCentre'` that of the points and the centre of the ball.
  *
- * Assumes independent points of a beta law. The ratio rises with n; for d to infinity it jumps from
+ * Assumes independent points of a beta law; for points that do not reach all of the ball it is optimistic. The
+ * number does not replace a safety review. The ratio rises with n; for d to infinity it jumps from
  * 0 to 1 where $\ln n$ passes $(d/2 + \beta) \ln d$, see {@link approxVolumeThreshold}.
  *
  * Cost: one integral by some 50 to 100 nodes, about 50 microseconds for any n and d. Accuracy, measured
@@ -96,7 +97,7 @@ export function hullVolumeRatio(args: HullVolumeRatioArgs): Probability {
  * in which the dimension enters only through the marginal of one coordinate. The ratio rises with n
  * and falls with k and with the exponent of the law.
  *
- * Cost, accuracy and source as for {@link hullVolumeRatio}.
+ * Assumptions, cost, accuracy and source as for {@link hullVolumeRatio}.
  *
  * @param args - as for {@link hullVolumeRatio}, and `k`: an integer from 0 to d
  * @returns the ratio as a probability; exactly 0 for n <= k (n < k for the two other hulls)
