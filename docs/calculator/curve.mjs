@@ -59,7 +59,7 @@ export function drawing(rows, marks, shows) {
     .map(({ n, text: words, kind }, i) => {
       const at = place(x.at(n));
       const end = x.at(n) > (size.width + size.left) / 2;
-      return `<path class="mark ${kind}" d="M${at} ${size.top}V${size.height - size.bottom}"/>${text(at + (end ? -5 : 5), size.height - size.bottom - 8 - 16 * i, words, `${end ? 'end' : 'start'} marked`)}`;
+      return `<path class="mark ${kind}" d="M${at} ${size.top}V${size.height - size.bottom}"/>${text(at + (end ? -5 : 5), size.height / 2 + 16 * i, words, `${end ? 'end' : 'start'} marked`)}`;
     });
   const bottom = size.height - size.bottom;
   return `<svg viewBox="0 0 ${size.width} ${size.height}" role="img" aria-label="${describe(rows, marks)}">
