@@ -37,7 +37,7 @@ export interface ArrangementFacesArgs extends ArrangementArgs {
 }
 
 /**
- * The number of regions into which n hyperplanes in general position divide $\mathbb{R}^d$.
+ * The number of regions into which n hyperplanes in general position divide R^d.
  *
  * $$ \sum_{i=0}^{d} \binom{n}{i} \ \text{(affine)}, \qquad \binom{n-1}{d} \ \text{(affine, bounded)}, \qquad
  *    2 \sum_{i=0}^{d-1} \binom{n-1}{i} \ \text{(central)}. $$
@@ -74,8 +74,8 @@ export function arrangementRegions(args: ArrangementArgs): LogNumber {
 }
 
 /**
- * The number of k-dimensional faces of the arrangement of n hyperplanes in general position in
- * $\mathbb{R}^d$; k = d counts the regions.
+ * The number of k-dimensional faces of the arrangement of n hyperplanes in general position in R^d;
+ * k = d counts the regions.
  *
  * $$ \binom{n}{d-k} \sum_{i=0}^{k} \binom{n-d+k}{i} \ \text{(affine)}, \qquad
  *    \binom{n}{d-k} \binom{n-d+k-1}{k} \ \text{(affine, bounded)}, \qquad

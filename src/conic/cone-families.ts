@@ -19,8 +19,8 @@ import { embed } from './cone-algebra.ts';
 const EPSILON = 2 ** -52;
 
 /**
- * The circular cone of half-angle `angle` in $\mathbb{R}^n$: all directions within that angle of an axis,
- * for n from 2 to 1000000 and angles from 0 (a ray) to $\pi/2$ (a half-space).
+ * The circular cone of half-angle `angle` in R^n: all directions within that angle of an axis, for n
+ * from 2 to 1000000 and angles from 0 (a ray) to pi/2 (a half-space).
  *
  * $$ v_k = \tfrac12 \frac{\Gamma(n/2)}{\Gamma((k+1)/2)\,\Gamma((n-k+1)/2)} \sin^{k-1}\!\alpha \cos^{n-k-1}\!\alpha
  *    \quad (1 \le k \le n-1), $$
@@ -77,7 +77,7 @@ export function circularCone(n: number, angle: number): Cone {
 const LARGEST_CHAMBER = 30_000;
 
 /**
- * The Weyl chamber of type A, B or D in $\mathbb{R}^n$: the vectors whose coordinates are ordered.
+ * The Weyl chamber of type A, B or D in R^n: the vectors whose coordinates are ordered.
  *
  * | type | cone | generating function of $v_k$ |
  * |---|---|---|

@@ -146,7 +146,7 @@ export function subspace(args: { dimension: number; ambient: number }): Cone {
 }
 
 /**
- * The half-line in $\mathbb{R}^1$; products with subspaces carry it to any space.
+ * The half-line in R^1; products with subspaces carry it to any space.
  *
  * Exact: $v_0 = v_1 = \tfrac12$.
  *
@@ -163,7 +163,7 @@ export function ray(): Cone {
 }
 
 /**
- * The half-space of $\mathbb{R}^n$, for n from 1 to 1000000.
+ * The half-space of R^n, for n from 1 to 1000000.
  *
  * Exact: $v_{n-1} = v_n = \tfrac12$. Cost: proportional to n.
  *
@@ -198,8 +198,7 @@ export function halfspaceKernel(n: number): Cone {
 }
 
 /**
- * The non-negative orthant of $\mathbb{R}^n$, for n from 0 to 1000000: the vectors without a negative
- * coordinate.
+ * The non-negative orthant of R^n, for n from 0 to 1000000: the vectors without a negative coordinate.
  *
  * $$ v_k = \binom{n}{k} 2^{-n}, \qquad \delta = \tfrac{n}{2}, \qquad \sigma^2 = \tfrac{n}{4}. $$
  *

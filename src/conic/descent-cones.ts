@@ -39,7 +39,7 @@ export function descentSequence(
 }
 
 /**
- * The descent cone of the l1 norm at a vector of $\mathbb{R}^n$ with the given number of non-zeros, exactly at
+ * The descent cone of the l1 norm at a vector of R^n with the given number of non-zeros, exactly at
  * finite n.
  *
  * With $s$ non-zeros, $\beta$ the internal angles of the regular simplex and $\gamma$ the external angles of
@@ -89,8 +89,8 @@ export function l1DescentCone(args: { n: number; sparsity: number }): Cone {
 }
 
 /**
- * The descent cone of the largest-modulus norm at a vector of $\mathbb{R}^n$ with the given number of
- * coordinates of largest modulus: $\mathbb{R}_+^k \times \mathbb{R}^{n-k}$ up to rotation.
+ * The descent cone of the largest-modulus norm at a vector of R^n with the given number of
+ * coordinates of largest modulus: that many non-negative coordinates and free others, up to rotation.
  *
  * $$ v_{n-k+i} = \binom{k}{i} 2^{-k}, \qquad \delta = n - \tfrac{k}{2}. $$
  *

@@ -21,7 +21,7 @@ const SMALLEST_RATIO = 1e-100;
 const LARGEST_TREE = 2000;
 
 /**
- * The level probabilities of k groups in a total order $\mu_1 \le \dots \le \mu_k$, for equal weights and any
+ * The level probabilities of k groups in a total order mu_1 <= ... <= mu_k, for equal weights and any
  * k, or unequal weights and k <= 4.
  *
  * With equal weights the degrees of freedom are a sum of independent events of probability 1/2, 1/3, .., 1/k:
@@ -145,8 +145,8 @@ export interface SimpleTreeOptions {
 }
 
 /**
- * The level probabilities of a simple tree order: one control group and k - 1 treatments that are not below
- * it, $\mu_0 \le \mu_i$, with one common weight of the treatments.
+ * The level probabilities of a simple tree order: one control group and k - 1 treatments that are not
+ * below it, mu_0 <= mu_i, with one common weight of the treatments.
  *
  * With q(m, r) the probability that m normal variables with common correlation r are all positive, $w_0$
  * the weight of the control and w that of a treatment,

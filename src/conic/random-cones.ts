@@ -48,9 +48,8 @@ export interface RandomCone {
 }
 
 /**
- * Expected faces, conic intrinsic volumes, statistical dimension and solid angle of the random
- * Schläfli cone: a region chosen uniformly among those of n random hyperplanes through the origin of
- * $\mathbb{R}^d$.
+ * Expected faces, conic intrinsic volumes, statistical dimension and solid angle of the random Schläfli
+ * cone: a region chosen uniformly among those of n random hyperplanes through the origin of R^d.
  *
  * With $C(n,d) = 2 \sum_{i<d} \binom{n-1}{i}$,
  *
@@ -89,8 +88,7 @@ export function schlaefliCone(args: RandomConeArgs): RandomCone {
 
 /**
  * Expected faces, conic intrinsic volumes, statistical dimension and solid angle of the Cover-Efron
- * cone: the positive hull of n symmetric random points of $\mathbb{R}^d$, given that it is not all of
- * $\mathbb{R}^d$.
+ * cone: the positive hull of n symmetric random points of R^d, given that it is not all of R^d.
  *
  * With $C(n,d) = 2 \sum_{i<d} \binom{n-1}{i}$,
  *

@@ -31,8 +31,8 @@ export interface JointWalkHullArgs {
 }
 
 /**
- * The probability that the hull of a random walk's positions $S_1, \dots, S_n$ in $\mathbb{R}^d$ contains its start,
- * for any number of steps up to $2^{53} - 1$.
+ * The probability that the hull of a random walk's positions S_1, ..., S_n in R^d contains its start,
+ * for any number of steps up to 2^53 - 1.
  *
  * $$ P(0 \in \operatorname{conv}(S_1, \dots, S_n)) = P(K \ge d), \qquad
  *    K = \sum_{j=2}^{n} \operatorname{Bernoulli}\bigl(\tfrac{1}{2j}\bigr), $$
@@ -75,8 +75,8 @@ export function walkHull(args: WalkHullArgs): Probability {
 }
 
 /**
- * The probability that the hull of a random bridge's inner positions $S_1, \dots, S_{n-1}$ in $\mathbb{R}^d$
- * contains its common start and end, for any number of steps up to $2^{53} - 1$.
+ * The probability that the hull of a random bridge's inner positions S_1, ..., S_(n-1) in R^d contains
+ * its common start and end, for any number of steps up to 2^53 - 1.
  *
  * $$ P(0 \in \operatorname{conv}(S_1, \dots, S_{n-1})) = P(K \ge d), \qquad
  *    K = \sum_{j=3}^{n} \operatorname{Bernoulli}\bigl(\tfrac{1}{j}\bigr), \qquad S_n = 0, $$
@@ -115,8 +115,8 @@ export function bridgeHull(args: WalkHullArgs): Probability {
 }
 
 /**
- * The probability that the joint hull of several independent random walks and bridges in
- * $\mathbb{R}^d$, all started at 0, contains the start.
+ * The probability that the joint hull of several independent random walks and bridges in R^d, all
+ * started at 0, contains the start.
  *
  * $$ P(0 \in \operatorname{conv}) = P(K \ge d), $$
  *

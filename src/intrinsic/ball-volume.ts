@@ -8,7 +8,7 @@ import { logBallIntrinsicVolumeKernel, logBallVolumeKernel } from './ball-kernel
 const EPSILON = 2 ** -52;
 
 /**
- * Volume of the ball of a given radius in $\mathbb{R}^d$, for d from 0 up.
+ * Volume of the ball of a given radius in R^d, for d from 0 up.
  *
  * $$\kappa_d r^d = \frac{\pi^{d/2}}{\Gamma(\frac d2 + 1)}\, r^d$$
  *
@@ -35,7 +35,7 @@ export function ballVolume(d: number, radius = 1): LogNumber {
 }
 
 /**
- * Surface area of the ball of a given radius in $\mathbb{R}^d$, for d from 1 up.
+ * Surface area of the ball of a given radius in R^d, for d from 1 up.
  *
  * $$\omega_d r^{d-1} = d \kappa_d r^{d-1} = \frac{2 \pi^{d/2}}{\Gamma(\frac d2)}\, r^{d-1}$$
  *

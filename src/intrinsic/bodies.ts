@@ -85,7 +85,7 @@ function sized(
 }
 
 /**
- * The ball of a given radius in $\mathbb{R}^d$, for d from 1 to 10000.
+ * The ball of a given radius in R^d, for d from 1 to 10000.
  *
  * $$V_k = \binom dk \frac{\kappa_d}{\kappa_{d-k}}\, r^k$$
  *
@@ -113,7 +113,11 @@ export function ball(args: BallArgs): Body {
 }
 
 /**
- * The cube of a given side in $\mathbb{R}^d$, for d from 1 to 10000: $V_k = \binom dk a^k$.
+ * The cube of a given side in R^d, for d from 1 to 10000.
+ *
+ * $$V_k = \binom dk a^k$$
+ *
+ * Cost: d + 1 closed forms. Accuracy: within each `logError`. Source: as for {@link box}.
  *
  * @param args - `d`: an integer from 1 to 10000; `side`: finite and >= 0, 1 if left out
  * @returns the body
@@ -205,7 +209,7 @@ export function regularSimplex(args: RegularSimplexArgs): Body {
 }
 
 /**
- * The cross-polytope, the hull of the points $\pm s e_i$, for d from 1 to 10000.
+ * The cross-polytope, the hull of the points +-s e_i, for d from 1 to 10000.
  *
  * For s = 1 and k < d
  *

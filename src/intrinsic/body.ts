@@ -111,7 +111,15 @@ export function meanWidth(body: Body): number {
 }
 
 /**
- * Surface area of a convex body with inner points: twice $V_{d-1}$.
+ * Surface area of a convex body with inner points, from its intrinsic volumes.
+ *
+ * $$S(K) = 2\, V_{d-1}(K)$$
+ *
+ * Assumes that the body has inner points: of a flat one, of dimension d - 1, the number is both of its sides.
+ *
+ * Cost: constant. Accuracy: that of $V_{d-1}$.
+ *
+ * Source: Introduction to Geometric Probability, Cambridge University Press (1997).
  *
  * @param body - a body of this room
  * @returns the (d - 1)-dimensional measure of the boundary; 2 for d = 1

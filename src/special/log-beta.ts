@@ -70,6 +70,8 @@ export function logBetaKernel(first: number, second: number): number {
  * @remarks Constant cost. Relative error below 1e-15.
  * @throws A {@link DomainError} if an argument is out of its domain
  *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/26.3.
+ *
  * @example
  * ```ts
  * import { logBinomial } from 'hullgauge/special';
@@ -123,6 +125,8 @@ function exactBinomial(h: number, g: number): number {
  * @returns the logarithm, from the exact factorial for n <= 22
  * @remarks Constant cost. Relative error below 6e-16.
  * @throws A {@link DomainError} if `n` is no such integer
+ *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/5.4.
  *
  * @example
  * ```ts

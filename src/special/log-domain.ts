@@ -23,6 +23,8 @@ export { log1mExpKernel };
  * @remarks Constant cost. Relative error below 5e-16.
  * @throws A {@link DomainError} if `x` is positive or NaN
  *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/4.2, for log and exp.
+ *
  * @example
  * ```ts
  * import { log1mExp } from 'hullgauge/special';
@@ -46,6 +48,8 @@ export function log1mExp(x: number): number {
  * @remarks Constant cost. Absolute error below 4e-16 times the largest of 1, |a|, |b|: where the result
  *   is close to 0 the rounding of a and b leaves no better.
  * @throws A {@link DomainError} if an argument is NaN or not a number
+ *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/4.2, for log and exp.
  *
  * @example
  * ```ts
@@ -79,6 +83,8 @@ export function logAddExpKernel(a: number, b: number): number {
  * @returns the logarithm of the difference; `-Infinity` if both are equal
  * @remarks Constant cost. Absolute error below 4e-16 times the largest of 1, |a| and the result.
  * @throws A {@link DomainError} if `b` exceeds `a`, is `Infinity`, or an argument is NaN
+ *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/4.2, for log and exp.
  *
  * @example
  * ```ts
@@ -117,6 +123,8 @@ export function logSubExpKernel(a: number, b: number): number {
  * @remarks One exponential an element. Absolute error below 1e-15 times the largest of 1 and the
  *   modulus of the largest element.
  * @throws A {@link DomainError} if `values` is no array, or an element is NaN or not a number
+ *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/4.2, for log and exp.
  *
  * @example
  * ```ts
@@ -177,6 +185,8 @@ export function logSumExpKernel(values: ArrayLike<number>): number {
  * @remarks Constant cost. Relative error below 6e-16.
  * @throws A {@link DomainError} if `x` is -1 or below, or NaN
  *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/4.6.
+ *
  * @example
  * ```ts
  * import { log1pmx } from 'hullgauge/special';
@@ -216,6 +226,8 @@ const LOG1PMX: readonly number[] = [
  * @returns the difference, at least 0; `Infinity` at both infinities
  * @remarks Constant cost. Relative error below 6e-16.
  * @throws A {@link DomainError} if `x` is NaN or not a number
+ *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/4.2.
  *
  * @example
  * ```ts

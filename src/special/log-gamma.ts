@@ -128,6 +128,8 @@ const BETWEEN_ZEROS: readonly number[] = [
  *   where log Gamma(x) is far larger than the result, below 1e-15 |log x|.
  * @throws A {@link DomainError} if an argument is out of its domain
  *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/5.11.
+ *
  * @example
  * ```ts
  * import { logGammaRatio } from 'hullgauge/special';

@@ -81,6 +81,8 @@ export function logNormalCdf(x: number): number {
  *   7e-16.
  * @throws A {@link DomainError} if `p` is outside [0, 1], NaN or neither a number nor a Probability
  *
+ * Source: NIST Digital Library of Mathematical Functions, https://dlmf.nist.gov/7.17.
+ *
  * @example
  * ```ts
  * import { Probability } from 'hullgauge';
