@@ -51,7 +51,11 @@ export function isCertain(p: Probability, target: Probability): boolean {
   const lower = target.log <= target.logComplement;
   const log = lower ? p.log : p.logComplement;
   const targetLog = lower ? target.log : target.logComplement;
-  if (log === targetLog && log === Number.NEGATIVE_INFINITY) return p.logError === 0;
+  if (targetLog === Number.NEGATIVE_INFINITY) {
+    // Every probability is at least 0; at most 0 is one that is known to be 0.
+    if (lower) return true;
+    return log === targetLog ? p.logError === 0 : p.logError < Number.POSITIVE_INFINITY;
+  }
   if (log === Number.NEGATIVE_INFINITY) return true;
   const pIsLower = p.log <= p.logComplement;
   const small = pIsLower ? p.value : p.complement;

@@ -51,7 +51,8 @@ export function conditionOf(
     try {
       probability = question({ ...fixed, [parameter]: value } as never);
     } catch (error) {
-      if (isDomainError(error) && error.parameter === parameter) {
+      // Whatever its name: with too few variables it is the sparsity that a question refuses.
+      if (isDomainError(error)) {
         refused = error;
         return undefined;
       }

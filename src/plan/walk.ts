@@ -22,7 +22,27 @@ export interface Walk {
   readonly bounded: boolean;
 }
 
-/** Whole numbers tried in search of the low end, then the stations of the walk. */
+/** Whole numbers tried in search of the low end, which may be another argument: variables, for one. */
+const FIRST_INTEGERS = [
+  0,
+  1,
+  2,
+  3,
+  4,
+  8,
+  16,
+  64,
+  256,
+  1024,
+  4096,
+  65536,
+  2 ** 20,
+  2 ** 26,
+  2 ** 33,
+  2 ** 42,
+  2 ** 53 - 1,
+] as const;
+/** The stations of the walk on whole numbers. */
 const INTEGER_STATIONS = [16, 4096, 2 ** 53 - 1] as const;
 /** The same for real arguments, negative ones first. */
 const REAL_STATIONS = [
@@ -93,7 +113,7 @@ function foundChange(
 }
 
 function firstInteger(condition: Condition): Evaluation | undefined {
-  for (const x of [0, 1, 2, 3, 4, 8, 16, 64, 256, 1024, 4096, 65536]) {
+  for (const x of FIRST_INTEGERS) {
     const evaluation = condition.at(x);
     if (evaluation === undefined) continue;
     if (x <= 4) return evaluation;

@@ -8,8 +8,10 @@ import {
   originInHull,
   originInHullLowerBound,
   Probability,
+  recoverySuccess,
   smallest,
 } from 'hullgauge';
+import { coneMeetsSubspace, orthant } from 'hullgauge/conic';
 import { describe, expect, it } from 'vitest';
 import { type NamedRow, readTable } from '../support/reference.ts';
 
@@ -288,5 +290,43 @@ describe('properties', () => {
       smallest(counted, 'n', { d }, 0.95);
       expect(count).toBeLessThanOrEqual(30);
     }
+  });
+});
+
+describe('arguments whose domain another argument limits', () => {
+  it('finds the number of variables that recovery allows', () => {
+    const args = { model: 'nonnegativeFeasible', sparsity: 10 } as const;
+    // P(Bin(n - 11, 1/2) <= m - 11) is 1/2 at n = 2m - 10
+    for (const measurements of [1, 100, 1e6, 1e9]) {
+      const question = { ...args, sparsity: measurements === 1 ? 0 : 10, measurements };
+      const { value, exact } = largest(recoverySuccess, 'n', question, 0.5);
+      expect([value, exact]).toEqual([2 * measurements - question.sparsity, true]);
+    }
+    const l1 = { model: 'l1', sparsity: 10, measurements: 100 } as const;
+    const { value } = largest(recoverySuccess, 'n', l1, 0.99);
+    const at = (n: number): number => recoverySuccess({ ...l1, n }).value;
+    expect([at(value) >= 0.99, at(value + 1) >= 0.99]).toEqual([true, false]);
+  });
+
+  it('takes a question that passes the argument on under another name', () => {
+    const meets = ({ m }: { m: number }): Probability =>
+      coneMeetsSubspace(orthant(50), { codimension: m });
+    expect(smallest(meets, 'm', {}, { atMost: 0.01 }).value).toBe(34);
+  });
+
+  it('still says which other argument is wrong', () => {
+    expect(() => smallest(originInHull, 'n', { d: -1 }, 0.5)).toThrow(
+      'originInHull: d must be an integer >= 0, got -1',
+    );
+  });
+});
+
+describe('targets of 0 and 1', () => {
+  it('are certain where they are', () => {
+    const l1 = { model: 'l1', n: 1000, sparsity: 20 } as const;
+    const surely = smallest(recoverySuccess, 'measurements', l1, 1);
+    expect([surely.value, surely.exact, surely.bracket]).toEqual([1000, true, [1000, 1000]]);
+    const anyway = smallest(originInHull, 'n', { d: 12 }, { atMost: 1 });
+    expect([anyway.value, anyway.exact]).toEqual([0, true]);
   });
 });
