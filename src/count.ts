@@ -37,6 +37,5 @@ export function resolveCount(
     const n = Math.round(Math.exp(log));
     if (n >= min && n <= 2 ** 53) return { n, log: Math.log(n) };
   }
-  const shown = isLogNumber(value) ? `a LogNumber with log ${value.log}` : value;
-  throw new DomainError(fn, parameter, `an integer >= ${min}`, shown);
+  throw new DomainError(fn, parameter, `an integer >= ${min}`, value);
 }

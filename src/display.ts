@@ -37,7 +37,7 @@ export function formatNumber(value: number, relativeError = 0): string {
 }
 
 /** ln 10 as a part that times an exponent below 2^31 is exact, and the rest. */
-const LN10_HIGH = 2414435 / 2 ** 20;
+const LN10_HIGH = 2.302584648132324;
 const LN10_LOW = 4.4486172146526799e-7;
 
 /** The positive number with natural logarithm `log`, in decimal, far beyond the range of doubles. */
@@ -63,17 +63,6 @@ export function formatExponential(log: number, logError = 0): string {
 /** A named quantity in the table that a notebook shows. */
 export type DisplayRow = readonly [name: string, value: string];
 
-/** A bundle with a one-line text and, in Markdown and HTML, a table of named quantities. */
-function displayTable(text: string, rows: readonly DisplayRow[]): DisplayBundle {
-  const markdown = rows.map(([name, value]) => `| ${name} | ${value} |`).join('\n');
-  const html = rows.map(([name, value]) => `<tr><th>${name}</th><td>${value}</td></tr>`).join('');
-  return {
-    'text/plain': text,
-    'text/markdown': `| | ${text} |\n| --- | --- |\n${markdown}`,
-    'text/html': `<table><caption>${text}</caption>${html}</table>`,
-  };
-}
-
 abstract class ShownResult {
   abstract toString(): string;
 
@@ -92,7 +81,15 @@ abstract class ShownResult {
 function withNotebookDisplay(base: typeof ShownResult): typeof ShownResult {
   Object.defineProperty(base.prototype, Symbol.for('Jupyter.display'), {
     value(this: ShownResult): DisplayBundle {
-      return displayTable(this.toString(), this.displayRows());
+      const text = this.toString();
+      const rows = this.displayRows();
+      const html = rows.map(([name, value]) => `<tr><th>${name}</th><td>${value}</td></tr>`);
+      const markdown = rows.map(([name, value]) => `| ${name} | ${value} |`);
+      return {
+        'text/plain': text,
+        'text/markdown': [`| | ${text} |`, '| --- | --- |', ...markdown].join('\n'),
+        'text/html': `<table><caption>${text}</caption>${html.join('')}</table>`,
+      };
     },
   });
   return base;

@@ -52,8 +52,7 @@ export class DomainError extends RangeError {
 function describe(value: unknown): string {
   if (typeof value === 'string') return JSON.stringify(value);
   if (typeof value === 'bigint') return `${value}n`;
-  if (typeof value === 'function') return 'a function';
-  if (typeof value !== 'object' || value === null) return String(value);
+  if (Object(value) !== value) return String(value);
   if (Array.isArray(value)) return `an array of length ${value.length}`;
   const { kind } = value as { kind?: unknown };
   return typeof kind === 'string' ? `an object of kind ${describe(kind)}` : 'an object';
@@ -72,11 +71,9 @@ export function checkInteger(
 ): asserts value is number {
   if (typeof value === 'number' && Number.isInteger(value) && value >= min && value <= max) return;
   const requirement =
-    max !== MAX_INTEGER
-      ? `an integer from ${min} to ${max}`
-      : typeof value === 'number' && value > max
-        ? `an integer from ${min} to 2^53 - 1`
-        : `an integer >= ${min}`;
+    max < MAX_INTEGER || (typeof value === 'number' && value > max)
+      ? `an integer from ${min} to ${max === MAX_INTEGER ? '2^53 - 1' : max}`
+      : `an integer >= ${min}`;
   throw new DomainError(fn, parameter, requirement, value);
 }
 
@@ -177,10 +174,7 @@ export function checkOptions(
 }
 
 function intervalText(min: number, max: number): string {
-  const lower = min > -Infinity;
-  const upper = max < Infinity;
-  if (lower && upper) return `a number from ${min} to ${max}`;
-  if (lower) return `a number >= ${min}`;
-  if (upper) return `a number <= ${max}`;
-  return 'a number';
+  if (max < Infinity)
+    return min > -Infinity ? `a number from ${min} to ${max}` : `a number <= ${max}`;
+  return min > -Infinity ? `a number >= ${min}` : 'a number';
 }

@@ -161,6 +161,17 @@ export function studentT(args: { readonly degreesOfFreedom: number }): StudentTL
   return Object.freeze({ kind: 'law', family: 'studentT', degreesOfFreedom });
 }
 
+/** A beta-prime law as the formulas take it. */
+export interface ResolvedBetaPrimeLaw extends BetaPrimeLaw {
+  /** Half the degrees of freedom of a Student t: b - d/2 without its rounding. */
+  readonly excess?: number;
+}
+
+/** b - d/2, half the degrees of freedom: what the marginals depend on, in any dimension. */
+export function excessOf(law: ResolvedBetaPrimeLaw, d: number): number {
+  return law.excess ?? law.b - d / 2;
+}
+
 /**
  * Refuses anything but a valid law of one of the families for which `fn` has a formula in R^d.
  *
@@ -171,15 +182,12 @@ export function checkLaw(
   law: unknown,
   families: readonly ('gaussian' | 'beta' | 'betaPrime')[],
   d: number,
-): GaussianLaw | BetaLaw | BetaPrimeLaw {
+): GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw {
   if (typeof law !== 'object' || law === null || (law as Law).kind !== 'law') {
     throw new DomainError(fn, 'law', 'a law such as gaussian() or uniformBall()', law);
   }
   const given = law as Law;
-  const resolved: Law =
-    given.family === 'studentT'
-      ? { kind: 'law', family: 'betaPrime', b: (given.degreesOfFreedom + d) / 2 }
-      : given;
+  const resolved = given.family === 'studentT' ? betaPrimeOf(given.degreesOfFreedom, d) : given;
   if (!families.includes(resolved.family as 'gaussian')) {
     const list = families.map((family) => FAMILY_NAMES[family]).join(' or ');
     throw new DomainError(
@@ -190,7 +198,10 @@ export function checkLaw(
     );
   }
   if (resolved.family === 'beta') checkFinite(fn, 'law.b', resolved.b, -1);
-  if (resolved.family === 'betaPrime' && !(resolved.b > d / 2 && Number.isFinite(resolved.b))) {
+  if (
+    resolved.family === 'betaPrime' &&
+    !(excessOf(resolved, d) > 0 && Number.isFinite(resolved.b))
+  ) {
     const parameter = given.family === 'studentT' ? 'law.degreesOfFreedom' : 'law.b';
     const requirement =
       given.family === 'studentT' ? 'finite and > 0' : `finite and > d/2 = ${d / 2}`;
@@ -201,7 +212,13 @@ export function checkLaw(
       given.family === 'studentT' ? given.degreesOfFreedom : resolved.b,
     );
   }
-  return resolved as GaussianLaw | BetaLaw | BetaPrimeLaw;
+  return resolved as GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw;
+}
+
+/** The t law in R^d. */
+function betaPrimeOf(degreesOfFreedom: number, d: number): ResolvedBetaPrimeLaw {
+  const b = (degreesOfFreedom + d) / 2;
+  return { kind: 'law', family: 'betaPrime', b, excess: degreesOfFreedom / 2 };
 }
 
 const FAMILY_NAMES = {

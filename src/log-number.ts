@@ -136,7 +136,7 @@ export class LogNumber extends Displayable {
 
 // Outside the class: a class that names itself in its body is renamed by the build.
 function make(log: number, logError: number): LogNumber {
-  return new LogNumber(log, logError);
+  return new LogNumber(log || 0, logError);
 }
 
 /** Whether a value is a log number, from this copy of the library or another, or its plain data. */

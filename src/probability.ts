@@ -235,7 +235,7 @@ function checkedFields(fields: ProbabilityFields): Probability {
   // Anything but an object is refused for the value that it lacks.
   const { value, complement, log, logComplement, logError = 0 } = fields ?? {};
   if (Math.abs(value + complement - 1) > SLACK) {
-    throw new DomainError(fn, 'complement', `1 - value (value is ${value})`, complement);
+    throw new DomainError(fn, 'complement', `1 - value = ${1 - value}`, complement);
   }
   checkTail(fn, 'value', value, 'log', log);
   checkTail(fn, 'complement', complement, 'logComplement', logComplement);
@@ -262,8 +262,8 @@ const SLACK = 1e-9;
 function checkTail(fn: string, name: string, value: number, logName: string, log: number): void {
   checkNumber(fn, name, value, 0, 1);
   checkNumber(fn, logName, log, undefined, 0);
-  if (Math.abs(Math.exp(log) - value) > SLACK * value + Number.MIN_VALUE) {
-    throw new DomainError(fn, logName, `the logarithm of ${name} (which is ${value})`, log);
+  if (Math.abs(Math.exp(log) - value) > SLACK * value + 5e-324) {
+    throw new DomainError(fn, logName, `the logarithm of ${name}`, log);
   }
 }
 

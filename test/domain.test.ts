@@ -79,7 +79,7 @@ describe('the one wording of all messages', () => {
       () => checkNumber('f', 'x', LogNumber.of(1)),
       'f: x must be a number, got an object of kind "logNumber"',
     ],
-    [() => checkNumber('f', 'x', () => 1), 'f: x must be a number, got a function'],
+    [() => checkNumber('f', 'x', () => 1), 'f: x must be a number, got an object'],
     [() => checkNumber('f', 'x', {}), 'f: x must be a number, got an object'],
   ])('%#: %s', (call, message) => {
     expect(refusal(call)).toBe(message);
@@ -110,7 +110,7 @@ describe('counts', () => {
   it('refuse a logarithm without a count', () => {
     for (const log of [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY]) {
       expect(refusal(() => resolveCount('f', 'n', LogNumber.fromLog(log), 1))).toContain(
-        'LogNumber',
+        'logNumber',
       );
     }
   });

@@ -64,7 +64,7 @@ describe('construction', () => {
     };
     expect(Probability.of(fields).logError).toBe(0);
     expect(() => Probability.of({ ...fields, complement: 0.7 })).toThrow(
-      'Probability.of: complement must be 1 - value (value is 0.25), got 0.7',
+      'Probability.of: complement must be 1 - value = 0.75, got 0.7',
     );
     expect(() => Probability.of({ ...fields, log: -1 })).toThrow(DomainError);
     expect(() => Probability.of({ ...fields, logComplement: -1 })).toThrow(DomainError);

@@ -4,11 +4,11 @@
  * S(n, k) = sum of binom(n, i) over i <= k is half of Cover's number of dichotomies of n + 1 points
  * with k + 1 coefficients, which has the stable evaluation.
  */
+import { EPSILON } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { logDichotomies } from './separability.ts';
 
-const EPSILON = 2 ** -52;
 /** log 2^52: below it, sums of binomial coefficients are exact in doubles. */
 const EXACT = 36.04;
 

@@ -1,10 +1,11 @@
 /**
  * Products and polars of cones.
  */
+
 import { DomainError } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { type Cone, checkCone, MAX_AMBIENT, makeCone } from './cone.ts';
 
-const EPSILON = 2 ** -52;
 /** Terms this far below the largest do not change a sum. */
 const CUT = 45;
 

@@ -1,7 +1,9 @@
 /**
  * Circular cones and the Weyl chambers of the reflection groups A, B and D.
  */
+
 import { checkChoice, checkInteger, checkNumber } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
 import { stirlingRow } from '../special/stirling-row.ts';
@@ -15,8 +17,6 @@ import {
   roundingErrors,
 } from './cone.ts';
 import { embed } from './cone-algebra.ts';
-
-const EPSILON = 2 ** -52;
 
 /**
  * The circular cone of half-angle `angle` in R^n: all directions within that angle of an axis, for n

@@ -7,7 +7,9 @@
  * containing) of the cone; for a cone that is not a subspace its even and its odd values have
  * probability 1/2 each. Everything that depends on a cone only up to rotation is a function of them.
  */
+
 import { checkInteger, checkOptions, DomainError } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 
 /** A closed convex cone, known up to rotation: plain frozen data. */
@@ -48,7 +50,6 @@ export interface ConeData {
   readonly standardErrors?: number[];
 }
 
-const EPSILON = 2 ** -52;
 /** Largest ambient dimension: whole vectors of intrinsic volumes are kept. */
 export const MAX_AMBIENT = 1_000_000;
 

@@ -5,6 +5,7 @@
  * angle is one of a cone in at most four dimensions. Where two volumes add up to a third, the one that
  * is known better gives the other.
  */
+import { EPSILON } from '../epsilon.ts';
 import {
   DEPENDENT,
   dot,
@@ -18,7 +19,6 @@ import { hyperspaceAngle, planeAngle, spaceAngle } from '../numeric/solid-angle.
 
 /** Two unit vectors closer than this are one, and a product smaller than this is 0. */
 export const TOLERANCE = 1e-11;
-const ROUNDING = 2 ** -52;
 /** A ray closer to a facet that does not contain it than this leaves no digit of the angles. */
 const SMALLEST_HEIGHT = 1e-9;
 /** Up to here 1/2 minus a sum keeps its digits. */
@@ -131,7 +131,7 @@ export function faceVolumes(
       if (!touching(i, j)) height = Math.min(height, Math.abs(dot(ray, normal)));
     });
   });
-  let slack = ROUNDING;
+  let slack = EPSILON;
   for (const vector of generators) {
     for (const normal of normals) {
       const product = Math.abs(dot(vector, normal));
@@ -139,7 +139,7 @@ export function faceVolumes(
     }
   }
   if (height < SMALLEST_HEIGHT) unresolved();
-  const relative = ROUNDING * (16 + rays.length + normals.length) + (8 * slack) / height;
+  const relative = EPSILON * (16 + rays.length + normals.length) + (8 * slack) / height;
   const all = (volumes: readonly number[]): FaceVolumes => ({
     volumes,
     errors: volumes.map(() => relative),

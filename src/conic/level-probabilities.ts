@@ -10,7 +10,7 @@ import { logOrthantTermKernel } from '../numeric/orthant.ts';
 import { weylChamber } from './cone-families.ts';
 import { checkWeights } from './mixture.ts';
 
-const TWO_PI = 2 * Math.PI;
+const TWO_PI = 6.283185307179586;
 /** Up to this many groups unequal weights have elementary level probabilities. */
 const ELEMENTARY = 4;
 /** Rows cost k^2/2 operations. */

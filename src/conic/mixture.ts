@@ -12,6 +12,7 @@
  */
 
 import { DomainError } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { narrow } from '../numeric/monotone-search.ts';
 import { oddsGap, reaches } from '../numeric/target.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
@@ -38,7 +39,6 @@ export interface Component {
   readonly end: number;
 }
 
-const EPSILON = 2 ** -52;
 /** Terms below e^-60 of the largest one are left out: 10^6 of them are still nothing. */
 const NEGLIGIBLE = -60;
 /** Weights may miss the sum 1 by this much; the error bounds then say so. */

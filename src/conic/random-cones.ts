@@ -10,14 +10,15 @@
  *
  * Source: Random conical tessellations, Discrete and Computational Geometry 56 (2016).
  */
+
 import { checkInteger, checkOptions } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { TAIL_SLOTS } from '../special/tail-result.ts';
 import { wendelTail } from './wendel.ts';
 
-const EPSILON = 2 ** -52;
 /** Whole vectors of intrinsic volumes are returned. */
 const MAX_DIMENSION = 1_000_000;
 /** Up to this many ratios are added one by one. */

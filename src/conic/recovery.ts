@@ -211,7 +211,8 @@ export function recoveryBounds(args: RecoveryBoundsArgs): {
   const polar = ambient - statisticalDimension;
   const excess = measurements - statisticalDimension;
   const above = excess >= 0;
-  const log = -0.5 * Math.max(entropy(statisticalDimension, excess), entropy(polar, -excess));
+  // 0 minus, so that no bound at all is 0 and not -0
+  const log = 0 - 0.5 * Math.max(entropy(statisticalDimension, excess), entropy(polar, -excess));
   const rounding = 2 ** -50 * (1 + Math.abs(log));
   const bound = probabilityFromTail(
     Math.exp(log),

@@ -81,6 +81,6 @@ function quantile(d: number, target: Probability): number {
   if (first.gap >= 0) return d + 1;
   // 2 d - 1 + L + sqrt(L^2 + 4 L (d - 1)) points suffice for a complement of e^-L, by Hoeffding.
   const log = -target.logComplement;
-  const enough = Math.ceil(2 * d + log + Math.sqrt(log * log + 4 * log * d)) + 1;
+  const enough = Math.ceil(2 * d + log + Math.sqrt(log) * Math.sqrt(log + 4 * d)) + 1;
   return narrow({ lower: first, upper: { x: enough, gap: gapAt(enough) } }, gapAt, true).upper.x;
 }

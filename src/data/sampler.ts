@@ -67,7 +67,7 @@ export function sampler(law: Law, options: SamplerOptions): () => Float64Array {
 export const MAX_NUMBERS: number = 2 ** 27;
 
 /** Smallest shape of a gamma number whose square root in a denominator never leaves the doubles. */
-const LEAST_SHAPE = 1 / 16;
+const LEAST_SHAPE = 0.0625;
 
 /** A function that fills arrays of length d with successive points; checks the law only. */
 export function pointFiller(

@@ -1,11 +1,11 @@
 /**
  * Volumes and surface areas of balls, and the flag coefficients.
  */
+
 import { checkFinite, checkInteger } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
 import { logBallIntrinsicVolumeKernel, logBallVolumeKernel } from './ball-kernel.ts';
-
-const EPSILON = 2 ** -52;
 
 /**
  * Volume of the ball of a given radius in R^d, for d from 0 up.

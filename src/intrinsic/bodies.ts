@@ -4,14 +4,15 @@
  * A k-face of a polytope contributes its volume times its external angle. For the regular simplex and
  * the cross-polytope the angles are equicorrelated orthant probabilities of normal variables.
  */
+
 import { checkFinite, checkInteger, checkOptions, DomainError } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { logAbsoluteOrthantKernel, logPositiveOrthantKernel } from '../numeric/orthant.ts';
 import { logBinomialKernel, logFactorialKernel } from '../special/log-beta.ts';
 import { logBallIntrinsicVolumeKernel } from './ball-kernel.ts';
 import { type Body, bodyFromLogs } from './body.ts';
 import { logElementarySymmetric } from './elementary-symmetric.ts';
 
-const EPSILON = 2 ** -52;
 /** Largest dimension of a body whose d + 1 intrinsic volumes are listed. */
 const MAX_DIMENSION = 10_000;
 /** Largest dimension where the list costs d^2 steps. */

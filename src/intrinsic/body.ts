@@ -1,12 +1,12 @@
 /**
  * Convex bodies by their intrinsic volumes, and what follows from those alone.
  */
+
 import { checkFinite, DomainError } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { isLogNumber, LogNumber } from '../log-number.ts';
 import { logSumExpKernel } from '../special/log-domain.ts';
 import { logBallVolumeKernel } from './ball-kernel.ts';
-
-const EPSILON = 2 ** -52;
 
 /** A convex body as far as its intrinsic volumes know it; plain frozen data. */
 export interface Body {

@@ -8,14 +8,15 @@
  * by the trapezoidal rule in y = log t. The polynomials with one number left out are built anew for each:
  * dividing it out of the full one would be unstable.
  */
+
 import { checkFinite, checkOptions, DomainError } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { integrateUnimodal } from '../numeric/unimodal-integral.ts';
 import { logSumExpKernel } from '../special/log-domain.ts';
 import { logBallVolumeKernel } from './ball-kernel.ts';
 import { type Body, bodyFromLogs } from './body.ts';
 import { logElementarySymmetric } from './elementary-symmetric.ts';
 
-const EPSILON = 2 ** -52;
 const MAX_AXES = 200;
 
 /** Options of {@link ellipsoid}. */

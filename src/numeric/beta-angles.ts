@@ -23,7 +23,9 @@
  * with m. Source: Angles of random simplices and face numbers of random polytopes, Advances in
  * Mathematics 380 (2021), arXiv:1909.13335.
  */
+
 import type { ResolvedCount } from '../count.ts';
+import { EPSILON } from '../epsilon.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import { betaContourKernel } from './beta-contour.ts';
@@ -31,7 +33,6 @@ import { BetaTail } from './beta-tail.ts';
 import { orderStatisticExpectation } from './order-statistic.ts';
 
 const HALF_LOG_PI = 0.57236494292470009;
-const EPSILON = 2 ** -52;
 
 /** Which of the two families. */
 export type BetaFamily = 'beta' | 'betaPrime';

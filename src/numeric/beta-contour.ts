@@ -17,10 +17,10 @@
  * 380 (2021), arXiv:1909.13335; Beta polytopes and beta cones: an exactly solvable model in geometric
  * probability, arXiv:2503.22488.
  */
+import { EPSILON } from '../epsilon.ts';
 import type { BetaTail } from './beta-tail.ts';
 import { trapezoidError } from './orthant-peak.ts';
 
-const EPSILON = 2 ** -52;
 const CUT = -41;
 const MAX_NODES = 20_000;
 

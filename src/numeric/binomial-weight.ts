@@ -5,11 +5,11 @@
  * deviance(x, m) = x log(x/m) + m - x. Source: Fast and accurate computation of binomial
  * probabilities (2000).
  */
+import { EPSILON } from '../epsilon.ts';
 import { log1pmxKernel } from '../special/log-domain.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 
 const LOG_TWO_PI = 1.8378770664093455;
-const EPSILON = 2 ** -52;
 /** From here on n is taken from its logarithm. */
 export const HUGE_COUNT = 1e290;
 

@@ -15,6 +15,7 @@
  * the nodes of one Z serve many k, each by one multiplication more. Neither path serves for all Z: on
  * the wrong side of the switch either one loses all digits.
  */
+import { EPSILON } from '../epsilon.ts';
 import { millsRatioKernel } from '../special/error-function.ts';
 import { faddeevaKernel } from '../special/faddeeva.ts';
 import { trapezoidError } from './orthant-peak.ts';
@@ -24,7 +25,6 @@ const SQRT_TWO_OVER_PI = 0.79788456080286536;
 const DEGREE = Math.PI / 180;
 /** Nodes whose share is below e^-43 at every k of a table are dropped. */
 const CUT = 43;
-const EPSILON = 2 ** -52;
 /** From this Z on the imaginary parts on the real path are below 1e-17 of the real ones, squared. */
 const DUAL = 9;
 /** Number of k, in steps of two, that one pass over the nodes yields. */

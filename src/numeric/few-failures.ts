@@ -4,11 +4,11 @@
  * The generating function of the failures has coefficients far beyond doubles there, and its contour
  * would have to be enumerated factor by factor; elementary symmetric polynomials do without.
  */
+import { EPSILON } from '../epsilon.ts';
 import { logFactorialKernel } from '../special/log-beta.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import type { BernoulliRun, SumTail } from './poisson-binomial.ts';
 
-const EPSILON = 2 ** -52;
 /** Runs up to this length are summed term by term. */
 const SHORT_RUN = 1e4;
 

@@ -13,6 +13,7 @@
  * The integrand is unimodal and analytic. The nodes lie on one dyadic grid that all k share, refined
  * until the difference of its levels shows that the finest is exact to rounding.
  */
+import { EPSILON } from '../epsilon.ts';
 import { erfcxKernel, millsRatioKernel } from '../special/error-function.ts';
 import { logNormalCdfKernel, normalQuantileOfLog } from '../special/normal.ts';
 import { binomialConstant, binomialDeviance, HUGE_COUNT } from './binomial-weight.ts';
@@ -21,7 +22,6 @@ import { trapezoidError } from './orthant-peak.ts';
 
 const SQRT_HALF = Math.SQRT1_2;
 const LOG_TWO_PI = 1.8378770664093455;
-const EPSILON = 2 ** -52;
 const CUT = 40;
 /** Discretisation error at which the grid is fine enough. */
 const SETTLED = 2e-16;

@@ -10,11 +10,11 @@
  * by the trapezoidal rule on the vertical line through the saddle point, where nothing cancels. For n a < 2
  * the spacings are reflected, x -> a - x, which leaves a sum of n a - 1 < 1.
  */
+import { EPSILON } from '../epsilon.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { log1mExpKernel, log1pmxKernel } from '../special/log-domain.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 
-const EPSILON = 2 ** -52;
 /** Up to this n the sum is used throughout; the line integral needs the decay of |z|^-n. */
 const FEW = 12;
 

@@ -13,13 +13,13 @@
  *
  * which keeps its digits up to n = e^100000: beyond doubles the last term is that of Poisson's law, 0.
  */
+import { EPSILON } from '../epsilon.ts';
 import { sumError } from '../special/double-double.ts';
 import { expm1mxKernel } from '../special/log-domain.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 import type { Tail, TailRange } from './tail.ts';
 import { integrateUnimodal } from './unimodal-integral.ts';
 
-const EPSILON = 2 ** -52;
 /** Beyond this log n the binomial law is Poisson's to double precision: m^2 / n < 1e-17. */
 const POISSON_LOG = 100;
 

@@ -11,6 +11,7 @@
  * distribution function) whose transform it is, and exponential tilting bounds those before anything
  * is summed: the step is chosen for a wanted error instead of being refined until nothing changes.
  */
+import { EPSILON } from '../epsilon.ts';
 import { millsRatioKernel } from '../special/error-function.ts';
 import { faddeevaKernel } from '../special/faddeeva.ts';
 import { normalTailKernel } from '../special/normal.ts';
@@ -18,7 +19,6 @@ import { normalTailKernel } from '../special/normal.ts';
 const SQRT_HALF = Math.SQRT1_2;
 const SQRT_TWO_OVER_PI = 0.79788456080286536;
 const INVERSE_SQRT_TWO_PI = 0.39894228040143268;
-const EPSILON = 2 ** -52;
 
 /** Natural logarithm of the discretisation error aimed at: e^-41 = 1.6e-18. */
 export const CONTOUR_TOLERANCE = 41;

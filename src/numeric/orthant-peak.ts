@@ -9,6 +9,7 @@
  * positive, unimodal and analytic, so the trapezoidal rule converges exponentially; coarser sums over
  * the same nodes, which cost nothing, bound its error.
  */
+import { EPSILON } from '../epsilon.ts';
 import { erfcxKernel, erfKernel } from '../special/error-function.ts';
 import { log1pmxKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel, normalTailKernel } from '../special/normal.ts';
@@ -16,7 +17,6 @@ import { logNormalCdfKernel, normalTailKernel } from '../special/normal.ts';
 const SQRT_HALF = Math.SQRT1_2;
 const HALF_LOG_TWO_PI = 0.91893853320467274;
 const LOG_TWO_PI = 1.8378770664093455;
-const EPSILON = 2 ** -52;
 /** Terms below e^-41 of the largest are dropped. */
 const CUT = -41;
 const MAX_NODES = 100_000;

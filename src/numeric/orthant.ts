@@ -24,6 +24,7 @@
  * in Applied Probability 52 (2020), arXiv:1704.04968; The exponentially convergent trapezoidal rule,
  * SIAM Review 56 (2014), doi 10.1137/130932132.
  */
+import { EPSILON } from '../epsilon.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel } from '../special/normal.ts';
@@ -34,7 +35,6 @@ import { logGaussianFactor, type PeakKind, peakKernel } from './orthant-peak.ts'
 export type { PeakKind } from './orthant-peak.ts';
 
 const LOG_TWO_PI = 1.8378770664093455;
-const EPSILON = 2 ** -52;
 
 const CONTOUR: Float64Array = /* @__PURE__ */ new Float64Array(4);
 const PEAK: Float64Array = /* @__PURE__ */ new Float64Array(6);

@@ -10,12 +10,12 @@
  * the terms have fallen by e^-41: a handful to a few hundred terms, whatever the length. The other side
  * is one minus it, which costs no digits.
  */
+import { EPSILON } from '../epsilon.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 
 /** Writes a bound on the absolute error of the returned logarithm to `error[0]`. */
 export type LogTerm = (index: number, error: Float64Array) => number;
 
-const EPSILON = 2 ** -52;
 const CUT = 41;
 
 /**

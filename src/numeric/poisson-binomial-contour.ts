@@ -12,12 +12,12 @@
  * before it has decayed are visited: about 60 whatever the length of the runs. Source: The
  * exponentially convergent trapezoidal rule, SIAM Review 56 (2014), doi 10.1137/130932132.
  */
+import { EPSILON } from '../epsilon.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import { addGammaRatio } from './complex-gamma-ratio.ts';
 import { fewFailures } from './few-failures.ts';
 import type { BernoulliRun, SumTail } from './poisson-binomial.ts';
 
-const EPSILON = 2 ** -52;
 /** Modulus, relative to the largest, at which nodes are dropped. */
 const NEGLIGIBLE = 1e-19;
 /** Tilts beyond this decay before the contour reaches the left half plane; below, j up to it is enumerated. */

@@ -12,6 +12,7 @@
  *
  * The smaller of P(K <= k) and P(K > k) is the one computed, never a difference from 1.
  */
+import { EPSILON } from '../epsilon.ts';
 import { contourTail, tiltedMean } from './poisson-binomial-contour.ts';
 
 /** `count` copies of independent Bernoulli variables with probabilities 1/(step j), from <= j <= to. */
@@ -35,7 +36,6 @@ export const ENUMERATED = 300;
 
 /** Tail probabilities below e^-600 are computed under a tilt; above, nothing underflows. */
 const SAFE_LOG = -600;
-const EPSILON = 2 ** -52;
 
 /** Number of variables in the runs. */
 export function runSize(runs: readonly BernoulliRun[]): number {

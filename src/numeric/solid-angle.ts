@@ -10,6 +10,7 @@
  *
  * That loses relative accuracy in narrow cones, where the cone is integrated over its simplex instead.
  */
+import { EPSILON } from '../epsilon.ts';
 import { integrateSmooth } from './gauss-legendre.ts';
 import {
   coordinates,
@@ -22,7 +23,7 @@ import {
   type Vector,
 } from './small-vectors.ts';
 
-const TWO_PI = 2 * Math.PI;
+const TWO_PI = 6.283185307179586;
 
 /** Angle between two unit vectors over the full turn; accurate also near 0 and near a half. */
 export function planeAngle(a: Vector, b: Vector): number {
@@ -223,7 +224,6 @@ const PAIRS: readonly (readonly [number, number, number, number])[] = [
   [3, 2, 0, 1],
 ];
 const MOST_PANELS = 48;
-const EPSILON = 2 ** -52;
 
 /** |det A|/(2 pi^2) times the integral of |A u|^-4 over the simplex u >= 0, sum u = 1. */
 function simplexIntegral(rays: readonly Vector[]): number {

@@ -4,10 +4,8 @@
  * A target of 1 - 1e-12 is compared through complements, one of 1e-300000 through logarithms, and the
  * stated error decides whether the answer is certain.
  */
+import { EPSILON } from '../epsilon.ts';
 import { Probability } from '../probability.ts';
-
-/** Rounding of one operation, relative. */
-const ROUNDING = 2 ** -52;
 
 /** The target as a probability: a number must lie in [0, 1], a Probability is taken as it is. */
 export function targetOf(p: number | Probability): Probability {
@@ -60,13 +58,13 @@ export function isCertain(p: Probability, target: Probability): boolean {
   const pIsLower = p.log <= p.logComplement;
   const small = pIsLower ? p.value : p.complement;
   if (pIsLower === lower && isExact(p) && target.logError === 0) return true;
-  const error = pIsLower === lower ? p.logError : (p.logError * small) / (1 - small) + ROUNDING;
+  const error = pIsLower === lower ? p.logError : (p.logError * small) / (1 - small) + EPSILON;
   const tail = lower ? p.value : p.complement;
   const targetTail = lower ? target.value : target.complement;
   const gap = comparable(tail, targetTail)
     ? Math.abs(Math.log1p((tail - targetTail) / targetTail))
-    : Math.abs(log - targetLog) - ROUNDING * Math.abs(targetLog);
-  return gap > error + target.logError + ROUNDING;
+    : Math.abs(log - targetLog) - EPSILON * Math.abs(targetLog);
+  return gap > error + target.logError + EPSILON;
 }
 
 /**
@@ -85,7 +83,7 @@ function isExact(p: Probability): boolean {
  * logarithm, with a factor that no other bound has, so that it can be recognised.
  */
 export function exactLogError(log: number): number {
-  return Math.abs(log) * (ROUNDING + 2 ** -75);
+  return Math.abs(log) * (EPSILON + 2 ** -75);
 }
 
 /** Whether two tails are both normal doubles, so that values are finer than logarithms. */

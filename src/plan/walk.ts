@@ -50,9 +50,9 @@ const REAL_STATIONS = [
   256, 65536, 1e9, 1e18, 1e36, 1e72, 1e150, 1e300,
 ] as const;
 /** Up to here counts beyond 2^53 are passed as doubles, which are finer than logarithms. */
-const LAST_DOUBLE = 2 ** 62;
+const LAST_DOUBLE = 4611686018427387904;
 /** Where the walk on logarithms starts, and where it gives up: e^(10^6) points are enough. */
-const LOG_START = 53 * Math.LN2;
+const LOG_START = 36.7368005696771;
 const LOG_END = 1e6;
 
 /**

@@ -9,14 +9,15 @@
  * and v = 1. The terms m <= d are positive; for the beta law those beyond m = alpha + 3 vanish or
  * alternate in sign, but fall so fast that nothing cancels.
  */
+
 import type { ResolvedCount } from '../count.ts';
-import type { BetaLaw, BetaPrimeLaw } from '../law.ts';
+import { EPSILON } from '../epsilon.ts';
+import { type BetaLaw, excessOf, type ResolvedBetaPrimeLaw } from '../law.ts';
 import { BetaAngles } from '../numeric/beta-angles.ts';
 import { logOutwardSum, probabilityFromSum } from '../numeric/parity-split.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 import { logChoices } from './gaussian-faces.ts';
 
-const EPSILON = 2 ** -52;
 const CUT = 41;
 /** log 0.75: a sum above it is most of the probability, and the other side is to be summed. */
 const MOSTLY = -0.2876820724517809;
@@ -25,15 +26,15 @@ const MAX_SPAN = 1200;
 const NEVER = Number.NEGATIVE_INFINITY;
 
 /** alpha = 2b + d or 2b - d. */
-export function alphaOf(law: BetaLaw | BetaPrimeLaw, d: number): number {
-  return law.family === 'beta' ? 2 * law.b + d : 2 * law.b - d;
+export function alphaOf(law: BetaLaw | ResolvedBetaPrimeLaw, d: number): number {
+  return law.family === 'beta' ? 2 * law.b + d : 2 * excessOf(law, d);
 }
 
 /** P(the next point lies in the hull of n points). */
 export function betaMembership(
   count: ResolvedCount,
   d: number,
-  law: BetaLaw | BetaPrimeLaw,
+  law: BetaLaw | ResolvedBetaPrimeLaw,
 ): Probability {
   const { n, log } = count;
   const sphere = law.family === 'beta' && law.b === -1;
@@ -107,7 +108,7 @@ export function logBetaFaces(
   count: ResolvedCount,
   d: number,
   v: number,
-  law: BetaLaw | BetaPrimeLaw,
+  law: BetaLaw | ResolvedBetaPrimeLaw,
   error: Float64Array,
 ): number {
   const { n } = count;

@@ -1,14 +1,15 @@
 /**
  * How much probability lies beyond a hyperplane.
  */
+
 import { checkNumber, checkOptions } from '../domain.ts';
-import { checkLaw, type Law } from '../law.ts';
+import { EPSILON } from '../epsilon.ts';
+import { checkLaw, excessOf, type Law } from '../law.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 import { logNormalCdfKernel, normalTailKernel } from '../special/normal.ts';
 import { checkDimension } from './hull-options.ts';
 
-const EPSILON = 2 ** -52;
 const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 
 /** Options of {@link capProbability}. */
@@ -72,7 +73,7 @@ export function capProbability(args: CapProbabilityArgs): Probability {
     tail = new BetaTail(b);
     tail.centreAtHeight(a);
   } else {
-    tail = new BetaTail(law.b - d / 2 - 1);
+    tail = new BetaTail(excessOf(law, d) - 1);
     tail.centreAtArgument(Math.asinh(a));
   }
   const log = tail.logTail;

@@ -2,7 +2,7 @@
  * Argument checks that the questions about faces and membership share.
  */
 import { checkInteger, DomainError } from '../domain.ts';
-import { type BetaLaw, type BetaPrimeLaw, checkLaw, type GaussianLaw } from '../law.ts';
+import { type BetaLaw, checkLaw, type GaussianLaw, type ResolvedBetaPrimeLaw } from '../law.ts';
 import { alphaOf } from './beta-faces.ts';
 import { type Hull, resolveHull } from './hull-options.ts';
 
@@ -25,7 +25,7 @@ export function checkFaceLaw(
   law: unknown,
   hull: unknown,
   d: number,
-): { readonly law: GaussianLaw | BetaLaw | BetaPrimeLaw; readonly hull: Hull } {
+): { readonly law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw; readonly hull: Hull } {
   const checked = checkLaw(fn, law, ['gaussian', 'beta', 'betaPrime'], d);
   const kind = resolveHull(fn, hull);
   if (checked.family === 'gaussian') return { law: checked, hull: kind };

@@ -1,10 +1,12 @@
 /**
  * Expected numbers of vertices and faces of hulls of random points.
  */
+
 import { wendel } from '../conic/wendel.ts';
 import { type Count, type ResolvedCount, resolveCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
-import type { BetaLaw, BetaPrimeLaw, GaussianLaw, Law } from '../law.ts';
+import { EPSILON } from '../epsilon.ts';
+import type { BetaLaw, GaussianLaw, Law, ResolvedBetaPrimeLaw } from '../law.ts';
 import { LogNumber } from '../log-number.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
 import { logBetaFaces } from './beta-faces.ts';
@@ -29,8 +31,6 @@ export interface ExpectedFacesArgs extends ExpectedVerticesArgs {
   /** Dimension of the faces: an integer from 0 (vertices) to d - 1 (facets). */
   readonly k: number;
 }
-
-const EPSILON = 2 ** -52;
 
 /**
  * The expected number of k-dimensional faces of the convex hull of n random points in R^d, for
@@ -116,7 +116,7 @@ function faces(
   count: ResolvedCount,
   d: number,
   k: number,
-  law: GaussianLaw | BetaLaw | BetaPrimeLaw,
+  law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw,
   hull: Hull,
 ): LogNumber {
   const error = new Float64Array(1);

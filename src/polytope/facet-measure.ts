@@ -18,8 +18,10 @@
  * and alike for the other laws, b the exponent of the marginal. For the symmetric hull of n pairs
  * V = 2 v over h > 0, with the same weight.
  */
+
 import type { ResolvedCount } from '../count.ts';
-import type { BetaLaw, BetaPrimeLaw, GaussianLaw } from '../law.ts';
+import { EPSILON } from '../epsilon.ts';
+import { type BetaLaw, excessOf, type GaussianLaw, type ResolvedBetaPrimeLaw } from '../law.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { integrateHalfLine } from '../numeric/half-line-integral.ts';
 import { NormalTail } from '../numeric/normal-tail.ts';
@@ -29,7 +31,6 @@ import { integrateUnimodal } from '../numeric/unimodal-integral.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 
-const EPSILON = 2 ** -52;
 const HALF_LOG_PI = 0.57236494292470009;
 const HALF_LOG_TWO_PI = 0.91893853320467274;
 /** Singularities of the integrands lie at |Im s| = pi/2: no piece of Gauss-Legendre is longer. */
@@ -70,9 +71,12 @@ function halfStep(x: number): number {
 }
 
 /** The model of a law in R^d, d >= 2. */
-export function facetModel(law: GaussianLaw | BetaLaw | BetaPrimeLaw, d: number): FacetModel {
+export function facetModel(
+  law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw,
+  d: number,
+): FacetModel {
   if (law.family === 'gaussian') return gaussianModel(d);
-  return law.family === 'beta' ? betaModel(law.b, d) : betaPrimeModel(law.b, d);
+  return law.family === 'beta' ? betaModel(law.b, d) : betaPrimeModel(excessOf(law, d), d);
 }
 
 function betaModel(beta: number, d: number): FacetModel {
@@ -100,21 +104,22 @@ function betaModel(beta: number, d: number): FacetModel {
   };
 }
 
-function betaPrimeModel(beta: number, d: number): FacetModel {
-  // the marginal (1 + h^2)^-b with h = sinh s has the tail of the beta law of exponent b - 3/2 at tanh s
-  const b = beta - (d - 1) / 2;
-  const a = d * b - (d - 1) / 2;
-  const tail = new BetaTail(b - 1.5);
-  const norm = halfStep(a - 0.5);
+function betaPrimeModel(excess: number, d: number): FacetModel {
+  // the marginal (1 + h^2)^-(excess + 1/2) with h = sinh s has the tail of the beta law of exponent
+  // excess - 1 at tanh s
+  const tail = new BetaTail(excess - 1);
+  // the height has the law (1 + h^2)^-(c + 1/2)
+  const c = d * excess;
+  const norm = halfStep(c);
   return {
     d,
     tail,
-    logConstant: Math.log(2 / d) + norm - halfStep(b - 0.5),
+    logConstant: Math.log(2 / d) + norm - halfStep(excess),
     logWeight: () =>
-      (d - 1) * (tail.logTail > -4 ? (b - 0.5) * tail.widthShift - tail.shift : tail.excessShift),
+      (d - 1) * (tail.logTail > -4 ? excess * tail.widthShift - tail.shift : tail.excessShift),
     logReferenceWeight: () => (d - 1) * (tail.logExcess - tail.logA),
-    logPlain: () => (a - 0.5) * tail.widthShift + tail.logJacobian,
-    logReferencePlain: () => (a - 0.5) * tail.logWidth,
+    logPlain: () => c * tail.widthShift + tail.logJacobian,
+    logReferencePlain: () => c * tail.logWidth,
     logPlainConstant: norm,
     centreAt: (height) => tail.centreAtArgument(Math.asinh(height)),
     height: () => Math.sinh(tail.s),

@@ -1,9 +1,11 @@
 /**
  * How many facets the hull of random points has, in all and below a given height.
  */
+
 import { type Count, type ResolvedCount, resolveCount } from '../count.ts';
 import { checkFinite, checkNumber, checkOptions, DomainError } from '../domain.ts';
-import { checkLaw, type Law } from '../law.ts';
+import { EPSILON } from '../epsilon.ts';
+import { checkLaw, excessOf, type Law } from '../law.ts';
 import { LogNumber } from '../log-number.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { NormalTail } from '../numeric/normal-tail.ts';
@@ -12,7 +14,6 @@ import { logAddExpKernel } from '../special/log-domain.ts';
 import { facetModel, facetsBeyond, facetTotal } from './facet-measure.ts';
 import { checkDimension, type Hull, LEAST_MARGINAL, resolveHull } from './hull-options.ts';
 
-const EPSILON = 2 ** -52;
 const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 
 /** Options of {@link expectedFacets}. */
@@ -43,7 +44,7 @@ export interface ExpectedFacetsBelowArgs {
 export function resolveFacetLaw(fn: string, law: unknown, d: number): ReturnType<typeof checkLaw> {
   const resolved = checkLaw(fn, law, FAMILIES, d);
   if (resolved.family === 'betaPrime') {
-    const inner = resolved.b - (d - 1) / 2 - 1.5;
+    const inner = excessOf(resolved, d) - 1;
     if (!(inner >= LEAST_MARGINAL)) {
       const given = law as Law;
       if (given.family === 'studentT') {
@@ -213,7 +214,7 @@ function lowEnds(law: ReturnType<typeof checkLaw>, count: ResolvedCount, h: numb
     tail.centreAtHeight(h);
     logF = tail.logOther;
   } else {
-    const tail = new BetaTail(law.b - 1.5);
+    const tail = new BetaTail(excessOf(law, 1) - 1);
     tail.centreAtArgument(Math.asinh(h));
     logF = tail.logOther;
   }

@@ -5,8 +5,10 @@
  * 2 (v_(d-1) + v_(d-3) + ..), v_j the conic intrinsic volumes (orthant-sequences.ts). Notation: v is
  * the number of vertices of a face, one more than its dimension.
  */
+
 import { wendel } from '../conic/wendel.ts';
 import type { ResolvedCount } from '../count.ts';
+import { EPSILON } from '../epsilon.ts';
 import { logFaceTermKernel } from '../numeric/orthant.ts';
 import {
   lastOrthantIndex,
@@ -20,7 +22,6 @@ import { logBinomialKernel } from '../special/log-beta.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 import type { Hull } from './hull-options.ts';
 
-const EPSILON = 2 ** -52;
 const LOG_TWO_PI = 1.8378770664093455;
 
 const SEQUENCE = {

@@ -15,14 +15,13 @@
 
 import { wendel } from '../conic/wendel.ts';
 import type { ResolvedCount } from '../count.ts';
+import { EPSILON } from '../epsilon.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { RULE_POINTS, ruleNode, ruleWeight } from '../numeric/gauss-legendre.ts';
 import { digammaKernel } from '../numeric/polygamma.ts';
 import { logAddExpKernel, logSubExpKernel } from '../special/log-domain.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import { facetModel, facetsBeyond } from './facet-measure.ts';
-
-const EPSILON = 2 ** -52;
 
 /** A logarithm and a bound on its error. */
 export interface LogBound {

@@ -1,10 +1,12 @@
 /**
  * Expected volume and intrinsic volumes of the hull of random points.
  */
+
 import type { Count, ResolvedCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { logBallIntrinsicVolumeKernel } from '../intrinsic/ball-kernel.ts';
-import { type BetaPrimeLaw, checkLaw, type Law } from '../law.ts';
+import { checkLaw, excessOf, type Law, type ResolvedBetaPrimeLaw } from '../law.ts';
 import { LogNumber } from '../log-number.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { NormalTail } from '../numeric/normal-tail.ts';
@@ -18,7 +20,6 @@ import {
 } from './hull-options.ts';
 import { volumeRatioKernel } from './volume-ratio-kernel.ts';
 
-const EPSILON = 2 ** -52;
 const HALF_LOG_TWO_PI = 0.91893853320467274;
 const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 
@@ -158,16 +159,16 @@ function gaussianMean(k: number, count: ResolvedCount, hull: Hull): Mean {
  * (2b - 1)/(2b - 2) L w^(-1/2), L and w those of the beta law of exponent b - 3/2 at h / sqrt(1 + h^2).
  */
 function betaPrimeMean(
-  law: BetaPrimeLaw,
+  law: ResolvedBetaPrimeLaw,
   d: number,
   k: number,
   count: ResolvedCount,
   hull: Hull,
 ): Mean {
-  const b = law.b - (d - 1) / 2;
-  if (b <= 1) return { log: Number.POSITIVE_INFINITY, error: 0 };
-  const factor = Math.log1p(1 / (2 * b - 2));
-  const tail = new BetaTail(b - 1.5);
+  const rest = excessOf(law, d);
+  if (rest <= 0.5) return { log: Number.POSITIVE_INFINITY, error: 0 };
+  const factor = Math.log1p(1 / (2 * rest - 1));
+  const tail = new BetaTail(rest - 1);
   const { n, log } = count;
   const excess = (): number => factor + tail.logExcess - 0.5 * tail.logWidth;
   if (hull === 'withCentre') {

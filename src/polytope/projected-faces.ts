@@ -1,8 +1,10 @@
 /**
  * Faces of random projections of regular polytopes, and which of them survive.
  */
+
 import { wendel } from '../conic/wendel.ts';
 import { checkChoice, checkInteger, checkOptions } from '../domain.ts';
+import { EPSILON } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
 import { complementOf, type Probability, probabilityFromTail } from '../probability.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
@@ -31,8 +33,6 @@ export interface ProjectedFaces {
   /** Probability that a given k-face of the polytope projects onto a face of the projection. */
   readonly survival: Probability;
 }
-
-const EPSILON = 2 ** -52;
 
 /**
  * The probability that a face of a regular polytope survives a uniformly random projection from R^n to

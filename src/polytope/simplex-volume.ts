@@ -1,14 +1,22 @@
 /**
  * Volume of the simplex spanned by r + 1 random points: all moments and the logarithm's mean and variance.
  */
+
 import { checkFinite, checkInteger, checkOptions, DomainError } from '../domain.ts';
-import { type BetaLaw, type BetaPrimeLaw, checkLaw, type GaussianLaw, type Law } from '../law.ts';
+import { EPSILON } from '../epsilon.ts';
+import {
+  type BetaLaw,
+  checkLaw,
+  excessOf,
+  type GaussianLaw,
+  type Law,
+  type ResolvedBetaPrimeLaw,
+} from '../law.ts';
 import { LogNumber } from '../log-number.ts';
 import { digammaKernel, trigammaKernel } from '../numeric/polygamma.ts';
 import { logFactorialKernel } from '../special/log-beta.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 
-const EPSILON = 2 ** -52;
 const FAMILIES = ['beta', 'betaPrime', 'gaussian'] as const;
 const MAX_DIMENSION = 1_000_000;
 
@@ -89,8 +97,8 @@ export function simplexVolume(args: SimplexVolumeArgs): SimplexVolume {
       if (q <= least) {
         throw new DomainError('simplexVolume.moment', 'q', `above -(d - r + 1) = ${least}`, q);
       }
-      if (law.family === 'betaPrime' && q >= 2 * law.b - d) {
-        throw new DomainError('simplexVolume.moment', 'q', `below ${2 * law.b - d}`, q);
+      if (law.family === 'betaPrime' && q >= 2 * excessOf(law, d)) {
+        throw new DomainError('simplexVolume.moment', 'q', `below ${2 * excessOf(law, d)}`, q);
       }
       return logMoment(law, d, r, q);
     },
@@ -101,7 +109,7 @@ export function simplexVolume(args: SimplexVolumeArgs): SimplexVolume {
 
 /** log E Vol^q. */
 function logMoment(
-  law: GaussianLaw | BetaLaw | BetaPrimeLaw,
+  law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw,
   d: number,
   r: number,
   q: number,
@@ -120,15 +128,16 @@ function logMoment(
     add(-(r + 1) * logGammaRatioKernel(d / 2 + law.b + 1, half));
     add(logGammaRatioKernel((r + 1) * (law.b + d / 2) + r * half + 1, half));
   } else {
-    add((r + 1) * logGammaRatioKernel(law.b - d / 2, -half));
-    add(logGammaRatioKernel((r + 1) * (law.b - d / 2 - half), half));
+    const excess = excessOf(law, d);
+    add((r + 1) * logGammaRatioKernel(excess, -half));
+    add(logGammaRatioKernel((r + 1) * (excess - half), half));
   }
   add(-q * logFactorialKernel(r));
   return LogNumber.fromLog(log, EPSILON * (2 + 2 * size));
 }
 
 function logVolumeMoments(
-  law: GaussianLaw | BetaLaw | BetaPrimeLaw,
+  law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw,
   d: number,
   r: number,
 ): { mean: number; variance: number } {
@@ -145,9 +154,10 @@ function logVolumeMoments(
     mean += digammaKernel(x) - (r + 1) * digammaKernel(d / 2 + law.b + 1);
     variance += (2 * r + 1) * trigammaKernel(x) - (r + 1) * trigammaKernel(d / 2 + law.b + 1);
   } else {
-    const x = (r + 1) * (law.b - d / 2);
-    mean += digammaKernel(x) - (r + 1) * digammaKernel(law.b - d / 2);
-    variance += (r + 1) * trigammaKernel(law.b - d / 2) - (2 * r + 1) * trigammaKernel(x);
+    const excess = excessOf(law, d);
+    const x = (r + 1) * excess;
+    mean += digammaKernel(x) - (r + 1) * digammaKernel(excess);
+    variance += (r + 1) * trigammaKernel(excess) - (2 * r + 1) * trigammaKernel(x);
   }
   return { mean: mean / 2 - logFactorialKernel(r), variance: variance / 4 };
 }

@@ -49,7 +49,7 @@ export function betaDelta(a: number, b: number, x: number, y: number, out: Float
 }
 
 /** Up to here the series of log(1 + t) - t keeps 2^-59 with only its first term doubled. */
-const NEAR_MEAN = 1 / 32;
+const NEAR_MEAN = 0.03125;
 
 /**
  * Adds dev(a, delta) = a (log(1 + delta/a) - delta/a) to `out[0] + out[1]`, with an error of about
