@@ -66,6 +66,9 @@ describe('surroundTime', () => {
     expect(time.cdf(Number.POSITIVE_INFINITY).value).toBe(1);
     expect(time.quantile(0)).toBe(4);
     expect(time.quantile(1)).toBe(Number.POSITIVE_INFINITY);
+    // n log 2 - log((n - 1)(n - 2)/2 + n) = 1e300 and the square of that is no double
+    const late = time.quantile(Probability.fromLogComplement(-1e300));
+    expect(Math.abs((late * Math.LN2) / 1e300 - 1)).toBeLessThan(1e-15);
     expect(time.logPdf?.(4.5)).toBe(Number.NEGATIVE_INFINITY);
     expect(time.logPdf?.(3)).toBe(Number.NEGATIVE_INFINITY);
     const trivial = surroundTime({ d: 0 });
