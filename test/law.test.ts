@@ -1,7 +1,9 @@
 import {
   betaLaw,
   betaPrimeLaw,
+  capProbability,
   DomainError,
+  expectedHullIntrinsicVolume,
   gaussian,
   studentT,
   uniformBall,
@@ -53,8 +55,27 @@ describe('laws', () => {
   });
 
   it('resolve Student t to the beta-prime law of each dimension', () => {
-    expect(checkLaw('f', studentT({ degreesOfFreedom: 3 }), all, 4)).toEqual(betaPrimeLaw(3.5));
+    expect(checkLaw('f', studentT({ degreesOfFreedom: 3 }), all, 4)).toMatchObject(
+      betaPrimeLaw(3.5),
+    );
     expect(checkLaw('f', JSON.parse(JSON.stringify(gaussian())), all, 4)).toEqual(gaussian());
+  });
+
+  it('keep the degrees of freedom of Student t in any dimension', () => {
+    // (degreesOfFreedom + d)/2 - d/2 would lose them
+    for (const degreesOfFreedom of [1e-3, 0.1, 3.3]) {
+      const law = studentT({ degreesOfFreedom });
+      const line = capProbability({ d: 1, height: 2, law });
+      for (const d of [2, 10, 1000, 1_000_000]) {
+        expect(capProbability({ d, height: 2, law })).toEqual(line);
+      }
+    }
+    const law = studentT({ degreesOfFreedom: 3.3 });
+    const width = (d: number): number =>
+      expectedHullIntrinsicVolume({ n: 50, d, k: 1, law }).log -
+      expectedHullIntrinsicVolume({ n: 50, d, k: 1, law: gaussian() }).log;
+    for (const d of [10, 1000, 1_000_000])
+      expect(Math.abs(width(d) - width(1))).toBeLessThan(1e-14);
   });
 
   it('are refused where there is no formula or no density', () => {

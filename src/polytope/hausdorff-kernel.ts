@@ -10,7 +10,7 @@ import { RULE_POINTS, ruleNode, ruleWeight } from '../numeric/gauss-legendre.ts'
 import { largestSpacingTail } from '../numeric/largest-spacing.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 import { logEulerCharacteristic } from './euler-characteristic.ts';
-import { type LogBound, logUpperBound } from './hole-bounds.ts';
+import { type LogBound, logOutside, logUpperBound } from './hole-bounds.ts';
 
 /** Error of log E chi over 1 + |log|; measured: 1e-14 up to d = 200 against 400 digits. */
 export const EULER_ERROR = 1e-12;
@@ -31,9 +31,7 @@ export function logDeepExceedance(
   t: number,
 ): LogBound {
   const outside = wendel(count.n, d);
-  if (t === 1) {
-    return { log: outside.logComplement, error: outside.logError };
-  }
+  if (t === 1) return logOutside(outside);
   const log = logEulerCharacteristic(d, beta, count, 2 - t, true);
   const error = EPSILON * (8 * d + 8 * Math.abs(log) + 2 * Math.abs(count.log));
   return { log: Math.min(log, outside.logComplement, 0), error };
@@ -138,6 +136,5 @@ export function logExceedanceBound(
 ): LogBound {
   if (t < 1) return logUpperBound(d, beta, count, t);
   if (deepIsExact) return logDeepExceedance(d, beta, count, t);
-  const outside = wendel(count.n, d);
-  return { log: outside.logComplement, error: outside.logError };
+  return logOutside(wendel(count.n, d));
 }

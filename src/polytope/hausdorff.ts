@@ -18,7 +18,7 @@ import {
   logExceedanceBound,
   probabilityFromBound,
 } from './hausdorff-kernel.ts';
-import { logLowerBound } from './hole-bounds.ts';
+import { type LogBound, logLowerBound } from './hole-bounds.ts';
 import { checkDimension } from './hull-options.ts';
 
 /** Options of {@link hausdorffDistance}. */
@@ -160,11 +160,14 @@ function exceedance(
   if (estimate === null) return known(ALWAYS);
   const upper = logExceedanceBound(d, beta, count, t, true);
   const lower = logLowerBound(d, beta, count, t);
-  const log = Math.min(upper.log, Math.max(lower.log, estimate.log(t)));
+  const estimated = estimate.log(t);
+  const error = EULER_ERROR * (1 + Math.abs(estimated));
+  let middle: LogBound = estimated > lower.log ? { log: estimated, error } : lower;
+  if (middle.log >= upper.log) middle = upper;
   return Object.freeze({
     lower: probabilityFromBound({ log: Math.min(lower.log, upper.log), error: lower.error }),
     upper: probabilityFromBound(upper),
-    approx: probabilityFromBound({ log, error: EULER_ERROR * (1 + Math.abs(log)) }),
+    approx: probabilityFromBound(middle),
   });
 }
 

@@ -19,6 +19,7 @@ import { EPSILON } from '../epsilon.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { RULE_POINTS, ruleNode, ruleWeight } from '../numeric/gauss-legendre.ts';
 import { digammaKernel } from '../numeric/polygamma.ts';
+import type { Probability } from '../probability.ts';
 import { logAddExpKernel, logSubExpKernel } from '../special/log-domain.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import { facetModel, facetsBeyond } from './facet-measure.ts';
@@ -27,6 +28,13 @@ import { facetModel, facetsBeyond } from './facet-measure.ts';
 export interface LogBound {
   readonly log: number;
   readonly error: number;
+}
+
+/** log P(0 not in the hull) from Wendel's probability that it is, with the error of that side. */
+export function logOutside(inside: Probability): LogBound {
+  const { value, complement, logComplement, logError } = inside;
+  const error = value < complement ? logError * (value / complement) : logError;
+  return { log: logComplement, error };
 }
 
 /** log of the probability that the foot of the perpendicular from 0 lies in the typical facet, d >= 2. */
@@ -94,15 +102,16 @@ export function logLowerBound(
   count: ResolvedCount,
   gap: number,
 ): LogBound {
-  const outside = wendel(count.n, d).logComplement;
   if (count.n <= d) return { log: 0, error: 0 };
   const tail = new BetaTail(beta + (d - 1) / 2);
   tail.centreAtHeight(1 - gap, gap);
-  const bounds = [outside, packingBound(d, tail, count)];
+  const outside = logOutside(wendel(count.n, d));
+  const bounds = [packingBound(d, tail, count)];
   const second = secondMomentBound(d, beta, tail, count);
   if (second !== null) bounds.push(second);
   // quadrature and the rounding of n log F, which a bound from below must not exceed
   const log = Math.min(0, Math.max(...bounds));
+  if (outside.log >= log) return outside;
   const exponent = count.n * Math.abs(tail.logOther);
   const error = 1e-8 + EPSILON * (Number.isFinite(exponent) ? 8 * exponent : 0);
   return { log, error };

@@ -165,10 +165,11 @@ function betaPrimeMean(
   count: ResolvedCount,
   hull: Hull,
 ): Mean {
-  const rest = excessOf(law, d);
-  if (rest <= 0.5) return { log: Number.POSITIVE_INFINITY, error: 0 };
-  const factor = Math.log1p(1 / (2 * rest - 1));
-  const tail = new BetaTail(rest - 1);
+  // b - 1/2
+  const half = excessOf(law, d);
+  if (half <= 0.5) return { log: Number.POSITIVE_INFINITY, error: 0 };
+  const factor = Math.log1p(1 / (2 * half - 1));
+  const tail = new BetaTail(half - 1);
   const { n, log } = count;
   const excess = (): number => factor + tail.logExcess - 0.5 * tail.logWidth;
   if (hull === 'withCentre') {

@@ -19,6 +19,21 @@ const laws = [uniformSphere(), uniformBall(), betaLaw(1.5)];
 const anyLaw = fc.constantFrom(...laws);
 
 describe('hausdorffDistance', () => {
+  it('states the error of the smaller tail where the centre is nearly never inside', () => {
+    const args = { n: 60, d: 50 };
+    const law = uniformSphere();
+    const { logError } = originInHull(args);
+    const distance = hausdorffDistance({ ...args, law });
+    expect(distance.exceedance(1).exact?.logError).toBeLessThanOrEqual(2 * logError);
+    expect(hausdorffWithin({ ...args, distance: 1, law }).logError).toBeLessThanOrEqual(
+      2 * logError,
+    );
+    // just below the radius both bound and estimate are that of the centre
+    const { lower, approx } = distance.exceedance(0.99999);
+    expect(lower.logError).toBeLessThanOrEqual(2 * logError);
+    expect(approx.logError).toBeLessThanOrEqual(2 * logError);
+  });
+
   it('orders lower bound, estimate and upper bound', () => {
     fc.assert(
       fc.property(
