@@ -16,6 +16,7 @@ export default defineConfig({
     include: ['test/**/*.test.ts'],
     exclude: ['test/accuracy/print.test.ts', 'test/bench/**'],
     reporters: ['default', path('support/summary-reporter.ts')],
+    setupFiles: [path('support/seed.ts')],
     testTimeout: 60_000,
   },
 });
