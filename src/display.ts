@@ -28,7 +28,8 @@ function digitsFor(relativeError: number): number {
 /** Significant digits without the trailing zeros after a point. */
 function toDigits(value: number, digits: number): string {
   const text = value.toPrecision(digits);
-  return text.includes('.') ? text.replace(/\.?0+(?=e|$)/, '') : text;
+  // zeros of the exponent stay
+  return text.includes('.') ? text.replace(/^([^e]*?)\.?0+(?=e|$)/, '$1') : text;
 }
 
 /** A double to at most twelve significant digits, without trailing zeros. */
