@@ -6,7 +6,10 @@ import { checkFinite, DomainError } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { isLogNumber, LogNumber } from '../log-number.ts';
 import { logSumExpKernel } from '../special/log-domain.ts';
+import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import { logBallVolumeKernel } from './ball-kernel.ts';
+
+const HALF_LOG_PI = 0.57236494292470009;
 
 /** A convex body as far as its intrinsic volumes know it; plain frozen data. */
 export interface Body {
@@ -106,7 +109,8 @@ export function steinerVolume(body: Body, distance: number): LogNumber {
 export function meanWidth(body: Body): number {
   checkBody('meanWidth', body);
   const d = body.dimension;
-  const ratio = logBallVolumeKernel(d - 1) - logBallVolumeKernel(d);
+  // kappa_(d-1) / kappa_d, without the cancellation of two volumes
+  const ratio = logGammaRatioKernel(0.5 * (d + 1), 0.5) - HALF_LOG_PI;
   return Math.exp(Math.LN2 - Math.log(d) + ratio + logVolume(body, 1));
 }
 
