@@ -143,7 +143,7 @@ export function subspace(args: { dimension: number; ambient: number }): Cone {
   const { dimension, ambient } = args;
   checkInteger(fn, 'ambient', ambient, 0, MAX_AMBIENT);
   checkInteger(fn, 'dimension', dimension, 0, ambient);
-  return subspaceKernel(dimension, ambient);
+  return subspaceKernel(dimension || 0, ambient);
 }
 
 /**

@@ -2,11 +2,12 @@
  * The standard normal law: both tails, their logarithms, and quantiles from either.
  */
 
-import { checkNumber, DomainError } from '../domain.ts';
+import { checkNumber } from '../domain.ts';
 import { isProbability, type Probability, probabilityFromTail } from '../probability.ts';
 import { erfcxKernel, erfKernel, expOfMinusHalfSquare } from './error-function.ts';
 import { log1mExpKernel } from './log-domain.ts';
 import { evaluatePolynomial } from './polynomial.ts';
+import { checkProbability } from './probability-argument.ts';
 
 /** Within this distance of the median a tail is 1/2 minus half an error function. */
 const CENTRE = 0.7;
@@ -92,14 +93,12 @@ export function logNormalCdf(x: number): number {
  * ```
  */
 export function normalQuantile(p: number | Probability): number {
+  checkProbability('normalQuantile', 'p', p);
   if (isProbability(p)) {
     if (Math.min(p.value, p.complement) >= 0.2) {
       return quantileNearMedian(p.value < 0.5 ? p.value - 0.5 : 0.5 - p.complement);
     }
     return p.value < 0.5 ? normalQuantileOfLog(p.log) : -normalQuantileOfLog(p.logComplement);
-  }
-  if (typeof p !== 'number' || !(p >= 0 && p <= 1)) {
-    throw new DomainError('normalQuantile', 'p', 'a number from 0 to 1 or a Probability', p);
   }
   const q = p - 0.5;
   if (q >= -0.3 && q <= 0.3) return quantileNearMedian(q);

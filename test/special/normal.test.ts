@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { DomainError, Probability } from 'hullgauge';
+import { DomainError, Probability, surroundTime } from 'hullgauge';
 import { logNormalCdf, millsRatio, normalCdf, normalQuantile } from 'hullgauge/special';
 import jstat from 'jstat';
 import { describe, expect, it } from 'vitest';
@@ -182,6 +182,21 @@ describe('normalQuantile', () => {
   it('refuses numbers outside [0, 1] and what is no probability', () => {
     for (const bad of [-1e-300, 1.0000000000000002, NaN, '0.5', undefined, { kind: 'logNumber' }]) {
       expect(() => normalQuantile(bad as number)).toThrow(DomainError);
+    }
+    const half = {
+      kind: 'probability',
+      value: 0.5,
+      complement: 0.5,
+      log: -0.7,
+      logComplement: -0.7,
+    };
+    for (const field of ['value', 'complement', 'log', 'logComplement']) {
+      for (const bad of [NaN, 2, undefined, '-Infinity']) {
+        const forged = { ...half, [field]: bad } as unknown as Probability;
+        for (const quantile of [normalQuantile, surroundTime({ d: 3 }).quantile]) {
+          expect(() => quantile(forged)).toThrow(DomainError);
+        }
+      }
     }
     expect(() => normalQuantile(2)).toThrow(
       'normalQuantile: p must be a number from 0 to 1 or a Probability, got 2',
