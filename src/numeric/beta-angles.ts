@@ -73,7 +73,7 @@ export class BetaAngles {
     let logInternal = 0;
     let internalBound = 0;
     if (M > 1) {
-      betaContourKernel(internal, Q, M, CONTOUR);
+      betaContourKernel(internal, Q, M, beta ? M - k * alpha - 2 : 1 - alpha * k, CONTOUR);
       h = CONTOUR[0] as number;
       this.sign = CONTOUR[3] as number;
       if (this.sign === 0) {

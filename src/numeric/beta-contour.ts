@@ -24,6 +24,9 @@ import { trapezoidError } from './orthant-peak.ts';
 const CUT = -41;
 const MAX_NODES = 20_000;
 
+/** From this p on sinh^p is too steep for a panel as long as a step. */
+const MARCH_LIMIT = 40;
+
 /** Above this e the saddle is too near the end of the interval, or does not exist. */
 const NO_SADDLE = -0.3;
 
@@ -45,12 +48,18 @@ const GAUSS_WEIGHTS: readonly number[] = [
  *
  * @param tail - the symmetric beta law of exponent (p - 1)/2: sin phi has its distribution function
  * @param M - an integer >= 1
+ * @param e - (p + 1) M - Q, which the caller knows without the cancellation
  */
-export function betaContourKernel(tail: BetaTail, Q: number, M: number, out: Float64Array): void {
+export function betaContourKernel(
+  tail: BetaTail,
+  Q: number,
+  M: number,
+  e: number,
+  out: Float64Array,
+): void {
   const p = 2 * tail.b + 1;
-  const e = (p + 1) * M - Q;
   if (e > NO_SADDLE) collapsed(tail, p, Q, M, e, out);
-  else throughSaddle(tail, p, Q, M, out);
+  else throughSaddle(tail, p, Q, M, e, out);
 }
 
 /** The saddle, M f / F = Q tan a, in the variable h: M (p + 1) L(h) = Q h, L the mean excess. */
@@ -78,7 +87,14 @@ function saddleHeight(tail: BetaTail, p: number, Q: number, M: number): number {
   return h;
 }
 
-function throughSaddle(tail: BetaTail, p: number, Q: number, M: number, out: Float64Array): void {
+function throughSaddle(
+  tail: BetaTail,
+  p: number,
+  Q: number,
+  M: number,
+  e: number,
+  out: Float64Array,
+): void {
   const h = saddleHeight(tail, p, Q, M);
   const cosine = Math.sqrt((1 - h) * (1 + h));
   // R = F / f at the saddle
@@ -87,7 +103,7 @@ function throughSaddle(tail: BetaTail, p: number, Q: number, M: number, out: Flo
   const curvature = Math.max(Q, Q / cosine / cosine + M * rho * ((p * h) / cosine - rho));
   const distance = Math.acos(h);
   const step = 0.6 * Math.min(0.25, 0.55 / (distance * Math.sqrt(curvature)));
-  const power = p * M - Q;
+  const power = e - M;
   let fourth = 0.5 * distance;
   let second = 0;
   let odd = 0;
@@ -187,7 +203,8 @@ function collapsed(
     const shrink = Math.exp(-t);
     const next = Math.exp(t - shrink);
     const nextLog = logSinhOf(next);
-    if (j === 0) ratio = next / (p + 1);
+    if (p >= MARCH_LIMIT) ratio = sinhRatio(p, Math.tanh(next));
+    else if (j === 0) ratio = next / (p + 1);
     else {
       const half = 0.5 * (next - x);
       const middle = x + half;
@@ -204,7 +221,7 @@ function collapsed(
     x = next;
     logSinh = nextLog;
     const log =
-      (p * M - Q) * logSinh + M * (tail.logDensity + Math.log(ratio)) + Math.log(x * (1 + shrink));
+      (e - M) * logSinh + M * (tail.logDensity + Math.log(ratio)) + Math.log(x * (1 + shrink));
     if (log > top) {
       const scale = Math.exp(top - log);
       for (let i = 0; i < 4; i++) sums[i] = (sums[i] as number) * scale;
@@ -219,13 +236,27 @@ function collapsed(
   const [a, b, c, d] = sums as [number, number, number, number];
   const total = a + b + c + d;
   const logCosine = -0.5 * Math.LN2;
-  const normal =
-    M * (tail.logDensity + (p + 1) * logCosine - Math.log(p + 1) - tail.logExcess) - Q * logCosine;
+  const normal = M * (tail.logDensity - Math.log(p + 1) - tail.logExcess) + e * logCosine;
   out[1] = top + Math.log(2 * step * total * Math.abs(sign)) - normal;
   out[2] =
     trapezoidError(Math.abs(a + c - b - d) / total, (2 * Math.abs(a - c)) / total) +
-    EPSILON * (12 + 6 * M + 3 * Math.abs(p * M - Q) + 3 * Math.abs(normal)) +
-    (Math.abs(sign) < 0.1 ? (EPSILON * (Q + M * (p + 1))) / Math.abs(sign) : 0);
+    EPSILON * (12 + 6 * M + 3 * Math.abs(e - M) + 3 * Math.abs(normal)) +
+    (Math.abs(sign) < 0.1 ? (EPSILON * 4 * (M + 2)) / Math.abs(sign) : 0);
+}
+
+/**
+ * int_0^x sinh^p / sinh(x)^p by its series in tanh(x)^2, tanh(x) / (p + 1) 2F1(1/2, 1; (p + 3)/2; .):
+ * positive terms, the faster the larger p.
+ */
+function sinhRatio(p: number, tanh: number): number {
+  const z = tanh * tanh;
+  let term = 1;
+  let sum = 1;
+  for (let k = 0; k < MAX_NODES && term > 1e-18 * sum; k++) {
+    term *= ((2 * k + 1) / (2 * k + p + 3)) * z;
+    sum += term;
+  }
+  return (tanh / (p + 1)) * sum;
 }
 
 function logSinhOf(x: number): number {
