@@ -44,6 +44,24 @@ const laws: readonly Law[] = [
 const anyLaw = fc.constantFrom(...laws);
 
 describe('nextPointInHull', () => {
+  it.each([
+    // the one integral that n = d + 1 leaves, with the power of sinh by its hypergeometric series, 40 digits
+    [30, -0.5, -79.031040826796123],
+    [30, -0.9, -81.364742638703369],
+    [30, -0.25, -78.242204470123966],
+    [300, -0.5, -1131.7214161904939],
+    [300, -0.9, -1135.0029607108559],
+    [300, -0.25, -1130.3504949246751],
+    [400, -0.5, -1566.3416292921329],
+    [400, -0.9, -1569.7390092378355],
+    [1000, -0.5, -4373.2909664984286],
+    [1000, -0.9, -4377.056238300339],
+  ])('knows the simplex of d + 1 = %i + 1 points between ball and sphere, b = %f', (d, b, log) => {
+    const p = nextPointInHull({ n: d + 1, d, law: betaLaw(b) });
+    expect(Math.abs(p.log - log)).toBeLessThan(2e-15 * -log + 1e-13);
+    expect(p.logError).toBeLessThan(1e-14 * -log);
+  });
+
   it('is 2/(n + 1) outside on the line, whatever the law', () => {
     for (const law of laws) {
       for (const n of [2, 5, 1000, 1e9]) {
