@@ -223,7 +223,7 @@ export function halfspaceKernel(n: number): Cone {
  */
 export function orthant(n: number): Cone {
   checkInteger('orthant', 'n', n, 0, MAX_AMBIENT);
-  return orthantKernel(n);
+  return orthantKernel(n || 0);
 }
 
 /** The orthant without checks. */

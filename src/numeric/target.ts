@@ -39,6 +39,10 @@ export function reaches(p: Probability, target: Probability): boolean {
   if (target.log <= target.logComplement) {
     return comparable(p.value, target.value) ? p.value >= target.value : p.log >= target.log;
   }
+  if (target.logComplement === Number.NEGATIVE_INFINITY) {
+    // A complement below every double is not yet 0.
+    return p.logComplement === target.logComplement && p.logError < Number.POSITIVE_INFINITY;
+  }
   return comparable(p.complement, target.complement)
     ? p.complement <= target.complement
     : p.logComplement <= target.logComplement;

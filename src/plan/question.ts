@@ -34,6 +34,7 @@ export interface Condition {
 
 /** Binds a question to its fixed arguments, the free one, and a target. */
 export function conditionOf(
+  fn: string,
   question: (args: never) => Probability,
   parameter: string,
   fixed: object,
@@ -59,12 +60,7 @@ export function conditionOf(
       throw error;
     }
     if (!isProbability(probability)) {
-      throw new DomainError(
-        'smallest',
-        'question',
-        'a function that returns a Probability',
-        probability,
-      );
+      throw new DomainError(fn, 'question', 'a function that returns a Probability', probability);
     }
     return { x, probability, gap: oddsGap(side(probability), goal) };
   }

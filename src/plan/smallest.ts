@@ -152,7 +152,7 @@ function bind(
     );
   }
   const { goal, atMost } = readTarget(fn, target);
-  return conditionOf(question, parameter, args, goal, atMost);
+  return conditionOf(fn, question, parameter, args, goal, atMost);
 }
 
 function start(condition: Condition): Walk {
@@ -278,6 +278,7 @@ function unreachable(fn: string, condition: Condition, walk: Walk, target: Targe
   return new DomainError(fn, 'target', requirement, targetText(target));
 }
 
-function text(evaluation: Evaluation): string {
-  return evaluation.probability.toString();
+function text({ probability }: Evaluation): string {
+  // with more points than doubles can count, a limit of 1 or as good as 1
+  return probability.logComplement === Number.NEGATIVE_INFINITY ? '1' : probability.toString();
 }

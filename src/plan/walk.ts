@@ -95,7 +95,10 @@ export function walkFrom(condition: Condition, integer: boolean, first: Evaluati
         : foundChange(true, first, last, next, true);
     }
     // Past double range nothing moves any more: this is the limit.
-    const stuck = next.gap === last.gap && next.probability.log === last.probability.log;
+    const stuck =
+      next.gap === last.gap &&
+      next.probability.log === last.probability.log &&
+      next.probability.logComplement === last.probability.logComplement;
     last = next;
     if (stuck) break;
   }

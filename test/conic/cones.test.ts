@@ -160,6 +160,7 @@ describe('families', () => {
       a.intrinsicVolumes.forEach((v, k) => {
         close(v, b.intrinsicVolumes[k] as number, 1e-15);
       });
+    expect(orthant(-0)).toEqual(orthant(0));
     expect(subspace({ dimension: -0, ambient: 2 })).toEqual(subspace({ dimension: 0, ambient: 2 }));
     same(circularCone(2, Math.PI / 4), orthant(2));
     same(weylChamber('B', 1), ray());

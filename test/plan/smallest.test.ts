@@ -1,6 +1,7 @@
 import fc from 'fast-check';
 import {
   DomainError,
+  dichotomyCount,
   type LogNumber,
   labelSeparability,
   largest,
@@ -315,6 +316,10 @@ describe('arguments whose domain another argument limits', () => {
   });
 
   it('still says which other argument is wrong', () => {
+    const count = dichotomyCount as unknown as typeof labelSeparability;
+    expect(() => largest(count, 'n', { d: 2 }, 0.5)).toThrow(
+      'largest: question must be a function that returns a Probability',
+    );
     expect(() => smallest(originInHull, 'n', { d: -1 }, 0.5)).toThrow(
       'originInHull: d must be an integer >= 0, got -1',
     );
@@ -322,6 +327,23 @@ describe('arguments whose domain another argument limits', () => {
 });
 
 describe('targets of 0 and 1', () => {
+  it('are not those beyond every double', () => {
+    // 2^(1 - n) times the number of terms
+    const { value, bracket } = smallest(
+      originInHull,
+      'n',
+      { d: 1 },
+      Probability.fromLogComplement(-1e300),
+    );
+    expect(Math.abs((value * Math.LN2) / 1e300 - 1)).toBeLessThan(1e-12);
+    expect(bracket[0] * Math.LN2).toBeLessThanOrEqual(1e300);
+    for (const certain of [1, { complementAtMost: 0 }]) {
+      expect(() => smallest(originInHull, 'n', { d: 3 }, certain)).toThrow(
+        'within reach (originInHull reaches 1 in the limit)',
+      );
+    }
+  });
+
   it('are certain where they are', () => {
     const l1 = { model: 'l1', n: 1000, sparsity: 20 } as const;
     const surely = smallest(recoverySuccess, 'measurements', l1, 1);
