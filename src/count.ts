@@ -19,7 +19,7 @@ export interface ResolvedCount {
 }
 
 /** Below this a logarithm stands for one integer and is rounded to it. */
-const EXACT_LOG = /* @__PURE__ */ Math.log(2 ** 53);
+const EXACT_LOG = 36.7368005696771;
 
 /** Refuses anything but a count of at least `min`; a logarithm below 2^53 means the nearest integer. */
 export function resolveCount(
@@ -35,7 +35,7 @@ export function resolveCount(
     const log = Number(value.log);
     if (log > EXACT_LOG && log < Infinity) return { n: Math.exp(log), log };
     const n = Math.round(Math.exp(log));
-    if (n >= min && n <= 2 ** 53) return { n, log: Math.log(n) };
+    if (n >= min && n < 1e16) return { n, log: Math.log(n) };
   }
   throw new DomainError(fn, parameter, `an integer >= ${min}`, value);
 }

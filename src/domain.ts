@@ -53,9 +53,7 @@ function describe(value: unknown): string {
   if (typeof value === 'string') return JSON.stringify(value);
   if (typeof value === 'bigint') return `${value}n`;
   if (Object(value) !== value) return String(value);
-  if (Array.isArray(value)) return `an array of length ${value.length}`;
-  const { kind } = value as { kind?: unknown };
-  return typeof kind === 'string' ? `an object of kind ${describe(kind)}` : 'an object';
+  return Array.isArray(value) ? `an array of length ${value.length}` : 'an object';
 }
 
 /** Largest integer argument where no count beyond exact doubles is meant: $2^{53} - 1$. */
@@ -163,7 +161,7 @@ export function checkOptions(
 ): void {
   const list = names.join(', ');
   if (typeof options !== 'object' || options === null || Array.isArray(options)) {
-    throw new DomainError(fn, parameter, `an object with the options ${list}`, options);
+    throw new DomainError(fn, parameter, `an object (the options are ${list})`, options);
   }
   for (const key of Object.keys(options)) {
     if (!names.includes(key)) {

@@ -82,13 +82,11 @@ export function wendel(n: number, d: number): Probability {
  * @returns whether the smaller one is P(surrounded)
  */
 export function wendelTail(n: number, d: number, out: Float64Array): boolean {
-  out[0] = 0;
+  out.fill(0);
   out[1] = -Infinity;
-  out[2] = 0;
-  if (n === 0) return true;
-  // The only point of R^0 is the target.
-  if (d === 0) return false;
+  // The only point of R^0 is the target; no point surrounds nothing.
   if (n <= d) return true;
+  if (d === 0) return false;
   if (n === Infinity) {
     // More points than doubles can count: the tail is below e^(-1e308), and that is all that is known.
     out[2] = Infinity;

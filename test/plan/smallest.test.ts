@@ -115,7 +115,7 @@ describe('targets', () => {
       [Number.NaN, 'smallest: target must be a number from 0 to 1, got NaN'],
       [
         '0.5',
-        'smallest: target must be an object with the options atLeast, atMost, complementAtMost, got "0.5"',
+        'smallest: target must be an object (the options are atLeast, atMost, complementAtMost), got "0.5"',
       ],
       [
         { atMost: 0.1, atLeast: 0.2 },

@@ -142,7 +142,7 @@ describe('incompleteGammaInverse', () => {
     }
     const plain = Probability.fromLog(Number.NEGATIVE_INFINITY).toJSON();
     expect(() => incompleteGammaInverse(1, plain as unknown as Probability)).toThrow(
-      'incompleteGammaInverse: p must be a number from 0 to 1 or a Probability, got an object of kind "probability"',
+      'incompleteGammaInverse: p must be a number from 0 to 1 or a Probability, got an object',
     );
   });
 });
