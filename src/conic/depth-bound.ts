@@ -14,7 +14,7 @@
 import { type Count, resolveCount } from '../count.ts';
 import { checkBoolean, checkFinite, checkInteger, checkOptions } from '../domain.ts';
 import { logOfComplement, type Probability, probabilityFromTail } from '../probability.ts';
-import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
+import { incompleteBetaKernel, incompleteBetaProbability } from '../special/incomplete-beta.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { wendel } from './wendel.ts';
 
@@ -88,20 +88,8 @@ export function originInHullLowerBound(args: OriginInHullLowerBoundArgs): Probab
   if (n === Number.POSITIVE_INFINITY) {
     return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', Number.POSITIVE_INFINITY);
   }
-  if (!generalPosition) return anyLaw(n, d, depth);
+  if (!generalPosition) return incompleteBetaProbability(d + 1, n - d, depth, 1 - depth);
   return depth === 0.5 ? wendel(n, d) : inGeneralPosition(n, d, depth);
-}
-
-/** Bound A. */
-function anyLaw(n: number, d: number, depth: number): Probability {
-  const out = new Float64Array(3);
-  const lower = incompleteBetaKernel(d + 1, n - d, depth, 1 - depth, out);
-  return probabilityFromTail(
-    out[0] as number,
-    out[1] as number,
-    lower ? 'lower' : 'upper',
-    out[2] as number,
-  );
 }
 
 /** Bound B for 0 < depth < 1/2 and n > d, on its smaller side. */

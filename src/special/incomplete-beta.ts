@@ -81,7 +81,7 @@ export function checkPair(fn: string, first: string, x: number, second: string, 
 }
 
 /** {@link incompleteBeta} without checks. */
-function incompleteBetaProbability(a: number, b: number, x: number, y: number): Probability {
+export function incompleteBetaProbability(a: number, b: number, x: number, y: number): Probability {
   const lower = incompleteBetaKernel(a, b, x, y, work);
   return probabilityFromTail(
     work[0] as number,
