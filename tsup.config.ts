@@ -12,20 +12,13 @@ export const rooms = [
   'notebook',
 ] as const;
 
+/** The declarations of the package; rolldown.config.ts makes the JavaScript. */
 export default defineConfig({
   entry: {
     index: 'src/index.ts',
     ...Object.fromEntries(rooms.map((room) => [room, `src/${room}/index.ts`])),
   },
   format: ['esm', 'cjs'],
-  platform: 'neutral',
-  target: 'es2022',
-  // Both together: shared code lands in chunks, so a class is one class across subpaths, and the
-  // CommonJS output keeps class names and plain calls.
-  splitting: true,
-  treeshake: true,
-  sourcemap: true,
-  clean: true,
   // tsup hands the declaration bundler a baseUrl, which TypeScript 6 deprecates.
-  dts: { compilerOptions: { ignoreDeprecations: '6.0' } },
+  dts: { only: true, compilerOptions: { ignoreDeprecations: '6.0' } },
 });

@@ -57,7 +57,7 @@ function describe(value: unknown): string {
 }
 
 /** Largest integer argument where no count beyond exact doubles is meant: $2^{53} - 1$. */
-export const MAX_INTEGER: number = Number.MAX_SAFE_INTEGER;
+export const MAX_INTEGER = 9007199254740991;
 
 /** Refuses anything but an integer from `min` to `max`. */
 export function checkInteger(

@@ -276,6 +276,11 @@ export function isProbability(value: unknown): value is Probability {
   return hasKind(value, 'probability');
 }
 
+/** @internal The probability of what is known to happen, or known not to. */
+export function certainty(happens: boolean): Probability {
+  return probabilityFromTail(0, Number.NEGATIVE_INFINITY, happens ? 'upper' : 'lower', 0);
+}
+
 /** The probability of the complementary event. */
 export function complementOf(p: Probability): Probability {
   return new Probability(p.complement, p.value, p.logComplement, p.log, p.logError);

@@ -6,7 +6,7 @@
  * with its first correction.
  */
 import { checkBoolean, checkFinite, checkInteger, checkOptions, DomainError } from '../domain.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel, normalTailKernel } from '../special/normal.ts';
 import { logisticLimit, offsetOfShare, RAREST_CLASS, rareClassShare } from './logistic-limit.ts';
@@ -84,7 +84,7 @@ export function approxSeparability(args: ApproxSeparabilityArgs): Probability {
     throw new DomainError(fn, name, requirement, args[name]);
   }
   const coefficients = intercept ? d + 1 : d;
-  if (n <= coefficients) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  if (n <= coefficients) return certainty(true);
   if (d === 0) return equalLabels(n, b, signal, intercept);
   const { threshold: h, fourth, trace } = logisticLimit(b, signal, intercept);
   const spread = Math.sqrt(n) * Math.sqrt(fourth - h * h - 2 * h);
@@ -118,7 +118,7 @@ function checkShare(fn: string, share: unknown): asserts share is number {
 
 /** Without slopes an intercept separates the classes only if there is no more than one. */
 function equalLabels(n: number, b: number, signal: number, intercept: boolean): Probability {
-  if (!intercept) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
+  if (!intercept) return certainty(false);
   const rare = rareClassShare(b, signal, new Float64Array(1));
   const log = logAddExpKernel(n * Math.log1p(-rare), n * Math.log(rare));
   const error = 2 ** -52 * (4 + 2 * Math.abs(log));

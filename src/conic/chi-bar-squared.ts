@@ -11,7 +11,7 @@ import { targetOf } from '../numeric/target.ts';
 import type { Probability } from '../probability.ts';
 import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
 import { incompleteBetaInverse } from '../special/incomplete-beta-inverse.ts';
-import { GAMMA_TAIL_SLOTS, gammaTailError, gammaTailKernel } from '../special/incomplete-gamma.ts';
+import { gammaTailError, gammaTailKernel } from '../special/incomplete-gamma.ts';
 import { gammaInverseKernel } from '../special/incomplete-gamma-inverse.ts';
 import { logBetaKernel } from '../special/log-beta.ts';
 import { logGammaKernel } from '../special/log-gamma.ts';
@@ -54,10 +54,10 @@ export interface EBarSquaredOptions {
   readonly observations: number;
 }
 
-const GAMMA: Float64Array = /* @__PURE__ */ new Float64Array(GAMMA_TAIL_SLOTS);
+const GAMMA: Float64Array = /* @__PURE__ */ new Float64Array(4);
 
 const chiSquaredLaws: Component = {
-  end: Number.POSITIVE_INFINITY,
+  end: Infinity,
   tail(j: number, x: number, out: Float64Array): boolean {
     const lower = gammaTailKernel(0.5 * j, 0.5 * x, GAMMA);
     const log = (GAMMA[1] as number) + (GAMMA[2] as number);

@@ -13,7 +13,12 @@
  */
 import { type Count, resolveCount } from '../count.ts';
 import { checkBoolean, checkFinite, checkInteger, checkOptions } from '../domain.ts';
-import { logOfComplement, type Probability, probabilityFromTail } from '../probability.ts';
+import {
+  certainty,
+  logOfComplement,
+  type Probability,
+  probabilityFromTail,
+} from '../probability.ts';
 import { incompleteBetaKernel, incompleteBetaProbability } from '../special/incomplete-beta.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { wendel } from './wendel.ts';
@@ -82,9 +87,9 @@ export function originInHullLowerBound(args: OriginInHullLowerBoundArgs): Probab
   checkBoolean(fn, 'generalPosition', generalPosition);
   checkFinite(fn, 'depth', depth, 0, generalPosition ? 0.5 : 1);
   if (n === 0 || (d > 0 && (n <= d || depth === 0))) {
-    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
+    return certainty(false);
   }
-  if (d === 0 || depth === 1) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  if (d === 0 || depth === 1) return certainty(true);
   if (n === Number.POSITIVE_INFINITY) {
     return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', Number.POSITIVE_INFINITY);
   }

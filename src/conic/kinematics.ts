@@ -6,7 +6,7 @@
  */
 import { checkInteger, checkOptions, DomainError } from '../domain.ts';
 import { paritySplit } from '../numeric/parity-split.ts';
-import { Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, Probability } from '../probability.ts';
 import { type Cone, checkCone, isSubspace, subspaceKernel } from './cone.ts';
 import { logProductVolume } from './cone-algebra.ts';
 
@@ -118,10 +118,6 @@ export function meetsSubspaceKernel(cone: Cone, codimension: number): Probabilit
     cone.lineality,
     cone.dimension,
   );
-}
-
-function certainty(certain: boolean): Probability {
-  return probabilityFromTail(0, Number.NEGATIVE_INFINITY, certain ? 'upper' : 'lower', 0);
 }
 
 /**

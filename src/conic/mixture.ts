@@ -15,7 +15,7 @@ import { DomainError } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { narrow } from '../numeric/monotone-search.ts';
 import { oddsGap, reaches } from '../numeric/target.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import type { Cone } from './cone.ts';
 
 /** The weights with their logarithms and bounds on the errors of these; index = degrees of freedom. */
@@ -181,8 +181,8 @@ function componentTail(law: Component, j: number, x: number, upper: boolean): vo
 
 /** P(T <= x) with both tails. */
 export function mixtureCdf(weights: MixtureWeights, law: Component, x: number): Probability {
-  if (x < 0) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
-  if (x >= law.end) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  if (x < 0) return certainty(false);
+  if (x >= law.end) return certainty(true);
   sumTail(weights, law, x, true);
   let side: 'lower' | 'upper' = 'upper';
   if ((TOTAL[0] as number) > 0.5) {

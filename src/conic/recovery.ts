@@ -8,7 +8,7 @@
 import { checkChoice, checkInteger, checkNumber, checkOptions, DomainError } from '../domain.ts';
 import { paritySplit } from '../numeric/parity-split.ts';
 import { logSmoothSum } from '../numeric/smooth-sum.ts';
-import { complementOf, type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, complementOf, type Probability, probabilityFromTail } from '../probability.ts';
 import type { Cone } from './cone.ts';
 import { descentSequence } from './descent-cones.ts';
 import { secondOrderMoments } from './weak-threshold.ts';
@@ -138,7 +138,7 @@ function l1Success(
 }
 
 function certain(): Probability {
-  return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  return certainty(true);
 }
 
 /** Arguments of {@link recoveryBounds}. */

@@ -9,7 +9,7 @@ import type { Distribution } from '../distribution.ts';
 import { checkInteger, checkNumber, checkOptions } from '../domain.ts';
 import { narrow } from '../numeric/monotone-search.ts';
 import { oddsGap, targetOf } from '../numeric/target.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability } from '../probability.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 import { checkProbability } from '../special/probability-argument.ts';
 import { wendel } from './wendel.ts';
@@ -54,7 +54,7 @@ export function surroundTime(args: { readonly d: number }): Distribution {
       checkNumber(`${fn}.cdf`, 'x', x);
       // The points surround the target at some time with certainty.
       if (x === Number.POSITIVE_INFINITY) {
-        return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+        return certainty(true);
       }
       return wendel(Math.max(0, Math.floor(x)), d);
     },

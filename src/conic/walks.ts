@@ -10,7 +10,7 @@
  */
 import { checkInteger, checkOptions, DomainError } from '../domain.ts';
 import { type BernoulliRun, poissonBinomialTail } from '../numeric/poisson-binomial.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 
 /** Arguments of {@link walkHull} and {@link bridgeHull}. */
 export interface WalkHullArgs {
@@ -185,7 +185,7 @@ function hullOfRuns(pool: readonly BernoulliRun[], d: number): Probability {
   const runs = pool.filter((run) => run.to >= run.from);
   const fair = runs.findIndex((run) => run.step * run.from === 2);
   // no point at all: an empty hull contains nothing
-  if (fair < 0) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
+  if (fair < 0) return certainty(false);
   const { step, from, to, count } = runs[fair] as BernoulliRun;
   runs.splice(
     fair,

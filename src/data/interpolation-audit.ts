@@ -7,7 +7,7 @@ import { checkNumber, checkOptions } from '../domain.ts';
 import { binomialInterval } from '../numeric/binomial-interval.ts';
 import { matrixRank } from '../numeric/rank.ts';
 import { gaussianMembership } from '../polytope/gaussian-faces.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability } from '../probability.ts';
 import { hullVerticesKernel } from './hull-vertices.ts';
 import { DEFAULT_TOLERANCE } from './in-hull.ts';
 import { type LongWorkOptions, startPace } from './long-work.ts';
@@ -189,7 +189,7 @@ export async function interpolationAudit(
 /** P(a Gaussian point lies in the hull of n others); in dimension 0 any other point will do. */
 function gaussianShare(n: number, d: number): Probability {
   if (d > 0) return gaussianMembership({ n, log: Math.log(n) }, d, 1, 'plain');
-  return probabilityFromTail(0, Number.NEGATIVE_INFINITY, n > 0 ? 'upper' : 'lower', 0);
+  return certainty(n > 0);
 }
 
 /** The largest dimension that the Gaussian value is computed for. */

@@ -64,7 +64,7 @@ export function sampler(law: Law, options: SamplerOptions): () => Float64Array {
 }
 
 /** Most coordinates drawn at once: they must fit into memory. */
-export const MAX_NUMBERS: number = 2 ** 27;
+export const MAX_NUMBERS = 134217728;
 
 /** Smallest shape of a gamma number whose square root in a denominator never leaves the doubles. */
 const LEAST_SHAPE = 0.0625;

@@ -22,7 +22,7 @@ import { trapezoidError } from './orthant-peak.ts';
 
 const SQRT_HALF = Math.SQRT1_2;
 const SQRT_TWO_OVER_PI = 0.79788456080286536;
-const DEGREE = Math.PI / 180;
+const DEGREE = 0.017453292519943295;
 /** Nodes whose share is below e^-43 at every k of a table are dropped. */
 const CUT = 43;
 /** From this Z on the imaginary parts on the real path are below 1e-17 of the real ones, squared. */
@@ -249,7 +249,7 @@ export class CoordinateSumTable {
   }
 }
 
-const SUMS: Float64Array = /* @__PURE__ */ new Float64Array(4 * BLOCK);
+const SUMS: Float64Array = /* @__PURE__ */ new Float64Array(24);
 
 /** log |w(Zx / sqrt 2) sech(v + i beta)| on the line. */
 function lineLogModulus(Z: number, v: number, cosB: number, sinB: number): number {

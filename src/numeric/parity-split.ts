@@ -11,7 +11,7 @@
  * is one minus it, which costs no digits.
  */
 import { EPSILON } from '../epsilon.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 
 /** Writes a bound on the absolute error of the returned logarithm to `error[0]`. */
 export type LogTerm = (index: number, error: Float64Array) => number;
@@ -72,8 +72,8 @@ export function paritySplit(
   last: number,
   slope?: (index: number) => number,
 ): Probability {
-  if (d >= last) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
-  if (d <= first) return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
+  if (d >= last) return certainty(false);
+  if (d <= first) return certainty(true);
   const error = new Float64Array(1);
   const left = term(d - 1, error);
   const leftError = error[0] as number;

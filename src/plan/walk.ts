@@ -43,7 +43,7 @@ const FIRST_INTEGERS = [
   2 ** 53 - 1,
 ] as const;
 /** The stations of the walk on whole numbers. */
-const INTEGER_STATIONS = [16, 4096, 2 ** 53 - 1] as const;
+const INTEGER_STATIONS = [16, 4096, 9007199254740991] as const;
 /** The same for real arguments, negative ones first. */
 const REAL_STATIONS = [
   -1e300, -1e100, -1e30, -1e8, -100, -10, -1, 0, 1e-300, 1e-12, 1e-6, 1e-3, 0.1, 0.5, 1, 2, 4, 16,

@@ -15,7 +15,7 @@ import { EPSILON } from '../epsilon.ts';
 import { type BetaLaw, excessOf, type ResolvedBetaPrimeLaw } from '../law.ts';
 import { BetaAngles } from '../numeric/beta-angles.ts';
 import { logOutwardSum, probabilityFromSum } from '../numeric/parity-split.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { logChoices } from './gaussian-faces.ts';
 
 const CUT = 41;
@@ -23,7 +23,6 @@ const CUT = 41;
 const MOSTLY = -0.2876820724517809;
 /** The sum over m is given up beyond d + this. */
 const MAX_SPAN = 1200;
-const NEVER = Number.NEGATIVE_INFINITY;
 
 /** alpha = 2b + d or 2b - d. */
 export function alphaOf(law: BetaLaw | ResolvedBetaPrimeLaw, d: number): number {
@@ -41,10 +40,10 @@ export function betaMembership(
   if (sphere) {
     // Points of a sphere are all vertices; the sphere of R^1 has only two points.
     return d > 1
-      ? probabilityFromTail(0, NEVER, 'lower', 0)
+      ? certainty(false)
       : probabilityFromTail(Math.exp(-n * Math.LN2), -n * Math.LN2, 'upper', EPSILON * n);
   }
-  if (n <= d) return probabilityFromTail(0, NEVER, 'lower', 0);
+  if (n <= d) return certainty(false);
   const next = { n: n + 1, log: n < 2 ** 53 ? Math.log(n + 1) : log };
   if (d === 1) {
     const logOutside = Math.LN2 - next.log;
@@ -74,7 +73,7 @@ export function betaMembership(
  * near the sphere, whose continued terms alternate and hardly fall.
  */
 function logLoss(angles: BetaAngles, count: ResolvedCount, d: number, error: Float64Array): number {
-  let top = NEVER;
+  let top = Number.NEGATIVE_INFINITY;
   let sum = 0;
   let bound = 0;
   let small = 0;
@@ -96,11 +95,11 @@ function logLoss(angles: BetaAngles, count: ResolvedCount, d: number, error: Flo
     if (small === 2) break;
     if (m > d + MAX_SPAN || 2 * bound * Math.exp(top - count.log) > absolute) {
       error[0] = Number.POSITIVE_INFINITY;
-      return NEVER;
+      return Number.NEGATIVE_INFINITY;
     }
   }
   error[0] = sum > 2 * bound ? -Math.log1p(-bound / sum) + 4 * EPSILON : Number.POSITIVE_INFINITY;
-  return sum > 0 ? top + Math.log(sum) : NEVER;
+  return sum > 0 ? top + Math.log(sum) : Number.NEGATIVE_INFINITY;
 }
 
 /** log of the expected number of faces with v <= d vertices; a bound on its error in `error[0]`. */
@@ -114,7 +113,7 @@ export function logBetaFaces(
   const { n } = count;
   const sphere = law.family === 'beta' && law.b === -1;
   error[0] = 0;
-  if (n < v) return NEVER;
+  if (n < v) return Number.NEGATIVE_INFINITY;
   if (d === 1) return sphere ? Math.log(2 - 2 * Math.exp(-n * Math.LN2)) : Math.log(Math.min(n, 2));
   if (n <= d + 1 || (sphere && v === 1)) return logChoices(count, v, error);
   const angles = new BetaAngles(law.family, alphaOf(law, d));

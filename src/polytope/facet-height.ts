@@ -6,7 +6,7 @@ import type { Distribution } from '../distribution.ts';
 import { checkNumber, checkOptions } from '../domain.ts';
 import { type BetaLaw, checkLaw, type GaussianLaw, type Law } from '../law.ts';
 import { targetOf } from '../numeric/target.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { checkProbability } from '../special/probability-argument.ts';
 import {
   type FacetModel,
@@ -89,7 +89,7 @@ export function facetHeight(args: FacetHeightArgs): FacetHeight {
   const cdf = (x: number): Probability => {
     checkNumber('facetHeight.cdf', 'x', x);
     if (Math.abs(x) === Number.POSITIVE_INFINITY || (bounded && Math.abs(x) >= 1)) {
-      return probabilityFromTail(0, Number.NEGATIVE_INFINITY, x < 0 ? 'lower' : 'upper', 0);
+      return certainty(x >= 0);
     }
     return heightCdf(model, count, x);
   };

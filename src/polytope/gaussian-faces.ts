@@ -17,7 +17,7 @@ import {
   orthantSequenceSlope,
 } from '../numeric/orthant-sequences.ts';
 import { logOutwardSum, paritySplit } from '../numeric/parity-split.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability } from '../probability.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 import type { Hull } from './hull-options.ts';
@@ -40,7 +40,7 @@ export function gaussianMembership(
   if (scale === 0) {
     if (hull === 'plain') return wendel(count.n, d);
     const certain = hull === 'withCentre' || count.n > 0;
-    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, certain ? 'upper' : 'lower', 0);
+    return certainty(certain);
   }
   const sequence = SEQUENCE[hull];
   const parameters = [sequence, count.n, count.log, 1 / scale / scale] as const;
@@ -55,7 +55,7 @@ export function faceLoss(count: ResolvedCount, d: number, v: number, hull: Hull)
   const M = count.n - v;
   if (M === 0 && sequence === 'simplex') {
     // All points: a simplex, in general position, has no other face of its own dimension.
-    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, d >= v - 1 ? 'lower' : 'upper', 0);
+    return certainty(d < v - 1);
   }
   const logM = M < 1e15 ? Math.log(M) : count.log;
   const term = orthantSequence(sequence, M, logM, v);

@@ -5,7 +5,7 @@ import { type Count, type ResolvedCount, resolveCount } from '../count.ts';
 import { checkNumber, checkOptions } from '../domain.ts';
 import { type BetaLaw, checkLaw, type Law } from '../law.ts';
 import { targetOf } from '../numeric/target.ts';
-import { complementOf, type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, complementOf, type Probability } from '../probability.ts';
 import { checkProbability } from '../special/probability-argument.ts';
 import { MAX_EULER_DIMENSION } from './euler-characteristic.ts';
 import {
@@ -64,9 +64,6 @@ export interface HausdorffDistance {
   /** Estimate of the mean of d_H. */
   readonly approxMean: number;
 }
-
-const NEVER = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
-const ALWAYS = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
 
 /**
  * Hausdorff distance $d_H$ of the unit ball and the hull of n random points, for n >= 1 and d from 2 to
@@ -152,12 +149,12 @@ function exceedance(
 ): Exceedance {
   const known = (p: Probability): Exceedance =>
     Object.freeze({ lower: p, upper: p, approx: p, exact: p });
-  if (t <= 0) return known(ALWAYS);
-  if (t >= 2) return known(NEVER);
+  if (t <= 0) return known(certainty(true));
+  if (t >= 2) return known(certainty(false));
   const circle = d === 2 && beta === -1 ? circleExceedance(count, t) : null;
   if (circle !== null) return known(circle);
   if (t >= 1) return known(probabilityFromBound(logDeepExceedance(d, beta, count, t)));
-  if (estimate === null) return known(ALWAYS);
+  if (estimate === null) return known(certainty(true));
   const upper = logExceedanceBound(d, beta, count, t, true);
   const lower = logLowerBound(d, beta, count, t);
   const estimated = estimate.log(t);
@@ -239,8 +236,8 @@ export function hausdorffWithin(args: HausdorffWithinArgs): Probability {
   checkNumber(fn, 'distance', distance, 0, 2);
   const law = checkLaw(fn, args.law, ['beta'], d) as BetaLaw;
   const count = resolveCount(fn, 'n', args.n, 1);
-  if (distance === 2) return ALWAYS;
-  if (distance === 0) return NEVER;
+  if (distance === 2) return certainty(true);
+  if (distance === 0) return certainty(false);
   const circle = d === 2 && law.b === -1 ? circleExceedance(count, distance) : null;
   if (circle !== null) return complementOf(circle);
   const exact = d <= MAX_EULER_DIMENSION;

@@ -6,7 +6,7 @@ import { type Count, type ResolvedCount, resolveCount } from '../count.ts';
 import { checkFinite, checkInteger, checkOptions, DomainError } from '../domain.ts';
 import { FixedQuerySequence } from '../numeric/fixed-query.ts';
 import { paritySplit } from '../numeric/parity-split.ts';
-import { Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, Probability, probabilityFromTail } from '../probability.ts';
 import { logSumExpKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel } from '../special/normal.ts';
 
@@ -35,7 +35,6 @@ const MAX_QUERY_DIMENSION = 1000;
 const MAX_DISTANCE = 1e6;
 /** Beyond this log of n Q(r) the tail is below every double's logarithm. */
 const UNREACHABLE = 705;
-const NEVER = Number.NEGATIVE_INFINITY;
 
 /**
  * The probability that a given query, at a given Mahalanobis distance from the mean, lies in the convex
@@ -130,9 +129,9 @@ export function queriesInHull(args: QueriesInHullArgs): Probability {
 function membership(count: ResolvedCount, d: number, r: number): Probability {
   const { n, log } = count;
   if (r === 0) return wendel(n, d);
-  if (n <= d) return probabilityFromTail(0, NEVER, 'lower', 0);
+  if (n <= d) return certainty(false);
   if (log + logNormalCdfKernel(-r) > UNREACHABLE) {
-    return probabilityFromTail(0, NEVER, 'upper', Number.POSITIVE_INFINITY);
+    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', Number.POSITIVE_INFINITY);
   }
   const sequence = new FixedQuerySequence(n, log, r);
   const slope = (k: number): number => sequence.slope(k);

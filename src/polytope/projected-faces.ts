@@ -6,7 +6,7 @@ import { wendel } from '../conic/wendel.ts';
 import { checkChoice, checkInteger, checkOptions } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
-import { complementOf, type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, complementOf, type Probability } from '../probability.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
 import { MAX_FACE_DIMENSION } from './face-options.ts';
 import { faceLoss, logChoices } from './gaussian-faces.ts';
@@ -88,7 +88,7 @@ export function projectedFaces(args: ProjectedFacesArgs): ProjectedFaces {
   checkInteger(fn, 'k', k, 0, n - 1);
   if (k >= d) {
     // A face of the dimension of the image cannot lie on its boundary.
-    const survival = probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
+    const survival = certainty(false);
     return { expected: LogNumber.fromLog(Number.NEGATIVE_INFINITY), survival };
   }
   const error = new Float64Array(1);

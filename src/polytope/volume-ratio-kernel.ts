@@ -20,13 +20,11 @@ import {
   orderStatisticExpectation,
 } from '../numeric/order-statistic.ts';
 import { exactLogError } from '../numeric/target.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { fairBinomialTail } from '../special/fair-binomial.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
 import type { Hull } from './hull-options.ts';
 
-const NEVER = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'lower', 0);
-const CERTAIN = /* @__PURE__ */ probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', 0);
 /** The smaller tail is meant; a first guess that turns out to be above this is recomputed. */
 const LOG_HALF_WITH_MARGIN = /* @__PURE__ */ Math.log(0.55);
 
@@ -38,8 +36,8 @@ export function volumeRatioKernel(
   hull: Hull,
 ): Probability {
   const { n } = count;
-  if (k === 0) return n > 0 ? CERTAIN : NEVER;
-  if (hull === 'plain' ? n <= k : n < k) return NEVER;
+  if (k === 0) return certainty(n > 0);
+  if (hull === 'plain' ? n <= k : n < k) return certainty(false);
   if (b === -1) return twoPoint(count, hull);
   if (hull === 'symmetric') return symmetricRatio(k, b, count);
   return hull === 'plain' ? plainRatio(k, b, count) : centredRatio(k, b, count);
@@ -47,7 +45,7 @@ export function volumeRatioKernel(
 
 /** d = 1 and points at -1 and 1: the hull is a segment or a point. */
 function twoPoint(count: ResolvedCount, hull: Hull): Probability {
-  if (hull === 'symmetric') return CERTAIN;
+  if (hull === 'symmetric') return certainty(true);
   const exponent = hull === 'plain' ? 1 - count.n : -count.n;
   const log = exponent * Math.LN2;
   // a power of two, so the value is exact

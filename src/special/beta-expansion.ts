@@ -22,8 +22,8 @@ import { millsRatioKernel } from './error-function.ts';
 
 /** Enough from V = 15, z^2 = 0.9 V on. */
 const MAX_TERMS = 32;
-const u = /* @__PURE__ */ new Float64Array(MAX_TERMS + 2);
-const c = /* @__PURE__ */ new Float64Array(MAX_TERMS + 2);
+const u = /* @__PURE__ */ new Float64Array(34);
+const c = /* @__PURE__ */ new Float64Array(34);
 
 /**
  * The sum J for a tail that ends at distance z >= 0 from the mean.

@@ -125,9 +125,6 @@ function smallerTail(
   storeTail(out[0] as number, out[1] as number, factor, out);
 }
 
-/** Beyond this |tau| the series below would need more terms; the general form serves. */
-const SERIES_END = 1 / 6;
-
 /** Writes the exponent of nu^nu / (2^nu a^a b^b) as `out[0] + out[1]`; returns the high part. */
 function fairDeviance(
   a: number,
@@ -139,7 +136,8 @@ function fairDeviance(
   out: Float64Array,
 ): number {
   const tau = gap / nu;
-  if (tau > SERIES_END) {
+  // Beyond it the series below would need more terms; the general form serves.
+  if (tau > 1 / 6) {
     out[0] = 0;
     out[1] = 0;
     addDeviance(a, -0.5 * gap, -0.5 * gapTail, 0.5, nu, nuTail, out);

@@ -23,7 +23,7 @@
  * Transactions on Mathematical Software 12 (1986) 377-393, doi 10.1145/22721.23109; DLMF 8.
  */
 import { checkNumber } from '../domain.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { gaussianTailSum } from './beta-expansion.ts';
 import { addDeviance } from './beta-prefix.ts';
 import { productError, sumError } from './double-double.ts';
@@ -160,9 +160,9 @@ export function incompleteGamma(a: number, x: number): Probability {
 
 /** {@link incompleteGamma} without checks. */
 export function incompleteGammaKernel(a: number, x: number): Probability {
-  if (x <= 0) return probabilityFromTail(0, -Infinity, 'lower', 0);
+  if (x <= 0) return certainty(false);
   if (x === Infinity) {
-    return probabilityFromTail(0, -Infinity, 'upper', 0);
+    return certainty(true);
   }
   const out = new Float64Array(GAMMA_TAIL_SLOTS);
   const lower = gammaTailKernel(a, x, out);

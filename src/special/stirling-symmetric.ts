@@ -49,7 +49,9 @@ function scaledPowerSum(n: number, j: number, c: number, sum: number): number {
 }
 
 /** Coefficients of f^(2 i - 1) in the midpoint rule, f^(-1) being the integral. */
-const MIDPOINT: readonly number[] = [1, -1 / 24, 7 / 5760, -31 / 967680];
+const MIDPOINT: readonly number[] = [
+  1, -0.041666666666666664, 0.0012152777777777778, -3.2035383597883595e-5,
+];
 
 function power(x: number, n: number): number {
   let result = 1;
