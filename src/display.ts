@@ -54,7 +54,7 @@ export function formatExponential(log: number, logError = 0): string {
   const rest = log - exponent * LN10_HIGH - exponent * LN10_LOW;
   let mantissa = toDigits(Math.exp(rest), digits);
   // Rounding may carry into the exponent.
-  if (mantissa === '10' || mantissa === '1e+1') {
+  if (Number(mantissa) === 10) {
     mantissa = '1';
     exponent++;
   }
@@ -73,7 +73,7 @@ abstract class ShownResult {
   /** Text for a string hint; any arithmetic or comparison throws, so that no tail is lost by accident. */
   [Symbol.toPrimitive](hint: string): string {
     if (hint === 'string') return this.toString();
-    throw new TypeError('read .value or .log');
+    throw new TypeError('no plain number: read .value or .log');
   }
 }
 
@@ -103,7 +103,7 @@ export const Displayable: typeof ShownResult = /* @__PURE__ */ withNotebookDispl
 
 /** Whether a value is an object of one of the library's kinds, from any copy of it or plain data. */
 export function hasKind(value: unknown, kind: string): boolean {
-  return typeof value === 'object' && value !== null && (value as { kind?: unknown }).kind === kind;
+  return (value as { kind?: unknown } | null | undefined)?.kind === kind;
 }
 
 /** A number as JSON can hold it: infinities become strings. */

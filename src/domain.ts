@@ -50,10 +50,13 @@ export class DomainError extends RangeError {
 
 /** A value as an error message shows it: strings quoted, long things shortened. */
 function describe(value: unknown): string {
-  if (typeof value === 'string') return JSON.stringify(value);
-  if (typeof value === 'bigint') return `${value}n`;
-  if (Object(value) !== value) return String(value);
-  return Array.isArray(value) ? `an array of length ${value.length}` : 'an object';
+  const type = typeof value;
+  if (Array.isArray(value)) return `an array of length ${value.length}`;
+  // Mostly a law without its brackets.
+  if (type === 'function') return `a ${type}`;
+  if (type === 'string') return JSON.stringify(value);
+  if (type === 'bigint') return `${value}n`;
+  return Object(value) === value ? `an ${type}` : String(value);
 }
 
 /** Largest integer argument where no count beyond exact doubles is meant: $2^{53} - 1$. */

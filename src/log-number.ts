@@ -134,7 +134,7 @@ export class LogNumber extends Displayable {
   }
 }
 
-// Outside the class: a class that names itself in its body is renamed by the build.
+// Outside the class: bundlers give a class that names itself in its body a second, mangled name.
 function make(log: number, logError: number): LogNumber {
   return new LogNumber(log || 0, logError);
 }

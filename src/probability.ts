@@ -229,7 +229,7 @@ export class Probability extends Displayable {
   }
 }
 
-// Outside the class: a class that names itself in its body is renamed by the CommonJS build.
+// Outside the class: bundlers give a class that names itself in its body a second, mangled name.
 function checkedFields(fields: ProbabilityFields): Probability {
   const fn = 'Probability.of';
   // Anything but an object is refused for the value that it lacks.

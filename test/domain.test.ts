@@ -76,7 +76,7 @@ describe('the one wording of all messages', () => {
       'f: options must be an object (the options are n), got an array of length 1',
     ],
     [() => checkNumber('f', 'x', LogNumber.of(1)), 'f: x must be a number, got an object'],
-    [() => checkNumber('f', 'x', () => 1), 'f: x must be a number, got an object'],
+    [() => checkNumber('f', 'x', () => 1), 'f: x must be a number, got a function'],
     [() => checkNumber('f', 'x', {}), 'f: x must be a number, got an object'],
   ])('%#: %s', (call, message) => {
     expect(refusal(call)).toBe(message);
