@@ -95,6 +95,7 @@ export {
   uniformSphere,
 } from './law.ts';
 export { LogNumber, type PlainLogNumber } from './log-number.ts';
+export type { Answer } from './plan/answer.ts';
 export {
   type SizingAnswer,
   type SizingReport,
@@ -102,13 +103,7 @@ export {
   type SizingRow,
   sizingReport,
 } from './plan/sizing-report.ts';
-export {
-  type Answer,
-  type FixedArgs,
-  largest,
-  type ParameterOf,
-  smallest,
-} from './plan/smallest.ts';
+export { type FixedArgs, largest, type ParameterOf, smallest } from './plan/smallest.ts';
 export type { Target } from './plan/target.ts';
 export {
   type ApproxVolumeThresholdArgs,

@@ -9,7 +9,6 @@
  */
 import { type Count, resolveCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
-import { exactLogError } from '../numeric/target.ts';
 import { type Probability, probabilityFromTail } from '../probability.ts';
 import { fairTailOfPoints } from '../special/fair-binomial.ts';
 
@@ -92,8 +91,5 @@ export function wendelTail(n: number, d: number, out: Float64Array): boolean {
     out[2] = Infinity;
     return false;
   }
-  const insideIsSmall = !fairTailOfPoints(n, d, out);
-  // Multiples of 2^-53 and single powers of 2 are exact doubles.
-  if (n <= 54 || n === d + 1 || d === 1 || n === 2 * d) out[2] = exactLogError(out[1]);
-  return insideIsSmall;
+  return !fairTailOfPoints(n, d, out);
 }

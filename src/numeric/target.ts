@@ -4,7 +4,7 @@
  * A target of 1 - 1e-12 is compared through complements, one of 1e-300000 through logarithms, and the
  * stated error decides whether the answer is certain.
  */
-import { EPSILON } from '../epsilon.ts';
+import { EPSILON, exactLogError } from '../epsilon.ts';
 import { Probability } from '../probability.ts';
 
 /** The target as a probability: a number must lie in [0, 1], a Probability is taken as it is. */
@@ -61,7 +61,7 @@ export function isCertain(p: Probability, target: Probability): boolean {
   if (log === Number.NEGATIVE_INFINITY) return true;
   const pIsLower = p.log <= p.logComplement;
   const small = pIsLower ? p.value : p.complement;
-  if (pIsLower === lower && isExact(p) && target.logError === 0) return true;
+  if (pIsLower === lower && isExact(p) && isExact(target)) return true;
   const error = pIsLower === lower ? p.logError : (p.logError * small) / (1 - small) + EPSILON;
   const tail = lower ? p.value : p.complement;
   const targetTail = lower ? target.value : target.complement;
@@ -80,14 +80,6 @@ function isExact(p: Probability): boolean {
   const value = lower ? p.value : p.complement;
   if (p.logError === 0) return true;
   return value >= 2 ** -1022 && p.logError === exactLogError(lower ? p.log : p.logComplement);
-}
-
-/**
- * The error bound to state for the logarithm of a tail whose value is exact: the rounding of the
- * logarithm, with a factor that no other bound has, so that it can be recognised.
- */
-export function exactLogError(log: number): number {
-  return Math.abs(log) * (EPSILON + 2 ** -75);
 }
 
 /** Whether two tails are both normal doubles, so that values are finer than logarithms. */

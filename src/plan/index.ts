@@ -3,6 +3,7 @@
  *
  * @module
  */
+export type { Answer } from './answer.ts';
 export { logSpaced } from './log-spaced.ts';
 export {
   type SizingAnswer,
@@ -11,11 +12,5 @@ export {
   type SizingRow,
   sizingReport,
 } from './sizing-report.ts';
-export {
-  type Answer,
-  type FixedArgs,
-  largest,
-  type ParameterOf,
-  smallest,
-} from './smallest.ts';
+export { type FixedArgs, largest, type ParameterOf, smallest } from './smallest.ts';
 export type { Target } from './target.ts';

@@ -8,8 +8,9 @@ import { Displayable, type DisplayRow, formatExponential, formatNumber } from '.
 import { checkInteger, checkOptions, DomainError } from '../domain.ts';
 import { checkLaw, describeLaw, gaussian, type Law } from '../law.ts';
 import { Probability } from '../probability.ts';
+import type { Answer } from './answer.ts';
 import { type QuestionRow, questions } from './questions.ts';
-import { type Answer, smallest } from './smallest.ts';
+import { smallest } from './smallest.ts';
 
 /** Arguments of {@link sizingReport}. */
 export interface SizingReportArgs {

@@ -3,28 +3,11 @@
  * serves every question and every numeric argument.
  */
 import { DomainError } from '../domain.ts';
-import { type Bracket, narrow, type Probe } from '../numeric/monotone-search.ts';
 import type { Probability } from '../probability.ts';
+import { type Answer, answerAt, answerBetween } from './answer.ts';
 import { type Condition, conditionOf, type Evaluation } from './question.ts';
 import { readTarget, type Target, targetText } from './target.ts';
 import { type Walk, walkFrom, walkUp } from './walk.ts';
-
-/** The answer of {@link smallest} and {@link largest}. */
-export interface Answer {
-  /** The argument; `Infinity` where it exceeds every double, and then `log` is the answer. */
-  readonly value: number;
-  /** Its natural logarithm. */
-  readonly log: number;
-  /**
-   * Whether the integer is certain: the error bounds on both sides of it separate from the target.
-   * Always false for real arguments and above 2^53.
-   */
-  readonly exact: boolean;
-  /** The values that remain possible. */
-  readonly bracket: readonly [number, number];
-  /** The probability at `value`. */
-  readonly probability: Probability;
-}
 
 /** The names of the arguments of a question, also when it takes one of several shapes. */
 export type ParameterOf<Args> = Args extends unknown ? keyof Args & string : never;
@@ -68,7 +51,7 @@ export function smallest<Args, Name extends ParameterOf<Args>>(
   const condition = bind(fn, question as (args: never) => Probability, parameter, args, target);
   const walk = start(condition);
   if (walk.first.gap >= 0) {
-    if (walk.first.x > -1e300) return answerAt(condition, walk, walk.first);
+    if (walk.first.x > -1e300) return answerAt(condition, walk, 'first');
     const requirement = `one that smaller ${condition.parameter} fails (${condition.name} keeps it all the way down)`;
     throw new DomainError(fn, 'target', requirement, targetText(target));
   }
@@ -112,7 +95,7 @@ export function largest<Args, Name extends ParameterOf<Args>>(
   // Where it holds only from some value on, the largest is where it ends again.
   const held = holdsLow ? walk : walkOn(condition, walk);
   if (held.change !== undefined) return answerBetween(condition, held, false);
-  if (held.bounded) return answerAt(condition, held, held.last);
+  if (held.bounded) return answerAt(condition, held, 'last');
   const requirement = `one that larger ${condition.parameter} fails (${condition.name} keeps it up to ${text(held.last)})`;
   throw new DomainError(fn, 'target', requirement, targetText(target));
 }
@@ -160,114 +143,6 @@ function start(condition: Condition): Walk {
   if (walk !== undefined) return walk;
   // Every argument was refused: the question's own error says why.
   throw condition.refusal() ?? new Error(`${condition.name} accepts no ${condition.parameter}`);
-}
-
-/** The answer at an end of the domain, where no neighbour has to be compared. */
-function answerAt(condition: Condition, walk: Walk, evaluation: Evaluation): Answer {
-  const { x, probability } = evaluation;
-  const exact = walk.integer && condition.certain(evaluation);
-  return { value: x, log: Math.log(Math.abs(x)), exact, bracket: [x, x], probability };
-}
-
-/** The answer on one side of a change: the upper side of it for `smallest`, the lower for `largest`. */
-function answerBetween(condition: Condition, walk: Walk, upperSide: boolean): Answer {
-  const change = walk.change as NonNullable<Walk['change']>;
-  const cache = new Map<number, Evaluation>([
-    [change.lower.x, change.lower],
-    [change.upper.x, change.upper],
-  ]);
-  const evaluate = (x: number): Evaluation => {
-    const known = cache.get(x);
-    if (known !== undefined) return known;
-    const evaluation = change.logs ? condition.atLog(x) : condition.at(x);
-    if (evaluation === undefined) {
-      throw (
-        condition.refusal() ?? new Error(`${condition.name} refuses ${condition.parameter} = ${x}`)
-      );
-    }
-    cache.set(x, evaluation);
-    return evaluation;
-  };
-  const integer = walk.integer && !change.logs && change.upper.x <= Number.MAX_SAFE_INTEGER;
-  const isNoise = (x: number): boolean => !integer && !condition.certain(evaluate(x));
-  const gapAt = (x: number): number => evaluate(x).gap;
-  const found = narrow(change, gapAt, walk.integer && !change.logs, isNoise);
-  const { lower, upper } =
-    found.settled === undefined ? found : aroundNoise(condition, evaluate, found, found.settled);
-  const best = evaluate(upperSide ? upper.x : lower.x);
-  const { probability } = best;
-  if (change.logs) {
-    const bracket = [Math.exp(lower.x), Math.exp(upper.x)] as const;
-    return { value: Math.exp(best.x), log: best.x, exact: false, bracket, probability };
-  }
-  const log = Math.log(Math.abs(best.x));
-  if (!integer) {
-    return { value: best.x, log, exact: false, bracket: [lower.x, upper.x], probability };
-  }
-  const bracket = possible(condition, evaluate, found, walk, upperSide);
-  return { value: best.x, log, exact: bracket[0] === bracket[1], bracket, probability };
-}
-
-/** The nearest points on both sides of a noisy one at which the outcome is certain. */
-function aroundNoise(
-  condition: Condition,
-  evaluate: (x: number) => Evaluation,
-  bracket: Bracket,
-  settled: Probe,
-): Bracket {
-  const { lower, upper } = bracket;
-  // The gap of a point at the edge of certainty is about its error; the slope turns it into a distance.
-  const slope = Math.abs((upper.gap - lower.gap) / (upper.x - lower.x));
-  const error = Math.max(evaluate(settled.x).probability.logError, 2 ** -50);
-  const step = Math.max(2 * (error / slope), 2 ** -50 * Math.abs(settled.x));
-  const certainSide = (end: Probe): Probe => {
-    const sign = Math.sign(end.x - settled.x);
-    for (let reach = step; reach < Math.abs(end.x - settled.x); reach *= 4) {
-      const evaluation = evaluate(settled.x + sign * reach);
-      if (condition.certain(evaluation) && evaluation.gap < 0 === end.gap < 0) return evaluation;
-    }
-    return end;
-  };
-  return { lower: certainSide(lower), upper: certainSide(upper) };
-}
-
-/** The integers that the error bounds leave possible. */
-function possible(
-  condition: Condition,
-  evaluate: (x: number) => Evaluation,
-  bracket: Bracket,
-  walk: Walk,
-  upperSide: boolean,
-): readonly [number, number] {
-  const change = walk.change as NonNullable<Walk['change']>;
-  const below = certainFrom(condition, evaluate, bracket.lower.x, change.lower.x);
-  const above = certainFrom(condition, evaluate, bracket.upper.x, change.upper.x);
-  return upperSide ? [below + 1, above] : [below, above - 1];
-}
-
-/** The nearest integer to `from`, going towards `end`, at which the outcome is certain. */
-function certainFrom(
-  condition: Condition,
-  evaluate: (x: number) => Evaluation,
-  from: number,
-  end: number,
-): number {
-  if (from === end || condition.certain(evaluate(from))) return from;
-  const sign = Math.sign(end - from);
-  let uncertain = from;
-  let reach = 1;
-  let known = from + sign;
-  while (known !== end && !condition.certain(evaluate(known))) {
-    uncertain = known;
-    reach *= 2;
-    known = sign > 0 ? Math.min(from + reach, end) : Math.max(from - reach, end);
-  }
-  while (Math.abs(known - uncertain) > 1) {
-    const middle = Math.floor(uncertain + (known - uncertain) / 2);
-    if (condition.certain(evaluate(middle))) known = middle;
-    else uncertain = middle;
-  }
-  return known;
 }
 
 function unreachable(fn: string, condition: Condition, walk: Walk, target: Target): DomainError {

@@ -49,6 +49,8 @@ const REAL_STATIONS = [
   -1e300, -1e100, -1e30, -1e8, -100, -10, -1, 0, 1e-300, 1e-12, 1e-6, 1e-3, 0.1, 0.5, 1, 2, 4, 16,
   256, 65536, 1e9, 1e18, 1e36, 1e72, 1e150, 1e300,
 ] as const;
+/** 2^53, the last whole number whose neighbour below is a double. */
+export const LAST_INTEGER = 9007199254740992;
 /** Up to here counts beyond 2^53 are passed as doubles, which are finer than logarithms. */
 const LAST_DOUBLE = 4611686018427387904;
 /** Where the walk on logarithms starts, and where it gives up: e^(10^6) points are enough. */
@@ -89,10 +91,13 @@ export function walkFrom(condition: Condition, integer: boolean, first: Evaluati
     const next = condition.atLog(log);
     if (next === undefined) return { integer, first, last: top, bounded: true };
     if (changed(next)) {
-      const middle = last.x === LOG_START ? condition.at(LAST_DOUBLE) : undefined;
-      return middle !== undefined && changed(middle)
-        ? foundChange(true, first, top, middle, false)
-        : foundChange(true, first, last, next, true);
+      for (const x of last.x === LOG_START ? [LAST_INTEGER, LAST_DOUBLE] : []) {
+        const middle = condition.at(x);
+        if (middle !== undefined && changed(middle)) {
+          return foundChange(true, first, top, middle, false);
+        }
+      }
+      return foundChange(true, first, last, next, true);
     }
     // Past double range nothing moves any more: this is the limit.
     const stuck =
@@ -141,7 +146,7 @@ function firstReal(condition: Condition): Evaluation | undefined {
 }
 
 /** The argument inside the domain that is nearest to one outside it, by bisection. */
-function approachEdge(
+export function approachEdge(
   condition: Condition,
   inside: Evaluation,
   outside: number,

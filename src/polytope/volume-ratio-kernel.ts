@@ -13,13 +13,13 @@
  * weight, again a positive integrand, so both tails keep their digits.
  */
 import type { ResolvedCount } from '../count.ts';
+import { exactLogError } from '../epsilon.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import {
   centralLogTail,
   type LogExpectation,
   orderStatisticExpectation,
 } from '../numeric/order-statistic.ts';
-import { exactLogError } from '../numeric/target.ts';
 import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { fairBinomialTail } from '../special/fair-binomial.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';

@@ -20,7 +20,7 @@ import { expansionIsFaster, gaussianTailSum } from './beta-expansion.ts';
 import { betaFraction } from './beta-fraction.ts';
 import { addDeviance, largeBetaAmplitude } from './beta-prefix.ts';
 import { productError, quotientError, sumError } from './double-double.ts';
-import { storeHalf, storeTail } from './tail-result.ts';
+import { storeExact, storeTail } from './tail-result.ts';
 
 /** Largest n of the table: below 2^106 a sum of binomial coefficients is exact as two doubles. */
 const TABLE_SIZE = 106;
@@ -68,7 +68,7 @@ export function fairBinomialTail(n: number, k: number, out: Float64Array): boole
   const high = difference - 1;
   const low = sumError(n, -2 * k, difference) + sumError(difference, -1, high);
   if (high === 0 && low === 0) {
-    storeHalf(out);
+    storeExact(0.5, out);
     return true;
   }
   if (high >= 0) {
@@ -86,7 +86,7 @@ export function fairTailOfPoints(n: number, b: number, out: Float64Array): boole
   const gap = n - 2 * b;
   const low = sumError(n, -2 * b, gap);
   if (gap === 0 && low === 0) {
-    storeHalf(out);
+    storeExact(0.5, out);
     return true;
   }
   // Above 2^53 one toss more or less is below the rounding of everything but the gap.
@@ -105,8 +105,7 @@ function smallerTail(
   out: Float64Array,
 ): void {
   if (n <= TABLE_SIZE) {
-    const value = (table ?? buildTable())[((n * n) >> 2) + b - 1] as number;
-    storeRounded(value, Math.log(value), out);
+    storeShare((table ?? buildTable())[((n * n) >> 2) + b - 1] as number, n, out);
     return;
   }
   if (b <= DIRECT + 1) {
@@ -161,8 +160,8 @@ function fairDeviance(
 /** Up to this j the sum is formed term by term; it is then below 2^440 for n < 2^53. */
 const DIRECT = 8;
 
-/** 2^-DEEP is a normal number, and so is the product of a sum with it. */
-const DEEP = 1000;
+/** 2^-DEEP is the smallest normal number. */
+const DEEP = 1022;
 
 /** log 2 beyond Math.LN2. */
 const LN2_TAIL = 2.3190468138462996e-17;
@@ -192,13 +191,19 @@ function directSum(n: number, j: number, out: Float64Array): void {
   }
   const value = sum * halfToThe(Math.min(n, DEEP));
   if (n <= DEEP) {
-    storeRounded(value, Math.log(value), out);
+    storeShare(value, n, out);
     return;
   }
   const product = n * Math.LN2;
   const logSum = Math.log(sum);
   const correction = productError(n, Math.LN2, product) + n * LN2_TAIL;
   storeRounded(value * halfToThe(n - DEEP), logSum - correction - product, out);
+}
+
+/** Stores a sum of binomial coefficients over 2^n: exact, unless the sum itself is beyond 2^53. */
+function storeShare(value: number, n: number, out: Float64Array): void {
+  if (value <= halfToThe(n - 53)) storeExact(value, out);
+  else storeRounded(value, Math.log(value), out);
 }
 
 /** Stores a value and a logarithm that are off by a rounding at most. */
@@ -208,7 +213,7 @@ function storeRounded(value: number, log: number, out: Float64Array): void {
   out[2] = 1.2e-16 - 2.3e-16 * log;
 }
 
-/** 2^-n for an integer n >= 0, exact. */
+/** 2^-n for an integer n >= 0, exact; 1 for n < 0. */
 function halfToThe(n: number): number {
   if (n > 2200) return 0;
   let power = 1;

@@ -22,7 +22,7 @@ import { expansionIsFaster, gaussianTailSum } from './beta-expansion.ts';
 import { betaFraction } from './beta-fraction.ts';
 import { betaAmplitude, betaDelta, betaDeviance } from './beta-prefix.ts';
 import { betaPower, betaSeries } from './beta-series.ts';
-import { storeHalf, storeTail, storeZero, TAIL_SLOTS } from './tail-result.ts';
+import { storeExact, storeTail, storeZero, TAIL_SLOTS } from './tail-result.ts';
 
 const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
 
@@ -136,7 +136,7 @@ function tailBelowMean(
   out: Float64Array,
 ): boolean {
   if (delta === 0 && a === b) {
-    storeHalf(out);
+    storeExact(0.5, out);
     return true;
   }
   if (b === 1) {

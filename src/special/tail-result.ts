@@ -2,8 +2,11 @@
  * How the kernels of the beta family hand over a tail.
  *
  * Slots of the array that the caller gives: `out[0]` the value of the smaller tail, `out[1]` its
- * logarithm, `out[2]` a bound of the error of that logarithm.
+ * logarithm, `out[2]` a bound of the error of that logarithm. A value that is exact says so by the
+ * bound of epsilon.ts, and a search for it ends in a tie.
  */
+import { EPSILON, exactLogError } from '../epsilon.ts';
+import { quotientError } from './double-double.ts';
 
 /** Length of the array. */
 export const TAIL_SLOTS = 3;
@@ -56,11 +59,27 @@ function storeValue(value: number, out: Float64Array): void {
   out[2] = VALUE_ERROR - 2 * LOG_ROUNDING * log;
 }
 
-/** Stores a tail that is exactly one half. */
-export function storeHalf(out: Float64Array): void {
-  out[0] = 0.5;
-  out[1] = -Math.LN2;
-  out[2] = LOG_ROUNDING;
+/** Stores a tail that is exactly the given double. */
+export function storeExact(value: number, out: Float64Array): void {
+  const log = Math.log(value);
+  out[0] = value;
+  out[1] = log;
+  out[2] = exactLogError(log);
+}
+
+/**
+ * Stores the smaller one of a/b and 1 - a/b for whole numbers 0 < a < b <= 2^53, correctly rounded, and
+ * returns whether it is a/b.
+ */
+export function storeQuotient(a: number, b: number, out: Float64Array): boolean {
+  const lower = 2 * a <= b;
+  const numerator = lower ? a : b - a;
+  const value = numerator / b;
+  storeExact(value, out);
+  if (quotientError(numerator, b, value) !== 0) {
+    out[2] = EPSILON * (1 - (out[1] as number));
+  }
+  return lower;
 }
 
 /** Stores an impossible event. */
