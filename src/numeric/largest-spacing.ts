@@ -25,7 +25,7 @@ export function largestSpacingTail(n: number, a: number, out: Float64Array): boo
   if (a >= 1) return false;
   if (n * a <= 1) return true;
   const logFirst = Math.log(n) + (n - 1) * Math.log1p(-a);
-  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, out);
+  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, logFirst, out);
   const log = logAllShort(n, a, out);
   if (log < -Math.LN2) {
     out[0] = log;
@@ -36,23 +36,28 @@ export function largestSpacingTail(n: number, a: number, out: Float64Array): boo
   return false;
 }
 
-function alternatingSum(n: number, a: number, out: Float64Array): boolean {
+function alternatingSum(n: number, a: number, logFirst: number, out: Float64Array): boolean {
+  // relative to the first term, which may be far below every double, or to 1
+  const scale = Math.min(logFirst, 0);
   let sum = 0;
   let error = 0;
   for (let k = 1; k <= n && k * a < 1; k++) {
-    const log = logBinomialKernel(n, k) + (n - 1) * Math.log1p(-k * a);
-    const term = Math.exp(log);
+    const logChoices = logBinomialKernel(n, k);
+    const logEach = (n - 1) * Math.log1p(-k * a);
+    const term = Math.exp(logChoices + logEach - scale);
     sum += k % 2 === 1 ? term : -term;
-    error += term * EPSILON * (3 + 2 * Math.abs(log) + k);
+    error += term * EPSILON * (3 + 2 * (logChoices - logEach) + k);
     if (term < 1e-20 * sum && n > FEW) break;
   }
-  const above = sum <= 0.5;
-  const tail = Math.max(above ? sum : 1 - sum, 0);
-  out[0] = Math.log(tail);
+  const above = scale < -1 || Math.exp(scale) * sum <= 0.5;
+  const tail = above ? sum : Math.max(1 - Math.exp(scale) * sum, 0);
+  const rounding = above ? error : Math.exp(scale) * error;
+  out[0] = (above ? scale : 0) + Math.log(Math.max(tail, rounding));
   // a tail below the rounding of the terms is known to be below it, no more
   out[1] =
-    tail > error ? -Math.log1p(-Math.min(error / tail, 1 - EPSILON)) : Number.POSITIVE_INFINITY;
-  if (tail <= error) out[0] = Math.log(Math.max(tail, error, Number.MIN_VALUE));
+    tail > rounding
+      ? -Math.log1p(-Math.min(rounding / tail, 1 - EPSILON))
+      : Number.POSITIVE_INFINITY;
   return !above;
 }
 

@@ -88,11 +88,14 @@ export function logUpperBound(
       : Math.log(digammaKernel(count.n + 1) - digammaKernel(count.n - d + 1));
   if (!(logLoss > logGain + 1e-9)) return certain;
   const holes = logHoleCount(d, beta, count, gap);
-  const outside = wendel(count.n, d);
-  const log = logAddExpKernel(holes.log, outside.logComplement);
+  const outside = logOutside(wendel(count.n, d));
+  const log = logAddExpKernel(holes.log, outside.log);
   if (!(log < 0)) return certain;
   if (log === Number.NEGATIVE_INFINITY) return { log, error: Number.POSITIVE_INFINITY };
-  return { log, error: holes.error + 4 * EPSILON + EPSILON * Math.abs(log) };
+  // each by its share: the difference of counts in `holes` has few digits where h is tiny
+  const error =
+    holes.error * Math.exp(holes.log - log) + outside.error * Math.exp(outside.log - log);
+  return { log, error: error + 4 * EPSILON + EPSILON * Math.abs(log) };
 }
 
 /** Lower bound of P(d_H > gap), 0 < gap < 1: the largest of the three. */

@@ -34,6 +34,15 @@ describe('hausdorffDistance', () => {
     expect(approx.logError).toBeLessThanOrEqual(2 * logError);
   });
 
+  it('weighs the error of the hole count by its share', () => {
+    const { upper, approx } = hausdorffDistance({ n: 800, d: 8, law: uniformSphere() }).exceedance(
+      1 - 1e-16,
+    );
+    expect(upper.logError).toBeLessThan(1e-11);
+    expect(approx.logError).toBeLessThan(1e-11);
+    expect(upper.log).toBeCloseTo(originInHull({ n: 800, d: 8 }).logComplement, 9);
+  });
+
   it('orders lower bound, estimate and upper bound', () => {
     fc.assert(
       fc.property(
