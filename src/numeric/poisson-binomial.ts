@@ -3,8 +3,9 @@
  *
  * Random walks, bridges and reflection groups all lead to such sums. The variables come in runs of
  * consecutive j, a run may be repeated, and it may be far longer than anything that can be
- * enumerated (10^15 steps). Two engines, chosen by the number of variables:
+ * enumerated (10^15 steps). Fair coins alone have the binomial kernel; else there are three engines:
  *
+ * - whole numbers over the product of all step j while that is below 2^53, correctly rounded;
  * - up to {@link ENUMERATED} variables: the convolution recurrence, all of whose terms are positive,
  *   under an exponential tilt where the tail would underflow;
  * - beyond: the trapezoidal rule on a circle for the generating function (a ratio of gamma
@@ -13,6 +14,8 @@
  * The smaller of P(K <= k) and P(K > k) is the one computed, never a difference from 1.
  */
 import { EPSILON } from '../epsilon.ts';
+import { fairBinomialTail } from '../special/fair-binomial.ts';
+import { storeQuotient, TAIL_SLOTS } from '../special/tail-result.ts';
 import { contourTail, tiltedMean } from './poisson-binomial-contour.ts';
 
 /** `count` copies of independent Bernoulli variables with probabilities 1/(step j), from <= j <= to. */
@@ -50,19 +53,58 @@ export function poissonBinomialTail(runs: readonly BernoulliRun[], k: number): S
   const size = runSize(parts);
   if (k < 0) return { tail: 0, log: Number.NEGATIVE_INFINITY, side: 'lower', logError: 0 };
   if (k >= size) return { tail: 0, log: Number.NEGATIVE_INFINITY, side: 'upper', logError: 0 };
+  const out = new Float64Array(TAIL_SLOTS);
+  if (parts.every(({ step, to }) => step * to === 2)) {
+    return sumTail(fairBinomialTail(size, k, out), out);
+  }
   const [run] = parts;
   if (k === 0 && parts.length === 1 && run?.step === 1 && run.count === 1) {
-    return emptySum(run.from - 1, run.to);
+    // the product of 1 - 1/j telescopes
+    return sumTail(storeQuotient(run.from - 1, run.to, out), out);
+  }
+  const denominator = commonDenominator(parts);
+  if (denominator <= 2 ** 53) {
+    return sumTail(storeQuotient(countedTail(parts, size, k), denominator, out), out);
   }
   return size <= ENUMERATED ? enumeratedTail(parts, k) : contourTail(parts, size, k);
 }
 
-/** P(K = 0) of one run with step 1: the product of 1 - 1/j telescopes, so that ties come out exactly. */
-function emptySum(before: number, last: number): SumTail {
-  const lower = 2 * before <= last;
-  const tail = (lower ? before : last - before) / last;
-  const log = Math.log(tail);
-  return { tail, log, side: lower ? 'lower' : 'upper', logError: EPSILON * (1 + Math.abs(log)) };
+function sumTail(lower: boolean, out: Float64Array): SumTail {
+  const [tail, log, logError] = out as unknown as [number, number, number];
+  return { tail, log, side: lower ? 'lower' : 'upper', logError };
+}
+
+/** The product of all step j, or something above 2^53. */
+function commonDenominator(runs: readonly BernoulliRun[]): number {
+  let product = 1;
+  for (const { step, from, to, count } of runs) {
+    for (let copy = 0; copy < count; copy++) {
+      for (let j = from; j <= to && product <= 2 ** 53; j++) product *= step * j;
+      if (product > 2 ** 53) return product;
+    }
+  }
+  return product;
+}
+
+/** P(K <= k) times the product of all step j: whole numbers, from success 1 and failure step j - 1. */
+function countedTail(runs: readonly BernoulliRun[], size: number, k: number): number {
+  const counts = new Float64Array(size + 1);
+  counts[0] = 1;
+  let filled = 0;
+  for (const { step, from, to, count } of runs) {
+    for (let copy = 0; copy < count; copy++) {
+      for (let j = from; j <= to; j++) {
+        filled++;
+        for (let i = filled; i > 0; i--) {
+          counts[i] = (counts[i] as number) * (step * j - 1) + (counts[i - 1] as number);
+        }
+        counts[0] = (counts[0] as number) * (step * j - 1);
+      }
+    }
+  }
+  let sum = 0;
+  for (let i = 0; i <= k; i++) sum += counts[i] as number;
+  return sum;
 }
 
 /** The same by the recurrence; cost quadratic in the number of variables. */
