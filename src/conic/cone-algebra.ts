@@ -62,7 +62,8 @@ export function productCone(first: Cone, second: Cone): Cone {
     variance: first.variance + second.variance,
   };
   const standardErrors = productStandardErrors(first, second);
-  const data = { dimension, lineality, logs, logErrors, moments };
+  const symmetric = first.symmetric && second.symmetric;
+  const data = { dimension, lineality, logs, logErrors, moments, symmetric };
   return makeCone(standardErrors === undefined ? data : { ...data, standardErrors });
 }
 
@@ -94,7 +95,12 @@ export function logProductVolume(
     weighted += term * ((first.logErrors[i] as number) + (second.logErrors[k - i] as number));
   }
   const count = end - start + 1;
-  const rounding = count === 1 ? 0 : EPSILON * (3 + 0.5 * Math.sqrt(count) + Math.abs(top));
+  const rounding =
+    count > 1
+      ? EPSILON * (3 + 0.5 * Math.sqrt(count) + Math.abs(top))
+      : u[start] === 0 || v[k - start] === 0
+        ? 0
+        : EPSILON * Math.abs(top);
   error[0] = weighted / sum + rounding;
   return top + Math.log(sum);
 }
@@ -144,6 +150,7 @@ export function polarCone(cone: Cone): Cone {
     volumes: [...cone.intrinsicVolumes].reverse(),
     logErrors: [...cone.logErrors].reverse(),
     moments: { mean: cone.ambient - cone.statisticalDimension, variance: cone.variance },
+    symmetric: cone.symmetric,
   };
   const { standardErrors } = cone;
   return makeCone(
@@ -166,6 +173,7 @@ export function embed(cone: Cone, ambient: number): Cone {
     volumes: pad(cone.intrinsicVolumes, 0),
     logErrors: pad(cone.logErrors, 0),
     moments: { mean: cone.statisticalDimension, variance: cone.variance },
+    symmetric: cone.symmetric,
   };
   const { standardErrors } = cone;
   return makeCone(

@@ -31,8 +31,8 @@ import { embed } from './cone-algebra.ts';
  *
  * Cost: proportional to n.
  *
- * Accuracy: error of $\ln v_k$ at most $10^{-14} \max(1, |\ln v_k|)$ for the angle given; a rounding
- * of the angle itself changes it by up to $n |k/n - \sin^2\alpha| \cdot 10^{-16}$.
+ * Accuracy: error of $\ln v_k$ at most $10^{-14} \max(1, |\ln v_k|)$ for the angle given (pi/4 and
+ * pi/2 as doubles mean themselves); a rounding of the angle itself changes it by up to $n |k/n - \sin^2\alpha| \cdot 10^{-16}$.
  *
  * Source: Living on the edge: phase transitions in convex programs with random data, Information and
  * Inference 3 (2014), arXiv:1303.6672.
@@ -56,10 +56,12 @@ export function circularCone(n: number, angle: number): Cone {
   checkNumber(fn, 'angle', angle, 0, Math.PI / 2);
   if (angle === 0) return embed(orthantKernel(1), n);
   if (angle === Math.PI / 2) return halfspaceKernel(n);
+  // As pi/2 above, the double nearest to pi/4 means pi/4, of which no engine's sine squares to 1/2.
+  const symmetric = angle === Math.PI / 4;
   const sine = Math.sin(angle);
   const cosine = Math.cos(angle);
-  const p = sine * sine;
-  const q = cosine * cosine;
+  const p = symmetric ? 0.5 : sine * sine;
+  const q = symmetric ? 0.5 : cosine * cosine;
   const logs = new Array<number>(n + 1);
   const out = new Float64Array(TAIL_SLOTS);
   for (const k of [0, n]) {
@@ -70,7 +72,8 @@ export function circularCone(n: number, angle: number): Cone {
   for (let k = 1; k < n; k++) {
     logs[k] = logBinomialPmfKernel((n - 2) / 2, (k - 1) / 2, p, q) - Math.LN2;
   }
-  return makeCone({ dimension: n, lineality: 0, logs, logErrors: roundingErrors(logs, 16) });
+  const logErrors = roundingErrors(logs, 16);
+  return makeCone({ dimension: n, lineality: 0, logs, logErrors, symmetric });
 }
 
 /** Rows cost n^2/2 operations; this many take about two seconds. */

@@ -9,7 +9,7 @@
  */
 
 import { checkInteger, checkOptions, DomainError } from '../domain.ts';
-import { EPSILON } from '../epsilon.ts';
+import { EPSILON, exactLogError } from '../epsilon.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 
 /** A closed convex cone, known up to rotation: plain frozen data. */
@@ -36,6 +36,11 @@ export interface Cone {
   readonly method: 'exact' | 'simulated';
   /** Standard errors of the intrinsic volumes; only of a simulated cone. */
   readonly standardErrors?: readonly number[];
+  /**
+   * Present where the intrinsic volumes are known to be the same from the lineality upwards as from the
+   * dimension downwards, as they are for a cone that is its own polar but for a sign.
+   */
+  readonly symmetric?: true;
 }
 
 /** What {@link makeCone} builds a cone from; moments are summed where they are left out. */
@@ -48,6 +53,7 @@ export interface ConeData {
   readonly logErrors: number[];
   readonly moments?: { readonly mean: number; readonly variance: number };
   readonly standardErrors?: number[];
+  readonly symmetric?: boolean | undefined;
 }
 
 /** Largest ambient dimension: whole vectors of intrinsic volumes are kept. */
@@ -69,12 +75,10 @@ export function makeCone(data: ConeData): Cone {
     statisticalDimension: mean,
     variance,
     method: standardErrors === undefined ? 'exact' : 'simulated',
+    ...(standardErrors === undefined ? {} : { standardErrors: Object.freeze(standardErrors) }),
+    ...(data.symmetric ? { symmetric: true } : {}),
   };
-  return Object.freeze(
-    standardErrors === undefined
-      ? cone
-      : { ...cone, standardErrors: Object.freeze(standardErrors) },
-  );
+  return Object.freeze(cone);
 }
 
 /** Mean and variance of the law with the given probabilities. */
@@ -91,6 +95,11 @@ export function momentsOf(volumes: ArrayLike<number>): { mean: number; variance:
 /** Error bounds of logarithms that are each good to a few roundings of their own size. */
 export function roundingErrors(logs: readonly number[], factor = 4): number[] {
   return logs.map((log) => (Number.isFinite(log) ? factor * EPSILON * (1 + Math.abs(log)) : 0));
+}
+
+/** Error bounds of the logarithms of volumes that are exact doubles. */
+function exactErrors(logs: readonly number[]): number[] {
+  return logs.map((log) => (Number.isFinite(log) ? exactLogError(log) : 0));
 }
 
 /** Refuses anything but a cone. */
@@ -114,6 +123,7 @@ export function subspaceKernel(dimension: number, ambient: number): Cone {
     logs,
     logErrors: new Array<number>(ambient + 1).fill(0),
     moments: { mean: dimension, variance: 0 },
+    symmetric: true,
   });
 }
 
@@ -193,8 +203,9 @@ export function halfspaceKernel(n: number): Cone {
     lineality: n - 1,
     logs,
     volumes: logs.map((log) => (log === -Math.LN2 ? 0.5 : 0)),
-    logErrors: roundingErrors(logs, 1),
+    logErrors: exactErrors(logs),
     moments: { mean: n - 0.5, variance: 0.25 },
+    symmetric: true,
   });
 }
 
@@ -228,19 +239,23 @@ export function orthant(n: number): Cone {
 
 /** The orthant without checks. */
 export function orthantKernel(n: number): Cone {
+  const shape = {
+    dimension: n,
+    lineality: 0,
+    moments: { mean: n / 2, variance: n / 4 },
+    symmetric: true,
+  };
+  if (n <= EXACT_BINOMIALS) {
+    const volumes = exactBinomials(n);
+    const logs = volumes.map(Math.log);
+    return makeCone({ ...shape, logs, volumes, logErrors: exactErrors(logs) });
+  }
   const logs = new Array<number>(n + 1);
   for (let k = 0; 2 * k <= n; k++) {
     logs[k] = logBinomialPmfKernel(n, k, 0.5, 0.5);
     logs[n - k] = logs[k] as number;
   }
-  const data: ConeData = {
-    dimension: n,
-    lineality: 0,
-    logs,
-    logErrors: roundingErrors(logs),
-    moments: { mean: n / 2, variance: n / 4 },
-  };
-  return makeCone(n <= EXACT_BINOMIALS ? { ...data, volumes: exactBinomials(n) } : data);
+  return makeCone({ ...shape, logs, logErrors: roundingErrors(logs) });
 }
 
 /** Up to here the binomial coefficients are exact doubles. */

@@ -3,8 +3,13 @@
  *
  * Both are twice every other intrinsic volume beyond a split, and both hold for cones that are not
  * linear subspaces; two subspaces meet or miss by their dimensions alone. The smaller side is summed.
+ *
+ * Ties matter where a size is searched for, and are kept where they are provable: volumes that are
+ * exact multiples of a power of two, as those of small orthants, have exact sums, and symmetric ones
+ * make a half of the middle.
  */
 import { checkInteger, checkOptions, DomainError } from '../domain.ts';
+import { exactLogError } from '../epsilon.ts';
 import { paritySplit } from '../numeric/parity-split.ts';
 import { certainty, Probability } from '../probability.ts';
 import { type Cone, checkCone, isSubspace, subspaceKernel } from './cone.ts';
@@ -51,13 +56,16 @@ export function conesMeet(first: Cone, second: Cone): Probability {
   const highest = first.dimension + second.dimension;
   if (isSubspace(first) && isSubspace(second)) return certainty(highest > n);
   if (first.method === 'simulated' || second.method === 'simulated') {
-    return simulatedMeeting(first, second);
+    return plainMeeting(first, second);
   }
+  if (denominator(first) * denominator(second) <= 2 ** 53) return plainMeeting(first, second);
   return paritySplit(
     (k, error) => logProductVolume(first, second, k, error),
     n,
     first.lineality + second.lineality,
     highest,
+    undefined,
+    first.symmetric && second.symmetric,
   );
 }
 
@@ -105,9 +113,9 @@ export function coneMeetsSubspace(cone: Cone, options: { codimension: number }):
 /** The same without checks. */
 export function meetsSubspaceKernel(cone: Cone, codimension: number): Probability {
   if (isSubspace(cone)) return certainty(cone.dimension > codimension);
-  if (cone.method === 'simulated') {
+  if (cone.method === 'simulated' || denominator(cone) <= 2 ** 53) {
     const { ambient } = cone;
-    return simulatedMeeting(cone, subspaceKernel(ambient - codimension, ambient));
+    return plainMeeting(cone, subspaceKernel(ambient - codimension, ambient));
   }
   return paritySplit(
     (k, error) => {
@@ -117,14 +125,31 @@ export function meetsSubspaceKernel(cone: Cone, codimension: number): Probabilit
     codimension,
     cone.lineality,
     cone.dimension,
+    undefined,
+    cone.symmetric,
   );
 }
 
+/** The largest space in which exact volumes are looked for: beyond, none but 0 and 1/2 would be found. */
+const EXACT_AMBIENT = 53;
+
+/** The power of two of which all volumes are exact multiples; infinite if one is not known exactly. */
+function denominator(cone: Cone): number {
+  if (cone.ambient > EXACT_AMBIENT) return Number.POSITIVE_INFINITY;
+  let scale = 1;
+  for (let k = cone.lineality; k <= cone.dimension; k++) {
+    const log = cone.logIntrinsicVolumes[k] as number;
+    if (cone.logErrors[k] !== exactLogError(log)) return Number.POSITIVE_INFINITY;
+    while (!Number.isInteger((cone.intrinsicVolumes[k] as number) * scale)) scale *= 2;
+  }
+  return scale;
+}
+
 /**
- * The meeting probability from estimated volumes, some of which may be 0 by chance: plain sums, and
- * four standard errors of the smaller one as error bound.
+ * The meeting probability by plain sums: of exact volumes, which make exact sums, or of estimated ones,
+ * some of which may be 0 by chance, with four standard errors of the smaller sum as error bound.
  */
-function simulatedMeeting(first: Cone, second: Cone): Probability {
+function plainMeeting(first: Cone, second: Cone): Probability {
   const n = first.ambient;
   let meets = 0;
   let misses = 0;
@@ -140,7 +165,13 @@ function simulatedMeeting(first: Cone, second: Cone): Probability {
     const b = (second.standardErrors?.[i] ?? 0) * alternate(first, n - i, direction);
     variance += a * a + b * b;
   }
-  const logError = small > 0 ? (4 * Math.sqrt(variance)) / small : Number.POSITIVE_INFINITY;
+  const exact = first.method === 'exact' && second.method === 'exact';
+  if (exact && small === 0) return certainty(direction === -1);
+  const logError = exact
+    ? exactLogError(Math.log(small))
+    : small > 0
+      ? (4 * Math.sqrt(variance)) / small
+      : Number.POSITIVE_INFINITY;
   return direction === 1
     ? Probability.fromValue(small, logError)
     : Probability.fromComplement(small, logError);

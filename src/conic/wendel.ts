@@ -9,8 +9,9 @@
  */
 import { type Count, resolveCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import type { Probability } from '../probability.ts';
 import { fairTailOfPoints } from '../special/fair-binomial.ts';
+import { TAIL_SLOTS, tailProbability } from '../special/tail-result.ts';
 
 /** Arguments of {@link originInHull}. */
 export interface OriginInHullArgs {
@@ -65,14 +66,8 @@ export function originInHull(args: OriginInHullArgs): Probability {
 
 /** Wendel's probability of being surrounded, without checks. */
 export function wendel(n: number, d: number): Probability {
-  const out = new Float64Array(3);
-  const inside = wendelTail(n, d, out);
-  return probabilityFromTail(
-    out[0] as number,
-    out[1] as number,
-    inside ? 'lower' : 'upper',
-    out[2] as number,
-  );
+  const out = new Float64Array(TAIL_SLOTS);
+  return tailProbability(wendelTail(n, d, out), out);
 }
 
 /**

@@ -8,9 +8,9 @@
  *
  * which sum to 1. Only the smaller side is summed, from the split outwards and in logarithms, until
  * the terms have fallen by e^-41: a handful to a few hundred terms, whatever the length. The other side
- * is one minus it, which costs no digits.
+ * is one minus it, which costs no digits. A symmetric sequence split in its middle has equal sides.
  */
-import { EPSILON } from '../epsilon.ts';
+import { EPSILON, exactLogError } from '../epsilon.ts';
 import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 
 /** Writes a bound on the absolute error of the returned logarithm to `error[0]`. */
@@ -64,6 +64,7 @@ export function logOutwardSum(
  * @param last - last index, `Infinity` allowed
  * @param slope - its sign is that of v_(d+1) - v_(d-1), asked for only where their logarithms are too
  *   large to tell them apart
+ * @param symmetric - whether the sequence is known to be the same from both its ends
  */
 export function paritySplit(
   term: LogTerm,
@@ -71,9 +72,13 @@ export function paritySplit(
   first: number,
   last: number,
   slope?: (index: number) => number,
+  symmetric?: boolean,
 ): Probability {
   if (d >= last) return certainty(false);
   if (d <= first) return certainty(true);
+  if (symmetric && 2 * d === first + last) {
+    return probabilityFromTail(0.5, -Math.LN2, 'lower', exactLogError(Math.LN2));
+  }
   const error = new Float64Array(1);
   const left = term(d - 1, error);
   const leftError = error[0] as number;

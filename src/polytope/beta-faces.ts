@@ -10,6 +10,7 @@
  * alternate in sign, but fall so fast that nothing cancels.
  */
 
+import { wendel } from '../conic/wendel.ts';
 import type { ResolvedCount } from '../count.ts';
 import { EPSILON } from '../epsilon.ts';
 import { type BetaLaw, excessOf, type ResolvedBetaPrimeLaw } from '../law.ts';
@@ -17,6 +18,7 @@ import { BetaAngles } from '../numeric/beta-angles.ts';
 import { logOutwardSum, probabilityFromSum } from '../numeric/parity-split.ts';
 import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { logChoices } from './gaussian-faces.ts';
+import { membershipOnLine } from './line.ts';
 
 const CUT = 41;
 /** log 0.75: a sum above it is most of the probability, and the other side is to be summed. */
@@ -36,19 +38,11 @@ export function betaMembership(
   law: BetaLaw | ResolvedBetaPrimeLaw,
 ): Probability {
   const { n, log } = count;
-  const sphere = law.family === 'beta' && law.b === -1;
-  if (sphere) {
-    // Points of a sphere are all vertices; the sphere of R^1 has only two points.
-    return d > 1
-      ? certainty(false)
-      : probabilityFromTail(Math.exp(-n * Math.LN2), -n * Math.LN2, 'upper', EPSILON * n);
-  }
+  // Points of a sphere are all vertices; the sphere of R^1 has only two points.
+  if (law.family === 'beta' && law.b === -1) return d > 1 ? certainty(false) : wendel(n + 1, 1);
+  if (d === 1) return membershipOnLine(count, 'plain');
   if (n <= d) return certainty(false);
   const next = { n: n + 1, log: n < 2 ** 53 ? Math.log(n + 1) : log };
-  if (d === 1) {
-    const logOutside = Math.LN2 - next.log;
-    return probabilityFromTail(Math.exp(logOutside), logOutside, 'upper', EPSILON * (1 + next.log));
-  }
   const angles = new BetaAngles(law.family, alphaOf(law, d));
   const error = new Float64Array(1);
   const rounding = EPSILON * (2 + next.log);

@@ -21,6 +21,7 @@ import { certainty, type Probability } from '../probability.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 import type { Hull } from './hull-options.ts';
+import { membershipOnLine } from './line.ts';
 
 const LOG_TWO_PI = 1.8378770664093455;
 
@@ -42,6 +43,7 @@ export function gaussianMembership(
     const certain = hull === 'withCentre' || count.n > 0;
     return certainty(certain);
   }
+  if (d === 1 && scale === 1 && hull !== 'withCentre') return membershipOnLine(count, hull);
   const sequence = SEQUENCE[hull];
   const parameters = [sequence, count.n, count.log, 1 / scale / scale] as const;
   const slope = orthantSequenceSlope(...parameters);

@@ -123,7 +123,8 @@ export function queriesInHull(args: QueriesInHullArgs): Probability {
     seen.set(distance, probability);
     all.push(probability);
   }
-  return mean(all);
+  // of equal queries the mean is each of them, with ties kept
+  return seen.size === 1 ? (all[0] as Probability) : mean(all);
 }
 
 function membership(count: ResolvedCount, d: number, r: number): Probability {

@@ -12,8 +12,8 @@
  * the ambient dimension enters only through b. The complement is the expectation of one minus the
  * weight, again a positive integrand, so both tails keep their digits.
  */
+import { wendel } from '../conic/wendel.ts';
 import type { ResolvedCount } from '../count.ts';
-import { exactLogError } from '../epsilon.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import {
   centralLogTail,
@@ -23,6 +23,7 @@ import {
 import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { fairBinomialTail } from '../special/fair-binomial.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
+import { quotientProbability } from '../special/tail-result.ts';
 import type { Hull } from './hull-options.ts';
 
 /** The smaller tail is meant; a first guess that turns out to be above this is recomputed. */
@@ -39,17 +40,33 @@ export function volumeRatioKernel(
   if (k === 0) return certainty(n > 0);
   if (hull === 'plain' ? n <= k : n < k) return certainty(false);
   if (b === -1) return twoPoint(count, hull);
+  const closed = b === 0 ? uniformMarginal(k, n, hull) : undefined;
+  if (closed !== undefined) return closed;
   if (hull === 'symmetric') return symmetricRatio(k, b, count);
   return hull === 'plain' ? plainRatio(k, b, count) : centredRatio(k, b, count);
 }
 
-/** d = 1 and points at -1 and 1: the hull is a segment or a point. */
-function twoPoint(count: ResolvedCount, hull: Hull): Probability {
+/** d = 1 and points at -1 and 1: the hull is a segment or a point, which is one coin for each point. */
+function twoPoint({ n }: ResolvedCount, hull: Hull): Probability {
   if (hull === 'symmetric') return certainty(true);
-  const exponent = hull === 'plain' ? 1 - count.n : -count.n;
-  const log = exponent * Math.LN2;
-  // a power of two, so the value is exact
-  return probabilityFromTail(2 ** exponent, log, 'upper', exactLogError(log));
+  return wendel(hull === 'plain' ? n : n + 1, 1);
+}
+
+/**
+ * A uniform marginal, b = 0, has L(v) = 1 - v, and the moments of 1 - V_(k+1) ~ Beta(n - k, k + 1) and of
+ * V ~ Beta(2, n - 1) are quotients of whole numbers; undefined where these are beyond 2^53.
+ */
+function uniformMarginal(k: number, n: number, hull: Hull): Probability | undefined {
+  if (hull === 'symmetric' && k === 1 && n < 2 ** 53) return quotientProbability(n, n + 1);
+  if (hull !== 'plain') return undefined;
+  let numerator = 1;
+  let denominator = 1;
+  for (let i = 0; i < k; i++) {
+    numerator *= n - k + i;
+    denominator *= n + 1 + i;
+    if (!(denominator <= 2 ** 53)) return undefined;
+  }
+  return quotientProbability(numerator, denominator);
 }
 
 /** The probability from whichever of the two expectations is the smaller. */

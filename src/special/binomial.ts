@@ -11,11 +11,11 @@
  */
 
 import { checkInteger, DomainError } from '../domain.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import type { Probability } from '../probability.ts';
 import { betaAmplitude, betaDelta, betaDeviance } from './beta-prefix.ts';
 import { fairBinomialTail } from './fair-binomial.ts';
 import { checkPair, incompleteBetaKernel } from './incomplete-beta.ts';
-import { storeZero, TAIL_SLOTS } from './tail-result.ts';
+import { storeZero, TAIL_SLOTS, tailProbability } from './tail-result.ts';
 
 const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
 
@@ -98,13 +98,7 @@ export function checkBinomial(fn: string, n: number, p: number, q: number): void
 
 /** {@link binomialCdf} without checks. */
 function binomialProbability(n: number, k: number, p: number, q: number): Probability {
-  const lower = binomialTail(n, k, p, q, work);
-  return probabilityFromTail(
-    work[0] as number,
-    work[1] as number,
-    lower ? 'lower' : 'upper',
-    work[2] as number,
-  );
+  return tailProbability(binomialTail(n, k, p, q, work), work);
 }
 
 /**

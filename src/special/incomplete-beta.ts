@@ -17,12 +17,12 @@
  */
 
 import { checkNumber, checkPositive, DomainError } from '../domain.ts';
-import { type Probability, probabilityFromTail } from '../probability.ts';
+import type { Probability } from '../probability.ts';
 import { expansionIsFaster, gaussianTailSum } from './beta-expansion.ts';
 import { betaFraction } from './beta-fraction.ts';
 import { betaAmplitude, betaDelta, betaDeviance } from './beta-prefix.ts';
 import { betaPower, betaSeries } from './beta-series.ts';
-import { storeExact, storeTail, storeZero, TAIL_SLOTS } from './tail-result.ts';
+import { storeExact, storeTail, storeZero, TAIL_SLOTS, tailProbability } from './tail-result.ts';
 
 const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
 
@@ -82,13 +82,7 @@ export function checkPair(fn: string, first: string, x: number, second: string, 
 
 /** {@link incompleteBeta} without checks. */
 export function incompleteBetaProbability(a: number, b: number, x: number, y: number): Probability {
-  const lower = incompleteBetaKernel(a, b, x, y, work);
-  return probabilityFromTail(
-    work[0] as number,
-    work[1] as number,
-    lower ? 'lower' : 'upper',
-    work[2] as number,
-  );
+  return tailProbability(incompleteBetaKernel(a, b, x, y, work), work);
 }
 
 /**

@@ -6,6 +6,7 @@
  * bound of epsilon.ts, and a search for it ends in a tie.
  */
 import { EPSILON, exactLogError } from '../epsilon.ts';
+import { type Probability, probabilityFromTail } from '../probability.ts';
 import { quotientError } from './double-double.ts';
 
 /** Length of the array. */
@@ -80,6 +81,18 @@ export function storeQuotient(a: number, b: number, out: Float64Array): boolean 
     out[2] = EPSILON * (1 - (out[1] as number));
   }
   return lower;
+}
+
+/** The probability a/b for whole numbers 0 < a < b <= 2^53. */
+export function quotientProbability(a: number, b: number): Probability {
+  const out = new Float64Array(TAIL_SLOTS);
+  return tailProbability(storeQuotient(a, b, out), out);
+}
+
+/** The probability whose smaller tail is stored: itself if `lower`, else its complement. */
+export function tailProbability(lower: boolean, out: Float64Array): Probability {
+  const [tail, log, error] = out as unknown as [number, number, number];
+  return probabilityFromTail(tail, log, lower ? 'lower' : 'upper', error);
 }
 
 /** Stores an impossible event. */
