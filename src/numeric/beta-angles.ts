@@ -37,7 +37,7 @@ const HALF_LOG_PI = 0.57236494292470009;
 /** Which of the two families. */
 export type BetaFamily = 'beta' | 'betaPrime';
 
-const CONTOUR: Float64Array = /* @__PURE__ */ new Float64Array(4);
+const CONTOUR: Float64Array = /* @__PURE__ */ new Float64Array(3);
 
 /** The terms at fixed family and alpha. */
 export class BetaAngles {
@@ -69,25 +69,23 @@ export class BetaAngles {
     const q = beta ? alpha * m : alpha * m - 1;
     const Q = beta ? q + 2 : q;
     this.sign = 1;
-    let h = 0;
-    let logInternal = 0;
+    if (M === 1) internal.centreAtHeight(0);
+    const e = beta ? M - k * alpha - 2 : 1 - alpha * k;
+    let logInternal = M === 1 ? -internal.logExcess : 0;
     let internalBound = 0;
     if (M > 1) {
-      betaContourKernel(internal, Q, M, beta ? M - k * alpha - 2 : 1 - alpha * k, CONTOUR);
-      h = CONTOUR[0] as number;
-      this.sign = CONTOUR[3] as number;
+      betaContourKernel(internal, Q, M, e, CONTOUR);
+      this.sign = CONTOUR[2] as number;
       if (this.sign === 0) {
         error[0] = 0;
         return Number.NEGATIVE_INFINITY;
       }
-      logInternal = (CONTOUR[1] as number) + logConstant(Q / 2);
-      internalBound = CONTOUR[2] as number;
+      logInternal = (CONTOUR[0] as number) + logConstant(Q / 2);
+      internalBound = CONTOUR[1] as number;
     }
-    internal.centreAtHeight(h);
     const choices = logBinomialKernel(m, k);
-    // (q + 1 - (p + 1) m) / 2 and (p + 1) M - Q, which cancel by hand
+    // (q + 1 - (p + 1) m) / 2, which cancels by hand, like e
     const width = beta ? 0.5 * (1 - m) : 0;
-    const cosine = 0.5 * Math.log1p(-h * h) * (beta ? M - k * alpha - 2 : 1 - alpha * k);
     const weight = (): number => (m - 1) * external.logExcess + width * external.logWidth;
     const order = { m, n: count.n, log: count.log };
     const expectation = orderStatisticExpectation(external, 'line', order, weight);
@@ -96,16 +94,13 @@ export class BetaAngles {
       k * external.logDensity +
       (k - 1) * Math.log(p + 1) -
       Math.log(m);
-    const excess = M * internal.logExcess;
     const sizes =
       choices +
       Math.abs(logInternal) +
       Math.abs(expectation.log) +
-      k * (Math.abs(external.logDensity) + Math.log(p + 1)) +
-      Math.abs(excess) +
-      Math.abs(cosine);
+      k * (Math.abs(external.logDensity) + Math.log(p + 1));
     error[0] = internalBound + expectation.error + EPSILON * (12 + 2 * M + 2 * k + 2 * sizes);
-    return choices + constants + expectation.log - excess + cosine + logInternal;
+    return choices + constants + expectation.log + logInternal;
   }
 }
 

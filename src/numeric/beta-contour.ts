@@ -22,7 +22,10 @@ import type { BetaTail } from './beta-tail.ts';
 import { trapezoidError } from './orthant-peak.ts';
 
 const CUT = -41;
+const LEFT_CUT = 48;
 const MAX_NODES = 20_000;
+/** Halvings of the step, which the real path needs where its peak is narrower than thought. */
+const MAX_REFINEMENTS = 5;
 
 /** From this p on sinh^p is too steep for a panel as long as a step. */
 const MARCH_LIMIT = 40;
@@ -43,8 +46,8 @@ const GAUSS_WEIGHTS: readonly number[] = [
 ];
 
 /**
- * Writes h = sin a to `out[0]`, log I to `out[1]`, a bound on its absolute error to `out[2]` and the
- * sign of I (0 where it vanishes) to `out[3]`, where the integral is cos(a)^-Q F(-a)^M I.
+ * Writes the logarithm of the modulus of ((p + 1) / c)^M times the integral to `out[0]`, a bound on its
+ * absolute error to `out[1]` and the sign of the integral (0 where it vanishes) to `out[2]`.
  *
  * @param tail - the symmetric beta law of exponent (p - 1)/2: sin phi has its distribution function
  * @param M - an integer >= 1
@@ -58,7 +61,7 @@ export function betaContourKernel(
   out: Float64Array,
 ): void {
   const p = 2 * tail.b + 1;
-  if (e > NO_SADDLE) collapsed(tail, p, Q, M, e, out);
+  if (e > NO_SADDLE) collapsed(p, M, e, out);
   else throughSaddle(tail, p, Q, M, e, out);
 }
 
@@ -162,37 +165,63 @@ function throughSaddle(
   }
   const total = fourth + second + odd;
   const even = fourth + second;
-  out[0] = h;
-  out[1] = Math.log(2 * step * Math.abs(total));
-  out[2] =
+  const excess = M * tail.logExcess;
+  const width = e * Math.log(cosine);
+  out[0] = Math.log(2 * step * Math.abs(total)) + width - excess;
+  out[1] =
     trapezoidError(
       Math.abs(even - odd) / Math.abs(total),
       (2 * Math.abs(fourth - second)) / Math.abs(total),
     ) +
-    (size / Math.abs(total)) * EPSILON * (8 + 6 * M + 2 * Math.abs(power));
-  out[3] = Math.sign(total);
+    (size / Math.abs(total)) * EPSILON * (8 + 6 * M + 2 * Math.abs(power)) +
+    EPSILON * (Math.abs(width) + 2 * Math.abs(excess));
+  out[2] = Math.sign(total);
 }
 
-/** The integral at the collapsed line, normalised by the factor at a = pi/4. */
-function collapsed(
-  tail: BetaTail,
+/**
+ * The integral at the collapsed line. With S = (p + 1) coth(x) int_0^x (sinh y / sinh x)^p dy the
+ * integrand is sinh(x)^e (S / cosh x)^M.
+ */
+function collapsed(p: number, M: number, e: number, out: Float64Array): void {
+  const sign = cosHalfPi(e);
+  out[0] = Number.NEGATIVE_INFINITY;
+  out[1] = 0;
+  out[2] = Math.sign(sign);
+  if (sign === 0) return;
+  // The peak, but for S; in the variable t of x = peak exp(t - e^-t) it is 2 to 3 steps wide.
+  const order = Math.max(e, 0) + 1;
+  const peak = Math.atanh(Math.sqrt(order / (order + M - e)));
+  let step = Math.min(0.06, 0.3 / (peak * Math.sqrt(M - e)));
+  const rounding = EPSILON * (12 + 4 * M);
+  let error = 0;
+  for (let i = 0; i < MAX_REFINEMENTS; i++, step *= 0.5) {
+    error = collapsedSum(p, M, e, peak, step, out);
+    if (error < rounding) break;
+  }
+  out[0] = (out[0] as number) + Math.log(Math.abs(sign));
+  out[1] =
+    error +
+    rounding +
+    2 * EPSILON * Math.abs(out[0]) +
+    (Math.abs(sign) < 0.1 ? (EPSILON * 4 * (M + 2)) / Math.abs(sign) : 0);
+}
+
+/** Writes the logarithm of the sum over nodes `step` apart to `out[0]`; returns a bound on its error. */
+function collapsedSum(
   p: number,
-  Q: number,
   M: number,
   e: number,
+  peak: number,
+  step: number,
   out: Float64Array,
-): void {
-  const sign = cosHalfPi(e);
-  const h = Math.SQRT1_2;
-  out[0] = h;
-  out[1] = Number.NEGATIVE_INFINITY;
-  out[2] = 0;
-  out[3] = Math.sign(sign);
-  if (sign === 0) return;
-  tail.centreAtHeight(h);
-  const step = 0.06;
-  let start = -4.4;
-  if (e >= 0) start = Math.max(-3.9, Math.min(-3.7 - Math.log(1 + e), -1));
+): number {
+  // S only falls to the left
+  const floor = (e + 1) * logSinhOf(peak) - M * logCoshOf(peak) - LEFT_CUT;
+  let start = 0.57;
+  for (let left = peak; (e + 1) * logSinhOf(left) - M * logCoshOf(left) > floor; ) {
+    start -= 8 * step;
+    left = peak * Math.exp(start - Math.exp(-start));
+  }
   const sums = [0, 0, 0, 0];
   let top = Number.NEGATIVE_INFINITY;
   let x = 0;
@@ -201,10 +230,10 @@ function collapsed(
   for (let j = 0; ; j++) {
     const t = start + j * step;
     const shrink = Math.exp(-t);
-    const next = Math.exp(t - shrink);
+    const next = peak * Math.exp(t - shrink);
     const nextLog = logSinhOf(next);
-    if (p >= MARCH_LIMIT) ratio = sinhRatio(p, Math.tanh(next));
-    else if (j === 0) ratio = next / (p + 1);
+    const tanh = Math.tanh(next);
+    if (p >= MARCH_LIMIT || j === 0) ratio = sinhRatio(p, tanh * tanh);
     else {
       const half = 0.5 * (next - x);
       const middle = x + half;
@@ -216,51 +245,47 @@ function collapsed(
           Math.exp(p * (logSinhOf(middle - offset) - nextLog));
         sum += (GAUSS_WEIGHTS[i] as number) * pair;
       }
-      ratio = ratio * Math.exp(p * (logSinh - nextLog)) + sum * half;
+      const before = ratio * Math.tanh(x) * Math.exp(p * (logSinh - nextLog));
+      ratio = (before + (p + 1) * sum * half) / tanh;
     }
     x = next;
     logSinh = nextLog;
-    const log =
-      (e - M) * logSinh + M * (tail.logDensity + Math.log(ratio)) + Math.log(x * (1 + shrink));
+    const log = e * logSinh + M * (Math.log(ratio) - logCoshOf(x)) + Math.log(x * (1 + shrink));
     if (log > top) {
       const scale = Math.exp(top - log);
       for (let i = 0; i < 4; i++) sums[i] = (sums[i] as number) * scale;
       top = log;
     }
     sums[j % 4] = (sums[j % 4] as number) + Math.exp(log - top);
-    if (log < top + CUT) break;
+    if (log < top + CUT && x > peak) break;
     if (j > MAX_NODES) {
-      throw new Error(`beta contour: no decay after ${j} nodes at p = ${p}, Q = ${Q}, M = ${M}`);
+      throw new Error(`beta contour: no decay after ${j} nodes at p = ${p}, M = ${M}, e = ${e}`);
     }
   }
   const [a, b, c, d] = sums as [number, number, number, number];
   const total = a + b + c + d;
-  const logCosine = -0.5 * Math.LN2;
-  const normal = M * (tail.logDensity - Math.log(p + 1) - tail.logExcess) + e * logCosine;
-  out[1] = top + Math.log(2 * step * total * Math.abs(sign)) - normal;
-  out[2] =
-    trapezoidError(Math.abs(a + c - b - d) / total, (2 * Math.abs(a - c)) / total) +
-    EPSILON * (12 + 6 * M + 3 * Math.abs(e - M) + 3 * Math.abs(normal)) +
-    (Math.abs(sign) < 0.1 ? (EPSILON * 4 * (M + 2)) / Math.abs(sign) : 0);
+  out[0] = top + Math.log(2 * step * total);
+  return trapezoidError(Math.abs(a + c - b - d) / total, (2 * Math.abs(a - c)) / total);
 }
 
-/**
- * int_0^x sinh^p / sinh(x)^p by its series in tanh(x)^2, tanh(x) / (p + 1) 2F1(1/2, 1; (p + 3)/2; .):
- * positive terms, the faster the larger p.
- */
-function sinhRatio(p: number, tanh: number): number {
-  const z = tanh * tanh;
+/** S by its series 2F1(1/2, 1; (p + 3)/2; tanh(x)^2): positive terms, the faster the larger p. */
+function sinhRatio(p: number, z: number): number {
   let term = 1;
   let sum = 1;
   for (let k = 0; k < MAX_NODES && term > 1e-18 * sum; k++) {
     term *= ((2 * k + 1) / (2 * k + p + 3)) * z;
     sum += term;
   }
-  return (tanh / (p + 1)) * sum;
+  return sum;
 }
 
 function logSinhOf(x: number): number {
   return x > 20 ? x - Math.LN2 : Math.log(Math.sinh(x));
+}
+
+function logCoshOf(x: number): number {
+  const half = Math.sinh(0.5 * x);
+  return x < 1 ? Math.log1p(2 * half * half) : x + Math.log1p(Math.exp(-2 * x)) - Math.LN2;
 }
 
 /** cos(pi e / 2), exactly 0 at odd integers. */

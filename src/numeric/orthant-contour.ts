@@ -152,7 +152,8 @@ function aliasDistance(
   // K has its pole, or a steep rise, at b = 0.
   if (side < 0) t = Math.min(t, 0.9 * a + (pole ? 0 : 1));
   let near = 0;
-  let far = pole && side < 0 ? a : Number.POSITIVE_INFINITY;
+  // Where a is large the exponent is far below -tolerance at b = 0, beyond which K rises like b^2 / 2.
+  let far = side < 0 && (pole || a > 100) ? a : Number.POSITIVE_INFINITY;
   let slope = 0;
   let exponent = 0;
   let curvature = curvatureAtSaddle;
