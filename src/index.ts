@@ -5,7 +5,7 @@
  * This entry holds the questions, the laws of the points, sizing and the result types. Special
  * functions, intrinsic volumes, arbitrary precision and charts have subpaths of their own.
  *
- * @packageDocumentation
+ * @module hullgauge
  */
 export { type ApproxSeparabilityArgs, approxSeparability } from './conic/approx-separability.ts';
 export { type ApproxTotalOrderOptions, approxTotalOrder } from './conic/approx-total-order.ts';

@@ -28,7 +28,8 @@ export const laws = {
 
 /** The forms of a target, as the reader chooses them and as `smallest` takes them. */
 export const forms = {
-  number: { label: 'P at least', make: (p) => p, code: (p) => p },
+  // As an object, so that a message about a text that is no number names what would be one.
+  number: { label: 'P at least', make: (p) => ({ atLeast: p }), code: (p) => p },
   logAtLeast: {
     label: 'ln P at least',
     make: (log) => ({ atLeast: Probability.fromLog(log) }),
@@ -91,10 +92,15 @@ export function answerTo(fields) {
   if (question.law) {
     const { make } = laws[fields.law];
     args.law = attempt(() => make(number(fields.shape)));
-    if (args.law === undefined) return { question, errors };
   }
   if (question.extra) args[question.extra.name] = number(fields.extra);
   const n = count(fields.n);
+  if (errors.shape) {
+    // Any law will do to find out whether the other fields are in order.
+    attempt(() => question.ask({ ...args, n, law: uniformBall() }));
+    attempt(() => question.ask({ ...args, n: 1, law: uniformBall() }));
+    return { question, errors };
+  }
   const probability = attempt(() => question.ask({ ...args, n }));
   const answer = attempt(() =>
     smallest(question.ask, 'n', args, forms[fields.form].make(number(fields.target))),

@@ -32,6 +32,7 @@ function arrange() {
 
 /** Puts the values that a question begins with. */
 function begin(question) {
+  form.question.value = question.ask.name;
   for (const [name, value] of Object.entries(question.start)) form[name].value = value;
   form.form.value = question.form ?? 'number';
 }
@@ -46,7 +47,12 @@ function writeErrors(errors) {
   }
 }
 
-const digits = (x) => (Number.isFinite(x) ? String(Number(x.toPrecision(12))) : `${x}`);
+/** Twelve digits, with an exponent where zeros would fill the line. */
+function digits(x) {
+  if (!Number.isFinite(x)) return `${x}`;
+  const short = Number(x.toPrecision(12));
+  return x !== 0 && Math.abs(x) < 1e-4 ? short.toExponential() : String(short);
+}
 /** A tail, from its logarithm where doubles end. */
 const tail = (value, log) =>
   value > 1e-300 || log === -Infinity ? digits(value) : `${LogNumber.fromLog(log)}`;
@@ -71,7 +77,7 @@ function writeProbability(p) {
     ['1 - P', tail(p.complement, p.logComplement)],
     ['ln P', digits(p.log)],
     ['ln (1 - P)', digits(p.logComplement)],
-    ['ln error', `at most ${p.logError.toPrecision(2)}`],
+    ['error of ln', `at most ${p.logError.toPrecision(2)}`],
   ];
   rowsOf(byId('probability'), rows ?? []);
 }
@@ -94,6 +100,8 @@ function writeAnswer(answer) {
 const mark = (n, name, kind) => ({ n, text: `${name} = ${points(n, Math.log(n))}`, kind });
 
 let run = 0;
+/** Draws the latest curve again, in the room that there is. */
+let draw = () => {};
 
 /** Answers the fields; a later call stops the drawing of an earlier one. */
 async function update() {
@@ -118,7 +126,8 @@ async function update() {
   async function drawCurve({ question, args }, shows, marks) {
     const curve = byId('curve');
     curve.setAttribute('aria-busy', 'true');
-    if (args === undefined || probability === undefined || errors.d) curve.replaceChildren();
+    draw = () => curve.replaceChildren();
+    if (args === undefined || probability === undefined || errors.d) draw();
     else {
       const grid = gridFor(
         { question, args },
@@ -135,12 +144,16 @@ async function update() {
         if (mine !== run) return;
         pause = performance.now() + 30;
       }
-      if (rows.length > 1) curve.innerHTML = drawing(rows, marks, shows);
+      draw = () => {
+        if (rows.length > 1) curve.innerHTML = drawing(rows, marks, shows, curve.clientWidth);
+      };
+      draw();
     }
     curve.removeAttribute('aria-busy');
   }
 }
 
+addEventListener('resize', () => draw());
 form.addEventListener('submit', (event) => {
   event.preventDefault();
   update();
@@ -150,7 +163,21 @@ form.addEventListener('change', (event) => {
   update();
 });
 
-const linked = new URLSearchParams(location.hash.slice(1));
-begin(questionNamed(linked.get('question')) ?? questions[0]);
-for (const [name, value] of linked) if (form[name] !== undefined) form[name].value = value;
-update();
+/** Takes the fields from the address. */
+function follow() {
+  const linked = new URLSearchParams(location.hash.slice(1));
+  begin(questionNamed(linked.get('question')) ?? questions[0]);
+  linked.delete('question');
+  for (const [name, value] of linked) {
+    const field = form.elements.namedItem(name);
+    if (field === null) continue;
+    const before = field.value;
+    field.value = value;
+    // A choice takes none but its own values.
+    if (field.value !== value) field.value = before;
+  }
+  update();
+}
+// Writing the address fires no event; a link into the open page does.
+addEventListener('hashchange', follow);
+follow();

@@ -2,7 +2,9 @@
 import { smallest } from 'hullgauge';
 import { logSpaced } from 'hullgauge/plan';
 
-const size = { width: 640, height: 330, left: 62, right: 20, top: 24, bottom: 48 };
+const size = { height: 330, left: 62, right: 20, top: 24, bottom: 48 };
+/** Widths of the drawing; words keep their size, so a narrow screen gets a narrow drawing. */
+const widths = { least: 280, most: 900 };
 /** Probabilities between which the curve is drawn, by what it shows. */
 const depth = { value: 0.001, tails: 1e-12 };
 /** A larger range of n is drawn on a logarithmic axis. */
@@ -35,10 +37,11 @@ export function gridFor({ question, args }, marks, shows) {
   return [...grid, to];
 }
 
-/** The drawing. `marks` are `{ n, text }`: the chosen n and the smallest one. */
-export function drawing(rows, marks, shows) {
+/** The drawing for a place so many pixels wide. `marks` are `{ n, text }`: the chosen n and the smallest one. */
+export function drawing(rows, marks, shows, room) {
+  const width = Math.max(widths.least, Math.min(widths.most, Math.floor(room)));
   const ns = rows.map(({ n }) => n);
-  const x = horizontal(Math.min(...ns), Math.max(...ns));
+  const x = horizontal(Math.min(...ns), Math.max(...ns), width);
   const read = { value: (p) => p.value, tails: (p) => p.log / Math.LN10 };
   const other = (p) => p.logComplement / Math.LN10;
   const curves = [
@@ -54,19 +57,27 @@ export function drawing(rows, marks, shows) {
       .join('');
     return `<path class="curve ${kind}" d="${path}"/>${text(size.left + 8 + 90 * i, 14, name, `start ${kind}`)}`;
   });
-  const marked = marks
-    .filter(({ n }) => n >= ns[0] && n <= ns[ns.length - 1])
-    .map(({ n, text: words, kind }, i) => {
-      const at = place(x.at(n));
-      const end = x.at(n) > (size.width + size.left) / 2;
-      return `<path class="mark ${kind}" d="M${at} ${size.top}V${size.height - size.bottom}"/>${text(at + (end ? -5 : 5), size.height / 2 + 16 * i, words, `${end ? 'end' : 'start'} marked`)}`;
-    });
+  const shown = marks.filter(({ n }) => n >= ns[0] && n <= ns[ns.length - 1]);
+  const least = Math.min(...shown.map(({ n }) => n));
+  const rules = shown.map(
+    ({ n, kind }) =>
+      `<path class="mark ${kind}" d="M${place(x.at(n))} ${size.top}V${size.height - size.bottom}"/>`,
+  );
+  // Words of the lower mark stand left of it, those of the other right of it, where there is room.
+  const names = shown.map(({ n, text: words }, i) => {
+    const at = place(x.at(n));
+    const long = 7.5 * words.length + 5;
+    const fits = { left: at - size.left > long, right: width - at > long };
+    const left = n === least && shown.length > 1 ? fits.left || !fits.right : !fits.right;
+    const y = size.height / 2 + 18 * i;
+    return text(at + (left ? -5 : 5), y, words, `${left ? 'end' : 'start'} marked`);
+  });
   const bottom = size.height - size.bottom;
-  return `<svg viewBox="0 0 ${size.width} ${size.height}" role="img" aria-label="${describe(rows, marks)}">
-${y.ticks.map((t) => `<path class="grid" d="M${size.left} ${place(y.at(t))}H${size.width - size.right}"/>${text(size.left - 8, place(y.at(t)) + 4, short(t), 'end')}`).join('')}
+  return `<svg viewBox="0 0 ${width} ${size.height}" width="${width}" height="${size.height}" role="img" aria-label="${describe(rows, marks)}">
+${y.ticks.map((t) => `<path class="grid" d="M${size.left} ${place(y.at(t))}H${width - size.right}"/>${text(size.left - 8, place(y.at(t)) + 4, short(t), 'end')}`).join('')}
 ${x.ticks.map((t) => `<path class="grid" d="M${place(x.at(t))} ${size.top}V${bottom}"/>${text(place(x.at(t)), bottom + 18, short(t), 'middle')}`).join('')}
-${text((size.left + size.width - size.right) / 2, size.height - 8, x.log ? 'number of points n, logarithmic' : 'number of points n', 'middle')}
-${lines.join('')}${marked.join('')}</svg>`;
+${text((size.left + width - size.right) / 2, size.height - 8, x.log ? 'number of points n, logarithmic' : 'number of points n', 'middle')}
+${[...lines, ...rules, ...names].join('')}</svg>`;
 }
 
 function describe(rows, marks) {
@@ -75,15 +86,17 @@ function describe(rows, marks) {
   return `Probability over n: ${first.p} at n = ${first.n}, ${last.p} at n = ${last.n}; marked: ${words}`;
 }
 
-function horizontal(from, to) {
+function horizontal(from, to, width) {
   const log = to / from >= decades;
   const scale = log ? Math.log : (n) => n;
   const span = scale(to) - scale(from);
   const at = (n) =>
-    size.left + ((scale(n) - scale(from)) / span) * (size.width - size.left - size.right);
-  if (!log) return { at, log, ticks: niceTicks(from, to) };
+    size.left + ((scale(n) - scale(from)) / span) * (width - size.left - size.right);
+  // A tick takes some 60 pixels.
+  const most = Math.max(2, Math.floor((width - size.left - size.right) / 60));
+  if (!log) return { at, log, ticks: niceTicks(from, to, Math.min(5, most)) };
   const [low, high] = [Math.ceil(Math.log10(from) - 1e-9), Math.floor(Math.log10(to) + 1e-9)];
-  const step = Math.ceil((high - low + 1) / 8);
+  const step = Math.ceil((high - low + 1) / Math.min(8, most));
   const ticks = [];
   for (let k = low; k <= high; k += step) ticks.push(Number(`1e${k}`));
   return { at, log, ticks };
@@ -92,12 +105,12 @@ function horizontal(from, to) {
 function vertical(from, to) {
   const at = (v) =>
     size.height - size.bottom - ((v - from) / (to - from)) * (size.height - size.top - size.bottom);
-  return { at, ticks: niceTicks(from, to) };
+  return { at, ticks: niceTicks(from, to, 5) };
 }
 
-/** About five round numbers between two ends. */
-function niceTicks(from, to) {
-  const rough = (to - from) / 5;
+/** About so many round numbers between two ends. */
+function niceTicks(from, to, count) {
+  const rough = (to - from) / count;
   const power = Number(`1e${Math.floor(Math.log10(rough))}`);
   const step = power * [1, 2, 5, 10].find((k) => k * power >= rough);
   const ticks = [];

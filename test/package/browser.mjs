@@ -202,11 +202,21 @@ try {
     }
   });
 
+  await check(browser, 'no page is wider than a phone', async (tab) => {
+    await tab.setViewportSize({ width: 390, height: 844 });
+    const documents = readdirSync(join(site, 'documents')).map((name) => join('documents', name));
+    const pages = ['index.html', 'calculator.html', 'functions/hullgauge.simplexVolume.html'];
+    for (const name of [...pages, ...documents]) {
+      await tab.goto(page(name));
+      assert.equal(await tab.evaluate(() => document.documentElement.scrollWidth), 390, name);
+    }
+  });
+
   await check(
     browser,
     'an API page shows its formula, and search finds a function',
     async (tab) => {
-      await open(tab, 'functions/index.originInHull.html');
+      await open(tab, 'functions/hullgauge.originInHull.html');
       assert.ok((await tab.locator('.katex-html').first().boundingBox()).height > 5);
       await tab.keyboard.press('/');
       await tab.keyboard.type('originInHull');
@@ -277,11 +287,18 @@ try {
         await tab.keyboard.press('Enter');
         const { invalid, message } = await messageAt(tab, field);
         assert.equal(invalid, 'true');
-        assert.match(message, new RegExp(`: ${field} must be .*, got "?${text}"?$`));
+        assert.match(message, new RegExp(`: ${field}(\\.\\w+)? must be .*, got "?${text}"?$`));
         await tab.locator(`#${field}`).fill(before);
         await tab.keyboard.press('Enter');
         assert.deepEqual(await messageAt(tab, field), { invalid: null, message: '' });
       }
+      await open(tab, 'calculator.html', '#question=nextPointInHull&law=studentT&shape=0&n=x&d=y');
+      for (const field of ['n', 'd', 'shape']) {
+        assert.equal((await messageAt(tab, field)).invalid, 'true', `${field} beside a bad law`);
+      }
+      // A link with names that the page does not know leaves it as it begins.
+      await open(tab, 'calculator.html', '#question=none&law=none&form=none&action=none');
+      assert.match(await tab.locator('#headline').textContent(), /^P = /);
     },
   );
 } finally {
