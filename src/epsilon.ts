@@ -10,6 +10,6 @@ export const EPSILON = 2.220446049250313e-16;
  * logarithm, with a factor that no other bound has, so that searches recognise it.
  */
 export function exactLogError(log: number): number {
-  // 1 + 2^-23
-  return 1.00000011920928955078125 * EPSILON * Math.abs(log);
+  // 2^-52 + 2^-75
+  return 2.220446313948109e-16 * Math.abs(log);
 }

@@ -4,7 +4,7 @@
 
 import { DomainError } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
-import { type Cone, checkCone, MAX_AMBIENT, makeCone } from './cone.ts';
+import { type Cone, checkCone, exactErrors, exactTogether, MAX_AMBIENT, makeCone } from './cone.ts';
 
 /** Terms this far below the largest do not change a sum. */
 const CUT = 45;
@@ -48,23 +48,39 @@ export function productCone(first: Cone, second: Cone): Cone {
       second,
     );
   }
-  const logs = new Array<number>(ambient + 1).fill(Number.NEGATIVE_INFINITY);
-  const logErrors = new Array<number>(ambient + 1).fill(0);
-  const error = new Float64Array(1);
   const dimension = first.dimension + second.dimension;
   const lineality = first.lineality + second.lineality;
-  for (let k = lineality; k <= dimension; k++) {
-    logs[k] = logProductVolume(first, second, k, error);
-    logErrors[k] = error[0] as number;
-  }
   const moments = {
     mean: first.statisticalDimension + second.statisticalDimension,
     variance: first.variance + second.variance,
   };
-  const standardErrors = productStandardErrors(first, second);
   const symmetric = first.symmetric && second.symmetric;
-  const data = { dimension, lineality, logs, logErrors, moments, symmetric };
+  const shape = { dimension, lineality, moments, symmetric };
+  if (exactTogether(first, second)) {
+    const volumes = plainProduct(first.intrinsicVolumes, second.intrinsicVolumes);
+    const exactLogs = volumes.map(Math.log);
+    return makeCone({ ...shape, logs: exactLogs, volumes, logErrors: exactErrors(exactLogs) });
+  }
+  const logs = new Array<number>(ambient + 1).fill(Number.NEGATIVE_INFINITY);
+  const logErrors = new Array<number>(ambient + 1).fill(0);
+  const error = new Float64Array(1);
+  for (let k = lineality; k <= dimension; k++) {
+    logs[k] = logProductVolume(first, second, k, error);
+    logErrors[k] = error[0] as number;
+  }
+  const standardErrors = productStandardErrors(first, second);
+  const data = { ...shape, logs, logErrors };
   return makeCone(standardErrors === undefined ? data : { ...data, standardErrors });
+}
+
+function plainProduct(u: readonly number[], v: readonly number[]): number[] {
+  const product = new Array<number>(u.length + v.length - 1).fill(0);
+  for (let i = 0; i < u.length; i++) {
+    for (let j = 0; j < v.length; j++) {
+      product[i + j] = (product[i + j] as number) + (u[i] as number) * (v[j] as number);
+    }
+  }
+  return product;
 }
 
 /** log v_k of the product of two cones; writes its error bound to `error[0]`. */

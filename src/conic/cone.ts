@@ -98,8 +98,28 @@ export function roundingErrors(logs: readonly number[], factor = 4): number[] {
 }
 
 /** Error bounds of the logarithms of volumes that are exact doubles. */
-function exactErrors(logs: readonly number[]): number[] {
+export function exactErrors(logs: readonly number[]): number[] {
   return logs.map((log) => (Number.isFinite(log) ? exactLogError(log) : 0));
+}
+
+/** The largest space in which exact volumes are made use of. */
+const EXACT_AMBIENT = 53;
+
+/** Whether all products of volumes, one from each cone, are exact, and their sums as well. */
+export function exactTogether(...cones: readonly Cone[]): boolean {
+  return cones.reduce((product, cone) => product * denominator(cone), 1) <= 2 ** 53;
+}
+
+/** The power of two of which all volumes are exact multiples; infinite if one is not known exactly. */
+function denominator(cone: Cone): number {
+  if (cone.ambient > EXACT_AMBIENT) return Number.POSITIVE_INFINITY;
+  let scale = 1;
+  for (let k = cone.lineality; k <= cone.dimension; k++) {
+    const log = cone.logIntrinsicVolumes[k] as number;
+    if (cone.logErrors[k] !== exactLogError(log)) return Number.POSITIVE_INFINITY;
+    while (!Number.isInteger((cone.intrinsicVolumes[k] as number) * scale)) scale *= 2;
+  }
+  return scale;
 }
 
 /** Refuses anything but a cone. */

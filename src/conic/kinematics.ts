@@ -12,7 +12,7 @@ import { checkInteger, checkOptions, DomainError } from '../domain.ts';
 import { exactLogError } from '../epsilon.ts';
 import { paritySplit } from '../numeric/parity-split.ts';
 import { certainty, Probability } from '../probability.ts';
-import { type Cone, checkCone, isSubspace, subspaceKernel } from './cone.ts';
+import { type Cone, checkCone, exactTogether, isSubspace, subspaceKernel } from './cone.ts';
 import { logProductVolume } from './cone-algebra.ts';
 
 /**
@@ -41,7 +41,7 @@ import { logProductVolume } from './cone-algebra.ts';
  * @example
  * ```ts
  * import { conesMeet, orthant, weylChamber } from 'hullgauge/conic';
- * conesMeet(orthant(10), orthant(10)).value.toPrecision(12); // => '0.500000000000'
+ * conesMeet(orthant(10), orthant(10)).value; // => 0.5
  * conesMeet(weylChamber('A', 10), orthant(10)).value.toPrecision(12); // => '0.138127119007'
  * ```
  */
@@ -55,10 +55,8 @@ export function conesMeet(first: Cone, second: Cone): Probability {
   }
   const highest = first.dimension + second.dimension;
   if (isSubspace(first) && isSubspace(second)) return certainty(highest > n);
-  if (first.method === 'simulated' || second.method === 'simulated') {
-    return plainMeeting(first, second);
-  }
-  if (denominator(first) * denominator(second) <= 2 ** 53) return plainMeeting(first, second);
+  const simulated = first.method === 'simulated' || second.method === 'simulated';
+  if (simulated || exactTogether(first, second)) return plainMeeting(first, second);
   return paritySplit(
     (k, error) => logProductVolume(first, second, k, error),
     n,
@@ -113,10 +111,9 @@ export function coneMeetsSubspace(cone: Cone, options: { codimension: number }):
 /** The same without checks. */
 export function meetsSubspaceKernel(cone: Cone, codimension: number): Probability {
   if (isSubspace(cone)) return certainty(cone.dimension > codimension);
-  if (cone.method === 'simulated' || denominator(cone) <= 2 ** 53) {
-    const { ambient } = cone;
-    return plainMeeting(cone, subspaceKernel(ambient - codimension, ambient));
-  }
+  const { ambient } = cone;
+  const kernel = (): Cone => subspaceKernel(ambient - codimension, ambient);
+  if (cone.method === 'simulated' || exactTogether(cone)) return plainMeeting(cone, kernel());
   return paritySplit(
     (k, error) => {
       error[0] = cone.logErrors[k] as number;
@@ -128,21 +125,6 @@ export function meetsSubspaceKernel(cone: Cone, codimension: number): Probabilit
     undefined,
     cone.symmetric,
   );
-}
-
-/** The largest space in which exact volumes are looked for: beyond, none but 0 and 1/2 would be found. */
-const EXACT_AMBIENT = 53;
-
-/** The power of two of which all volumes are exact multiples; infinite if one is not known exactly. */
-function denominator(cone: Cone): number {
-  if (cone.ambient > EXACT_AMBIENT) return Number.POSITIVE_INFINITY;
-  let scale = 1;
-  for (let k = cone.lineality; k <= cone.dimension; k++) {
-    const log = cone.logIntrinsicVolumes[k] as number;
-    if (cone.logErrors[k] !== exactLogError(log)) return Number.POSITIVE_INFINITY;
-    while (!Number.isInteger((cone.intrinsicVolumes[k] as number) * scale)) scale *= 2;
-  }
-  return scale;
 }
 
 /**

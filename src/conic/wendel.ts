@@ -11,7 +11,7 @@ import { type Count, resolveCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
 import type { Probability } from '../probability.ts';
 import { fairTailOfPoints } from '../special/fair-binomial.ts';
-import { TAIL_SLOTS, tailProbability } from '../special/tail-result.ts';
+import { store, TAIL_SLOTS, tailProbability } from '../special/tail-result.ts';
 
 /** Arguments of {@link originInHull}. */
 export interface OriginInHullArgs {
@@ -76,15 +76,9 @@ export function wendel(n: number, d: number): Probability {
  * @returns whether the smaller one is P(surrounded)
  */
 export function wendelTail(n: number, d: number, out: Float64Array): boolean {
-  out.fill(0);
-  out[1] = -Infinity;
-  // The only point of R^0 is the target; no point surrounds nothing.
-  if (n <= d) return true;
-  if (d === 0) return false;
-  if (n === Infinity) {
-    // More points than doubles can count: the tail is below e^(-1e308), and that is all that is known.
-    out[2] = Infinity;
-    return false;
-  }
-  return !fairTailOfPoints(n, d, out);
+  if (n > d && d > 0 && n < Infinity) return !fairTailOfPoints(n, d, out);
+  // The only point of R^0 is the target; no point surrounds nothing. Of the tail of more points than
+  // doubles can count nothing is known but that it is below e^(-1e308).
+  store(0, -Infinity, d > 0 && n === Infinity ? Infinity : 0, out);
+  return n <= d;
 }

@@ -70,8 +70,12 @@ export function poissonBinomialTail(runs: readonly BernoulliRun[], k: number): S
 }
 
 function sumTail(lower: boolean, out: Float64Array): SumTail {
-  const [tail, log, logError] = out as unknown as [number, number, number];
-  return { tail, log, side: lower ? 'lower' : 'upper', logError };
+  return {
+    tail: out[0] as number,
+    log: out[1] as number,
+    side: lower ? 'lower' : 'upper',
+    logError: out[2] as number,
+  };
 }
 
 /** The product of all step j, or something above 2^53. */

@@ -20,7 +20,7 @@ import { expansionIsFaster, gaussianTailSum } from './beta-expansion.ts';
 import { betaFraction } from './beta-fraction.ts';
 import { addDeviance, largeBetaAmplitude } from './beta-prefix.ts';
 import { productError, quotientError, sumError } from './double-double.ts';
-import { storeExact, storeTail } from './tail-result.ts';
+import { store, storeExact, storeTail } from './tail-result.ts';
 
 /** Largest n of the table: below 2^106 a sum of binomial coefficients is exact as two doubles. */
 const TABLE_SIZE = 106;
@@ -208,9 +208,7 @@ function storeShare(value: number, n: number, out: Float64Array): void {
 
 /** Stores a value and a logarithm that are off by a rounding at most. */
 function storeRounded(value: number, log: number, out: Float64Array): void {
-  out[0] = value;
-  out[1] = log;
-  out[2] = 1.2e-16 - 2.3e-16 * log;
+  store(value, log, 1.2e-16 - 2.3e-16 * log, out);
 }
 
 /** 2^-n for an integer n >= 0, exact; 1 for n < 0. */

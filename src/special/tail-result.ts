@@ -42,30 +42,27 @@ export function storeTail(high: number, low: number, factor: number, out: Float6
   const log = high + (low + Math.log(factor));
   const value = tailValue(high, low, factor, log);
   if (value > 0.5) {
+    // a tail known as a number only
     const complement = log > -0.25 ? -Math.expm1(Math.min(log, 0)) : 1 - value;
-    storeValue(complement, out);
+    const logComplement = Math.log(complement);
+    store(complement, logComplement, VALUE_ERROR - 2 * LOG_ROUNDING * logComplement, out);
     return true;
   }
-  out[0] = value;
-  out[1] = log;
-  out[2] = VALUE_ERROR - LOG_ROUNDING * log;
+  store(value, log, VALUE_ERROR - LOG_ROUNDING * log, out);
   return false;
 }
 
-/** Stores a tail known as a number only. */
-function storeValue(value: number, out: Float64Array): void {
-  const log = Math.log(value);
+/** Fills the slots. */
+export function store(value: number, log: number, error: number, out: Float64Array): void {
   out[0] = value;
   out[1] = log;
-  out[2] = VALUE_ERROR - 2 * LOG_ROUNDING * log;
+  out[2] = error;
 }
 
 /** Stores a tail that is exactly the given double. */
 export function storeExact(value: number, out: Float64Array): void {
   const log = Math.log(value);
-  out[0] = value;
-  out[1] = log;
-  out[2] = exactLogError(log);
+  store(value, log, exactLogError(log), out);
 }
 
 /**
@@ -91,13 +88,15 @@ export function quotientProbability(a: number, b: number): Probability {
 
 /** The probability whose smaller tail is stored: itself if `lower`, else its complement. */
 export function tailProbability(lower: boolean, out: Float64Array): Probability {
-  const [tail, log, error] = out as unknown as [number, number, number];
-  return probabilityFromTail(tail, log, lower ? 'lower' : 'upper', error);
+  return probabilityFromTail(
+    out[0] as number,
+    out[1] as number,
+    lower ? 'lower' : 'upper',
+    out[2] as number,
+  );
 }
 
 /** Stores an impossible event. */
 export function storeZero(out: Float64Array): void {
-  out[0] = 0;
-  out[1] = -Infinity;
-  out[2] = 0;
+  store(0, -Infinity, 0, out);
 }
