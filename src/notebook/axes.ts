@@ -18,6 +18,8 @@ export interface Axis<Value> {
   readonly title: string;
   /** Kind of scale. */
   readonly scale: Readonly<Record<string, unknown>>;
+  /** Where ticks may stand, if not everywhere. */
+  readonly axis?: Readonly<Record<string, unknown>>;
   /** The position of a value; null where it has none. */
   place(value: Value): number | null;
 }
@@ -71,11 +73,11 @@ export function argumentAxis(
   const place = (value: number | LogNumber): number => {
     return rounded(isLogNumber(value) ? Math.exp(value.log) : value);
   };
-  return {
-    title,
-    scale: spansDecades(values.map(place)) ? { type: 'log' } : { zero: false },
-    place,
-  };
+  const positions = values.map(place);
+  if (spansDecades(positions)) return { title, scale: { type: 'log' }, place };
+  // No tick at one and a half variables.
+  const whole = positions.every(Number.isInteger) ? { axis: { tickMinStep: 1 } } : {};
+  return { title, scale: { zero: false }, place, ...whole };
 }
 
 /** The axis of results: the number that `show` names, on the scale that suits it. */

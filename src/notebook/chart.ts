@@ -154,7 +154,8 @@ function checkArguments(fn: string, args: unknown, ...taken: readonly (string | 
   }
   for (const name of taken) {
     if (name !== null && name in args) {
-      throw new DomainError(fn, `args.${name}`, 'left out (x or series gives it)', args);
+      const given = (args as Record<string, unknown>)[name];
+      throw new DomainError(fn, `args.${name}`, 'left out (x or series gives it)', given);
     }
   }
   if (taken[0] === taken[1]) {
@@ -168,7 +169,7 @@ function answer(fn: string, question: ChartedQuestion, args: object): Result {
   if (typeof result === 'number' && !Number.isNaN(result)) return result;
   if (isProbability(result) || isLogNumber(result)) return result;
   const requirement = 'a function that answers with a probability, a LogNumber or a number';
-  throw new DomainError(fn, 'subject', requirement, question);
+  throw new DomainError(fn, 'subject', requirement, result);
 }
 
 function isDistribution(subject: unknown): subject is Distribution {

@@ -73,7 +73,13 @@ export function lineChart({ title, subtitle, xTitle, xs, curves, show }: LineCha
     legend: { symbolType: 'stroke' },
   };
   const encoding = {
-    x: { field: 'x', type: 'quantitative', title: x.title, scale: x.scale },
+    x: {
+      field: 'x',
+      type: 'quantitative',
+      title: x.title,
+      scale: x.scale,
+      ...(x.axis && { axis: x.axis }),
+    },
     y: { field: 'y', type: 'quantitative', title: y.title, scale: y.scale },
     ...(labels.length === 0 ? {} : { color: colour }),
   };

@@ -197,6 +197,15 @@ describe('what is drawn', () => {
     await render(chart(nextPointInHull, { x: { d: [2, 3, 4] }, args: { n: 50, law: gaussian() } }));
   });
 
+  it('whole arguments have no tick between them', async () => {
+    const ticks = async (d: readonly number[]) =>
+      (await render(chart(nextPointInHull, { x: { d }, args: { n: 80 } }))).match(/>\d\.\d</g);
+    // of the probabilities only
+    expect(await ticks([1, 2, 3, 4])).toEqual(
+      ['0.0', '0.2', '0.4', '0.6', '0.8', '1.0'].map((t) => `>${t}<`),
+    );
+  });
+
   it('distributions show their distribution function', async () => {
     const time = surroundTime({ d: 10 });
     const spec = chart(time, { x: { 'number of points': [10, 15, 20, 25, 30] } });
