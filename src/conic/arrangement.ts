@@ -47,7 +47,8 @@ export interface ArrangementFacesArgs extends ArrangementArgs {
  *
  * Cost: at most 500 terms, constant where a tail of the binomial law takes over.
  *
- * Accuracy: exact below $2^{52}$; beyond, error of the logarithm at most $10^{-14} \max(1, |\ln x|)$.
+ * Accuracy: `value` is exact below $2^{46}$, where its logarithm still tells integers apart, and good to
+ * $10^{-14}$ a few bits beyond; error of the logarithm at most $10^{-14} \max(1, |\ln x|)$.
  *
  * Source: Facing up to arrangements: face-count formulas for partitions of space by hyperplanes,
  * Memoirs of the American Mathematical Society 154 (1975).

@@ -4,7 +4,7 @@
  * S(n, k) = sum of binom(n, i) over i <= k is half of Cover's number of dichotomies of n + 1 points
  * with k + 1 coefficients, which has the stable evaluation.
  */
-import { EPSILON } from '../epsilon.ts';
+import { EPSILON, exactLogError } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { logDichotomies } from './separability.ts';
@@ -26,7 +26,10 @@ export function binomialCount(n: number, k: number): LogNumber {
 
 /** The count with the given logarithm, from integers where these are exact doubles. */
 export function countOf(log: number, integer: () => number): LogNumber {
-  if (log < EXACT) return LogNumber.of(integer());
+  if (log < EXACT) {
+    const exact = Math.log(integer());
+    return LogNumber.fromLog(exact, exactLogError(exact));
+  }
   return LogNumber.fromLog(log, EPSILON * (4 + 4 * Math.abs(log)));
 }
 

@@ -7,20 +7,16 @@
  *   A: P(K <= d), for any law;
  *   B: P(K <= d - 1) + binom(n - 1, d - 1) a^n, where no hyperplane through the target carries mass.
  *
- * B in its other form, with only positive terms, for the probability of being surrounded:
+ * B in its other form, with only positive terms, for the probability of being surrounded, where
+ * r = (a/(1 - a))^(n-d):
  *
- *   P(K >= d + 1) + binom(n, d) a^d ((1 - a)^(n-d) - a^(n-d)) + (n - d)/n binom(n, d) a^n.
+ *   P(K >= d + 1) + P(K = d) ((n - d)/n + d/n (1 - r)).
  */
 import { type Count, resolveCount } from '../count.ts';
 import { checkBoolean, checkFinite, checkInteger, checkOptions } from '../domain.ts';
-import {
-  certainty,
-  logOfComplement,
-  type Probability,
-  probabilityFromTail,
-} from '../probability.ts';
+import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
+import { logBinomialPmfKernel } from '../special/binomial.ts';
 import { incompleteBetaKernel, incompleteBetaProbability } from '../special/incomplete-beta.ts';
-import { logBinomialKernel } from '../special/log-beta.ts';
 import { wendel } from './wendel.ts';
 
 /** Arguments of {@link originInHullLowerBound}. */
@@ -97,58 +93,61 @@ export function originInHullLowerBound(args: OriginInHullLowerBoundArgs): Probab
   return depth === 0.5 ? wendel(n, d) : inGeneralPosition(n, d, depth);
 }
 
-/** Bound B for 0 < depth < 1/2 and n > d, on its smaller side. */
+/**
+ * Bound B for 0 < depth < 1/2 and n > d, on its smaller side. With the ratio r = (a/(1 - a))^(n-d) its
+ * extra terms are P(K = d) d/n r and P(K = d)(1 - d/n r), so no large logarithms are subtracted.
+ */
 function inGeneralPosition(n: number, d: number, depth: number): Probability {
-  const logDepth = Math.log(depth);
+  const rest = n - d;
+  const atLevel = logBinomialPmfKernel(n, d, depth, 1 - depth);
+  const logRatio =
+    rest *
+    (depth > 0.25 ? Math.log1p((2 * depth - 1) / (1 - depth)) : Math.log(depth / (1 - depth)));
   const outside = new TermSum();
-  outside.addTail(d, n - d + 1, depth, false);
-  // binom(n - 1, d - 1) = d/n binom(n, d)
-  const logChoose = logBinomialKernel(n, d);
-  const allDeep = logChoose + n * logDepth;
-  outside.addTerm(Math.log(d / n) + allDeep, logChoose - n * logDepth);
-  if (outside.log < -Math.LN2) {
-    return probabilityFromTail(Math.exp(outside.log), outside.log, 'upper', outside.error());
-  }
+  outside.addTail(d, rest + 1, depth, false);
+  outside.addTerm(atLevel + (logRatio + Math.log(d / n)), Math.abs(atLevel) - logRatio);
+  if (outside.log < -Math.LN2) return outside.probability('upper');
   const inside = new TermSum();
-  inside.addTail(d + 1, n - d, depth, true);
-  const logShallow = Math.log1p(-depth);
-  const decay = (n - d) * (logDepth - logShallow);
-  const atLevel = logChoose + d * logDepth + (n - d) * logShallow;
-  const size = logChoose - d * logDepth - (n - d) * logShallow;
-  inside.addTerm(atLevel + logOfComplement(decay), size);
-  inside.addTerm(Math.log((n - d) / n) + allDeep, logChoose - n * logDepth);
-  const log = Math.min(inside.log, 0);
-  return probabilityFromTail(Math.exp(log), log, 'lower', inside.error());
+  inside.addTail(d + 1, rest, depth, true);
+  const share = rest / n - (d / n) * Math.expm1(logRatio);
+  inside.addTerm(atLevel + Math.log(share), Math.abs(atLevel));
+  return inside.probability('lower');
 }
 
 /** A sum of positive terms given by logarithms, with the error that each brings. */
 class TermSum {
   log: number = Number.NEGATIVE_INFINITY;
+  private value = 0;
   private weightedError = 0;
 
   /** Adds I_p(a, b), or its complement. */
   addTail(a: number, b: number, p: number, lower: boolean): void {
     const out = new Float64Array(3);
     const small = incompleteBetaKernel(a, b, p, 1 - p, out);
-    if (small === lower) this.add(out[1] as number, out[2] as number);
-    else this.add(Math.log1p(-(out[0] as number)), out[2] as number);
+    const tail = out[0] as number;
+    if (small === lower) this.add(tail, out[1] as number, out[2] as number);
+    else this.add(1 - tail, Math.log1p(-tail), out[2] as number);
   }
 
   /** Adds e^log, formed from logarithms whose sizes add up to `size`. */
   addTerm(log: number, size: number): void {
-    this.add(log, 2 ** -51 * (4 + size));
+    this.add(Math.exp(log), log, 2 ** -51 * (4 + size));
   }
 
-  private add(log: number, error: number): void {
+  private add(value: number, log: number, error: number): void {
     const largest = Math.max(this.log, log);
     if (largest === Number.NEGATIVE_INFINITY) return;
     const before = Math.exp(this.log - largest);
     const added = Math.exp(log - largest);
     this.weightedError = (before * this.weightedError + added * error) / (before + added);
     this.log = largest + Math.log(before + added);
+    // The number keeps digits that the rounding of a large logarithm loses.
+    this.value += value;
   }
 
-  error(): number {
-    return this.weightedError + 2 ** -51 * (1 + Math.abs(this.log));
+  /** The sum as the smaller tail of a probability. */
+  probability(side: 'lower' | 'upper'): Probability {
+    const error = this.weightedError + 2 ** -51 * (1 + Math.abs(this.log));
+    return probabilityFromTail(Math.min(this.value, 1), Math.min(this.log, 0), side, error);
   }
 }

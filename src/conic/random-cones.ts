@@ -15,6 +15,7 @@ import { checkInteger, checkOptions } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
+import { sumError } from '../special/double-double.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { TAIL_SLOTS } from '../special/tail-result.ts';
 import { wendelTail } from './wendel.ts';
@@ -84,7 +85,7 @@ export interface RandomCone {
  */
 export function schlaefliCone(args: RandomConeArgs): RandomCone {
   const { n, d } = checkedArgs('schlaefliCone', args);
-  return describe('schlaefliCone', n, d, logSchlaefliVolumes(n, d), (k) => k);
+  return describe('schlaefliCone', n, d, schlaefliVolumes(n, d), (k) => k);
 }
 
 /**
@@ -117,7 +118,9 @@ export function schlaefliCone(args: RandomConeArgs): RandomCone {
  */
 export function coverEfronCone(args: RandomConeArgs): RandomCone {
   const { n, d } = checkedArgs('coverEfronCone', args);
-  return describe('coverEfronCone', n, d, logSchlaefliVolumes(n, d).reverse(), (k) => d - k);
+  const { values, logs } = schlaefliVolumes(n, d);
+  const volumes = { values: values.reverse(), logs: logs.reverse() };
+  return describe('coverEfronCone', n, d, volumes, (k) => d - k);
 }
 
 function checkedArgs(fn: string, args: RandomConeArgs): RandomConeArgs {
@@ -127,25 +130,41 @@ function checkedArgs(fn: string, args: RandomConeArgs): RandomConeArgs {
   return args;
 }
 
+/** The conic intrinsic volumes of a random cone, index 0..d. */
+interface Volumes {
+  readonly values: number[];
+  readonly logs: number[];
+}
+
 /**
- * Logarithms of E v_0..E v_d of the Schlaefli cone. From one anchor neighbours follow by their exact
- * ratio (d - k)/(n - d + k + 1), so that no large logarithms are subtracted.
+ * E v_0..E v_d of the Schlaefli cone. From one anchor neighbours follow by their exact ratio
+ * (d - k)/(n - d + k + 1), so that no large logarithms are subtracted; their sum is carried as
+ * high + low, or thousands of roundings of a large logarithm would add up.
  */
-function logSchlaefliVolumes(n: number, d: number): number[] {
+function schlaefliVolumes(n: number, d: number): Volumes {
   const logs = new Array<number>(d + 1).fill(Number.NEGATIVE_INFINITY);
+  const values = new Array<number>(d + 1).fill(0);
   const lowest = Math.max(0, d - n);
+  let high = 0;
+  let low = 0;
+  const store = (k: number, step: number): void => {
+    const sum = high + step;
+    low += sumError(high, step, sum);
+    high = sum;
+    logs[k] = high + low;
+    values[k] = Math.exp(high) * (1 + low);
+  };
   // The anchor: near the largest of binom(n, d - k).
   const anchor = Math.max(1, lowest, d - Math.floor(n / 2));
-  logs[anchor] = logAnchor(n, d, anchor);
-  for (let k = anchor; k < d; k++) {
-    logs[k + 1] = (logs[k] as number) + logRatio(d - k, n - d + k + 1);
-  }
-  for (let k = anchor; k > Math.max(1, lowest); k--) {
-    logs[k - 1] = (logs[k] as number) - logRatio(d - k + 1, n - d + k);
-  }
+  const start = logAnchor(n, d, anchor);
+  store(anchor, start);
+  for (let k = anchor; k < d; k++) store(k + 1, logRatio(d - k, n - d + k + 1));
+  high = start;
+  low = 0;
+  for (let k = anchor; k > Math.max(1, lowest); k--) store(k - 1, -logRatio(d - k + 1, n - d + k));
   // E v_0/E v_1 = binom(n - 1, d - 1)/binom(n, d - 1) = (n - d + 1)/n
-  if (lowest === 0) logs[0] = (logs[1] as number) + Math.log1p(-(d - 1) / n);
-  return logs;
+  if (lowest === 0) store(0, Math.log1p(-(d - 1) / n));
+  return { values, logs };
 }
 
 /** log(a/b), accurate where the two are close. */
@@ -182,17 +201,27 @@ function logPartialRatio(n: number, k: number): number {
 }
 
 /**
- * log E f_k of the Schlaefli cone. With R(n, d) = C(n, d)/(2 binom(n - 1, d - 1)) the binomials cancel:
- * E f_k = 2^(d - k) binom(d - 1, k - 1) n/(n - d + k) R(n - d + k, k)/R(n, d).
+ * log E f_k of the Schlaefli cone, and the size of the terms that it is added from in `size[0]`. With
+ * R(n, d) = C(n, d)/(2 binom(n - 1, d - 1)) or T(n, d) = C(n, d)/2^n most of the binomials or the powers
+ * of 2 cancel:
+ *
+ *   E f_k = 2^(d - k) binom(d - 1, k - 1) n/(n - d + k) R(n - d + k, k)/R(n, d)
+ *         = binom(n, d - k) T(n - d + k, k)/T(n, d).
  */
-function logExpectedFaces(n: number, d: number, k: number): number {
+function logExpectedFaces(n: number, d: number, k: number, size: Float64Array): number {
+  size[0] = 0;
   if (k === 0) return n >= d ? 0 : Number.NEGATIVE_INFINITY;
-  if (n <= d) return k < d - n ? Number.NEGATIVE_INFINITY : logBinomialKernel(n, d - k);
+  if (k < d - n) return Number.NEGATIVE_INFINITY;
+  if (2 * d > n) {
+    const choices = logBinomialKernel(n, d - k);
+    const share = logOutside(n - d + k, k);
+    size[0] = choices - share;
+    return choices + (share - logOutside(n, d));
+  }
+  const choices = (d - k) * Math.LN2 + logBinomialKernel(d - 1, k - 1);
+  size[0] = choices;
   return (
-    (d - k) * Math.LN2 +
-    logBinomialKernel(d - 1, k - 1) -
-    Math.log1p(-(d - k) / n) +
-    (logPartialRatio(n - d + k, k) - logPartialRatio(n, d))
+    choices - Math.log1p(-(d - k) / n) + (logPartialRatio(n - d + k, k) - logPartialRatio(n, d))
   );
 }
 
@@ -200,25 +229,24 @@ function describe(
   fn: string,
   n: number,
   d: number,
-  logs: readonly number[],
+  { values, logs }: Volumes,
   schlaefliIndex: (k: number) => number,
 ): RandomCone {
-  const volumes = logs.map((log) => Math.exp(log));
   let statisticalDimension = 0;
-  for (let k = 1; k <= d; k++) statisticalDimension += k * (volumes[k] as number);
+  for (let k = 1; k <= d; k++) statisticalDimension += k * (values[k] as number);
   return Object.freeze({
     kind: 'randomCone',
     expectedFaces(k: number): LogNumber {
       checkInteger(`${fn}.expectedFaces`, 'k', k, 0, d);
-      const log = logExpectedFaces(n, d, schlaefliIndex(k));
-      return LogNumber.fromLog(
-        log,
-        Math.abs(log) > 0 && log > -1 ? EPSILON * (8 + 4 * (log + d * Math.LN2)) : 0,
-      );
+      const size = new Float64Array(1);
+      const log = logExpectedFaces(n, d, schlaefliIndex(k), size);
+      // 0, a face in every cone, and -Infinity are exact
+      const exact = log === 0 || log === Number.NEGATIVE_INFINITY;
+      return LogNumber.fromLog(log, exact ? 0 : EPSILON * (8 + 4 * (size[0] as number)));
     },
-    expectedIntrinsicVolumes: Object.freeze(volumes),
+    expectedIntrinsicVolumes: Object.freeze(values),
     logExpectedIntrinsicVolumes: Object.freeze(logs),
     statisticalDimension,
-    solidAngle: volumes[d] as number,
+    solidAngle: values[d] as number,
   } as const);
 }

@@ -11,6 +11,8 @@
  */
 import { checkChoice, checkNumber, checkOptions } from '../domain.ts';
 import { normalExcess } from '../numeric/normal-excess.ts';
+import { erfKernel } from '../special/error-function.ts';
+import { normalTailKernel } from '../special/normal.ts';
 
 /** How many signs a coordinate off the support may take: 2 for l1, 1 if it is known to be >= 0. */
 export type Sides = 1 | 2;
@@ -103,7 +105,7 @@ export interface WeakThresholdArgs {
  *
  * Cost: about 0.1 ms.
  *
- * Accuracy: relative error at most $10^{-14}$.
+ * Accuracy: relative error at most $10^{-14}$, for `undersampling` above $10^{-307}$.
  *
  * Source: Counting faces of randomly projected polytopes when the projection radically lowers
  * dimension, Journal of the American Mathematical Society 22 (2009), arXiv:math/0607364; in the form of
@@ -137,7 +139,12 @@ export function weakThreshold(args: WeakThresholdArgs): {
     return { perMeasurement: undersampling, perVariable: undersampling };
   }
   const sides = model === 'l1' ? 2 : 1;
-  const tau = bisectLevel((level) => measurementsAt(level, sides) < undersampling);
+  const spare = 1 - undersampling;
+  const tau = bisectLevel(
+    spare < 0.5
+      ? (level) => spareAt(level, sides) > spare
+      : (level) => measurementsAt(level, sides) < undersampling,
+  );
   normalExcess(tau, MOMENTS);
   // rho/delta, from which the density cancels
   const excess = (2 * tau * (MOMENTS[2] as number)) / (MOMENTS[1] as number);
@@ -151,4 +158,14 @@ function measurementsAt(tau: number, sides: Sides): number {
   const first = sides * density * (MOMENTS[1] as number);
   const second = sides * density * 2 * (MOMENTS[2] as number);
   return (first * (1 + tau * tau) + tau * second) / (tau + first);
+}
+
+/**
+ * One minus {@link measurementsAt}, without cancellation where it is small: tau (1 - c Q)/(tau + c A) with
+ * the upper tail Q of the normal law, as J = (1 + tau^2) Q - tau phi and A = phi - tau Q.
+ */
+function spareAt(tau: number, sides: Sides): number {
+  const first = sides * normalExcess(tau, MOMENTS) * (MOMENTS[1] as number);
+  const body = sides === 2 ? erfKernel(tau * Math.SQRT1_2) : 1 - normalTailKernel(tau);
+  return (tau * body) / (tau + first);
 }

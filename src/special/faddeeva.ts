@@ -248,9 +248,10 @@ function farField(x: number, y: number, square: number, out: Float64Array): void
   if (square < 1e150) {
     const u = (x - y) * (x + y) - 0.5;
     const v = 2 * x * y;
+    // The quotient first: the reciprocal of |z|^4 would underflow against a tiny x or y.
     const factor = INVERSE_SQRT_PI / (u * u + v * v);
-    out[0] = factor * y * (square + 0.5);
-    out[1] = factor * x * (square - 0.5);
+    out[0] = factor * (square + 0.5) * y;
+    out[1] = factor * (square - 0.5) * x;
     return;
   }
   const larger = Math.max(x, y);

@@ -9,6 +9,7 @@ import {
 } from 'hullgauge/conic';
 import { describe, expect, it } from 'vitest';
 import { randomStream } from '../../src/numeric/random.ts';
+import { relativeError } from '../support/reference.ts';
 
 function binomial(n: bigint, k: bigint): bigint {
   if (k < 0n || k > n) return 0n;
@@ -20,6 +21,13 @@ const small = fc.integer({ min: 0, max: 30 });
 const dimension = fc.integer({ min: 1, max: 12 });
 
 describe('arrangements', () => {
+  it('state the rounding of the logarithm of an exact count', () => {
+    // log 2 = 0.693147180559945309417..., and the double nearest to it is 2.3e-17 lower
+    expect(arrangementRegions({ n: 1, d: 1 }).logError).toBeGreaterThan(2.3e-17);
+    expect(arrangementRegions({ n: 1, d: 1 }).value).toBe(2);
+    expect(arrangementRegions({ n: 0, d: 1 }).logError).toBe(0);
+  });
+
   it('grow by the regions that a further hyperplane meets', () => {
     fc.assert(
       fc.property(small, dimension, fc.boolean(), (n, d, central) => {
@@ -216,6 +224,17 @@ describe('random cones', () => {
     const mean = opening / pointed;
     const deviation = Math.sqrt((square / pointed - mean * mean) / pointed);
     expect(Math.abs(mean - coverEfronCone({ n, d: 2 }).solidAngle)).toBeLessThan(4 * deviation);
+  });
+
+  it('keep their digits in high dimension', () => {
+    // exact fractions, by Python integers
+    const faces = schlaefliCone({ n: 5001, d: 5000 }).expectedFaces(1);
+    expect(relativeError(faces.log, '15.648292001715250501')).toBeLessThan(4e-16);
+    expect(faces.logError).toBeLessThan(1e-13);
+    const volume = coverEfronCone({ n: 5000, d: 4999 }).expectedIntrinsicVolumes[1344] as number;
+    expect(relativeError(volume, '7.681907205880984999e-244')).toBeLessThan(1e-14);
+    const angle = schlaefliCone({ n: 4680695353, d: 31 }).solidAngle;
+    expect(relativeError(angle, '1.0311428883917563526e-258')).toBeLessThan(1e-14);
   });
 
   it('refuse bad input', () => {

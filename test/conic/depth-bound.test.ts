@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { DomainError, LogNumber, originInHull, originInHullLowerBound, smallest } from 'hullgauge';
 import { describe, expect, it } from 'vitest';
-import { type NamedRow, readTable } from '../support/reference.ts';
+import { type NamedRow, readTable, relativeError } from '../support/reference.ts';
 
 const cases = fc.record({
   d: fc.integer({ min: 1, max: 60 }),
@@ -113,6 +113,20 @@ describe('sizes', () => {
       );
       expect([answer.value, answer.exact]).toEqual([Number(value), true]);
     }
+  });
+});
+
+describe('bound B for many points', () => {
+  // mpmath 1.2 at 90 digits, the incomplete beta function by quadrature
+  it.each([
+    [7403, 1035, 0.10374347573703413, '1.3881063924688790506e-22'],
+    [56451205, 14265482, 0.2525415200056971, '0.0023958096948356072298'],
+    [77384721870362, 25523631780216, 0.32982739919667764, '1.347487416949568368e-13'],
+    [1651318025000815, 688245200426127, 0.41678532846728916, '0.000091247217940241389209'],
+  ])('keeps its digits at n = %d, d = %d, depth %d', (n, d, depth, exact) => {
+    const p = originInHullLowerBound({ n, d, depth, generalPosition: true });
+    expect(relativeError(p.value, exact)).toBeLessThan(4e-15);
+    expect(p.logError).toBeLessThan(1e-13);
   });
 });
 

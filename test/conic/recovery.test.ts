@@ -25,6 +25,7 @@ import { randomStream } from '../../src/numeric/random.ts';
 import { recoveryCases } from '../accuracy/conic-recovery.ts';
 import { loadLinearSolver } from '../support/linear-program.ts';
 import { worstErrorShare } from '../support/probability-checks.ts';
+import { relativeError } from '../support/reference.ts';
 
 const close = (a: number, b: number, tolerance: number): void =>
   expect(a === b ? 0 : Math.abs(a - b)).toBeLessThanOrEqual(tolerance);
@@ -322,6 +323,17 @@ describe('thresholds and statistical dimensions', () => {
         expect(more).toBeGreaterThan(perVariable);
       }),
     );
+  });
+
+  it('keep the digits of what is missing to 1', () => {
+    // mpmath 1.2, bisection at 80 digits
+    for (const [undersampling, exact] of [
+      [1 - 1e-10, '0.99998746685810855551'],
+      [1 - 2 ** -53, '0.9999999867941897295'],
+    ] as const) {
+      const { perVariable } = weakThreshold({ undersampling, model: 'l1' });
+      expect(relativeError(perVariable, exact)).toBeLessThan(4e-16);
+    }
   });
 
   it('have exact ends', () => {

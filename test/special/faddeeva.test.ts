@@ -194,6 +194,14 @@ describe('faddeeva', () => {
     expect(() => faddeeva(Number.NaN, 1)).toThrow('faddeeva: re must be a finite number, got NaN');
   });
 
+  it('keeps a small part far from the origin', () => {
+    // mpmath 1.2 at 700 digits; |z|^-4 times the small part alone would underflow
+    const { im } = faddeeva(1.9858700776308385e-134, 7.333664885524832e55);
+    expect(relativeError(im, '2.0832134652954196466e-246')).toBeLessThan(4e-16);
+    const { re } = faddeeva(1e8, 1e-290);
+    expect(relativeError(re, '5.64189583547756371e-307')).toBeLessThan(4e-16);
+  });
+
   it('has a kernel that writes to the array it is given', () => {
     const out = new Float64Array(2);
     faddeevaKernel(1, -2, out);
