@@ -41,11 +41,13 @@ export function answerAt(condition: Condition, walk: Walk, end: 'first' | 'last'
   const inward = end === 'first' ? 1 : -1;
   const at = remember(condition, [evaluation], false);
   const step = 2 ** -50 * Math.max(Math.abs(x), 2 ** -50);
-  const beyond = walk.integer
-    ? (at(lastDoubt(condition, at, x, inward) + inward) ?? evaluation)
-    : certainSide(condition, at, evaluation, inward, step);
-  // Where the condition ends instead, nothing but the end could fulfil it.
-  const other = beyond.gap >= 0 ? beyond.x : x;
+  const last = walk.integer
+    ? lastDoubt(condition, at, x, inward) + inward
+    : certainSide(condition, at, evaluation, inward, step).x;
+  const beyond = at(last);
+  // Where the condition certainly ends, nothing but the end of the domain could fulfil it.
+  const ends = beyond !== undefined && beyond.gap < 0 && condition.certain(beyond);
+  const other = ends ? x : beyond === undefined ? last - inward : last;
   const bracket = [Math.min(x, other), Math.max(x, other)] as const;
   return { value: x, log, exact: false, bracket, probability };
 }

@@ -136,6 +136,46 @@ describe('products', () => {
     );
   });
 
+  it('of small orthants are exact', () => {
+    for (const [a, b] of [
+      [1, 1],
+      [7, 12],
+      [25, 25],
+    ] as const) {
+      const product = productCone(orthant(a), orthant(b));
+      expect(product).toEqual(orthant(a + b));
+    }
+    // beyond, they know their error at the corner, where one sum of logarithms is all
+    let corner = ray();
+    for (let i = 1; i < 70; i++) corner = productCone(corner, ray());
+    const log = corner.logIntrinsicVolumes[0] as number;
+    expect(Math.abs(log + 70 * Math.LN2)).toBeLessThanOrEqual(corner.logErrors[0] as number);
+  });
+
+  it('are known to be symmetric where both factors are', () => {
+    const quarter = circularCone(4, Math.PI / 4);
+    for (const [cone, symmetric] of [
+      [ray(), true],
+      [halfspace(4), true],
+      [subspace({ dimension: 2, ambient: 5 }), true],
+      [orthant(90), true],
+      [quarter, true],
+      [circularCone(4, 0.7853981633974484), undefined],
+      [circularCone(4, 0), true],
+      [weylChamber('A', 4), undefined],
+      [polarCone(quarter), true],
+      [productCone(quarter, halfspace(2)), true],
+      [productCone(quarter, weylChamber('B', 2)), undefined],
+    ] as const) {
+      expect(cone.symmetric).toBe(symmetric);
+      if (symmetric === undefined) continue;
+      const { lineality, dimension, intrinsicVolumes: v } = cone;
+      for (let k = lineality; k <= dimension; k++) {
+        close(v[k] as number, v[lineality + dimension - k] as number, 1e-16);
+      }
+    }
+  });
+
   it('commute, and add lineality, dimension and moments', () => {
     for (const [, first] of samples) {
       for (const [, second] of samples.slice(0, 5)) {

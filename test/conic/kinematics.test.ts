@@ -16,6 +16,8 @@ import {
 } from 'hullgauge/conic';
 import { incompleteBeta } from 'hullgauge/special';
 import { describe, expect, it } from 'vitest';
+import { certainty } from '../../src/probability.ts';
+import { statesExact } from '../support/exactness.ts';
 
 const close = (a: number, b: number, tolerance: number): void =>
   expect(a === b ? 0 : Math.abs(a - b)).toBeLessThanOrEqual(tolerance);
@@ -44,6 +46,21 @@ describe('conesMeet', () => {
       ),
       { numRuns: 200 },
     );
+  });
+
+  it('is exactly one half of two symmetric cones', () => {
+    for (const cone of [orthant(3), orthant(20), orthant(40), circularCone(7, Math.PI / 4)]) {
+      for (const other of [cone, polarCone(cone)]) {
+        const p = conesMeet(cone, other);
+        expect([p.value, p.complement, statesExact(p)]).toEqual([0.5, 0.5, true]);
+      }
+    }
+    // exact sums of exact products: 2 v_4 of the orthant of R^5, and of that of R^4 with a line
+    const flat = productCone(orthant(2), subspace({ dimension: 0, ambient: 1 }));
+    const p = conesMeet(flat, orthant(3));
+    expect([p.value, statesExact(p)]).toEqual([0.3125, true]);
+    const line = productCone(subspace({ dimension: 1, ambient: 1 }), orthant(2));
+    expect(conesMeet(line, flat).value).toBe(0.5);
   });
 
   it('is symmetric, and one minus that of the polars', () => {
@@ -110,6 +127,50 @@ describe('coneMeetsSubspace', () => {
         close(p.logComplement, q.logComplement, 4e-15 * Math.max(1, Math.abs(q.logComplement)));
       }
     }
+  });
+
+  it('of an exact cone is exact, and says so', () => {
+    for (const n of [1, 2, 3, 10, 37, 50]) {
+      for (let codimension = 1; codimension < n; codimension++) {
+        const p = coneMeetsSubspace(orthant(n), { codimension });
+        const q = originInHull({ n, d: codimension });
+        expect([p.value, p.complement, statesExact(p)]).toEqual([q.value, q.complement, true]);
+      }
+      expect(coneMeetsSubspace(orthant(n), { codimension: n })).toEqual(certainty(false));
+      expect(coneMeetsSubspace(orthant(n), { codimension: 0 })).toEqual(certainty(true));
+    }
+    const padded = productCone(orthant(5), subspace({ dimension: 2, ambient: 4 }));
+    const p = coneMeetsSubspace(padded, { codimension: 4 });
+    expect([p.value, statesExact(p)]).toEqual([0.6875, true]);
+    expect(statesExact(coneMeetsSubspace(weylChamber('B', 8), { codimension: 2 }))).toBe(false);
+  });
+
+  it('is one half in the middle of a symmetric cone, and only there', () => {
+    const symmetric = [
+      orthant(300),
+      circularCone(7, Math.PI / 4),
+      productCone(orthant(51), circularCone(9, Math.PI / 4)),
+      productCone(orthant(60), subspace({ dimension: 3, ambient: 8 })),
+      polarCone(orthant(80)),
+      JSON.parse(JSON.stringify(circularCone(1000, Math.PI / 4))) as Cone,
+    ];
+    for (const cone of symmetric) {
+      const middle = (cone.lineality + cone.dimension) / 2;
+      if (Number.isInteger(middle)) {
+        const p = coneMeetsSubspace(cone, { codimension: middle });
+        expect([p.value, p.complement, statesExact(p)]).toEqual([0.5, 0.5, true]);
+      }
+      const whole = Math.ceil(middle);
+      const above = coneMeetsSubspace(cone, { codimension: whole + 1 });
+      const below = coneMeetsSubspace(cone, { codimension: 2 * middle - whole - 1 });
+      close(above.value, below.complement, 1e-13);
+      expect([statesExact(above), above.value < 0.5]).toEqual([false, true]);
+    }
+    // a half within rounding, but not known to be one
+    const beside = circularCone(8, 0.7853981633974484);
+    const p = coneMeetsSubspace(beside, { codimension: 4 });
+    close(p.value, 0.5, 1e-15);
+    expect(statesExact(p)).toBe(false);
   });
 
   it('falls with the codimension, from certainty to impossibility', () => {

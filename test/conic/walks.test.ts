@@ -5,6 +5,7 @@ import { smallest } from 'hullgauge/plan';
 import { describe, expect, it } from 'vitest';
 import { randomStream } from '../../src/numeric/random.ts';
 import { hullCases, jointCases } from '../accuracy/conic-walks.ts';
+import { statesExact } from '../support/exactness.ts';
 import { worstErrorShare } from '../support/probability-checks.ts';
 import { type NamedRow, readTable } from '../support/reference.ts';
 
@@ -41,6 +42,17 @@ describe('walkHull and bridgeHull', () => {
         }
       }
     }
+  });
+
+  it('are exact at ties, and say so', () => {
+    for (const steps of [4, 8, 1024, 2 ** 50]) {
+      expect(statesExact(bridgeHull({ steps, d: 1 }))).toBe(true);
+    }
+    expect(statesExact(bridgeHull({ steps: 6, d: 1 }))).toBe(false);
+    expect(statesExact(walkHull({ steps: 2, d: 1 }))).toBe(true);
+    // 2 binom(2n, n)/4^n
+    expect(walkHull({ steps: 14, d: 1 }).complement).toBe((2 * 40116600) / 4 ** 14);
+    expect(statesExact(walkHull({ steps: 14, d: 1 }))).toBe(true);
   });
 
   it('have the closed forms of one dimension', () => {
@@ -192,10 +204,17 @@ describe('jointWalkHull', () => {
     for (let n = 1; n <= 80; n++) {
       for (const d of [1, 2, 7, 20, 40]) {
         const joint = jointWalkHull({ walks: new Array(n).fill(1), d });
-        const wendel = originInHull({ n, d });
-        expect(Math.abs(joint.value - wendel.value)).toBeLessThanOrEqual(4e-15 * wendel.value);
-        expect(Math.abs(joint.complement - wendel.complement)).toBeLessThan(4e-15);
+        expect(joint).toEqual(originInHull({ n, d }));
       }
+    }
+  });
+
+  it('keeps ties, also of single steps and bridges of two', () => {
+    for (const d of [3, 30, 2000]) {
+      const walks = new Array(2 * d - 1).fill(1);
+      const half = jointWalkHull({ walks, bridges: [2], d });
+      expect([half.value, statesExact(half)]).toEqual([0.5, true]);
+      expect(jointWalkHull({ walks, bridges: [3], d }).value).not.toBe(0.5);
     }
   });
 

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { exactLogError } from '../../src/epsilon.ts';
 import {
   type BernoulliRun,
   enumeratedTail,
@@ -8,6 +9,7 @@ import {
   type SumTail,
 } from '../../src/numeric/poisson-binomial.ts';
 import { contourTail, tiltedMean } from '../../src/numeric/poisson-binomial-contour.ts';
+import { isQuotient } from '../support/exactness.ts';
 
 const run = (step: 1 | 2, from: number, to: number, count = 1): BernoulliRun => ({
   step,
@@ -108,14 +110,55 @@ describe('tails of sums of Bernoulli variables', () => {
     const exact = Number((sum * 10n ** 18n) / 2n ** 400n) / 1e18;
     const t = poissonBinomialTail([run(2, 1, 1, 400)], 180);
     expect(t.side).toBe('lower');
-    expect(Math.abs(t.tail / exact - 1)).toBeLessThan(3e-13);
+    expect(Math.abs(t.tail / exact - 1)).toBeLessThan(1e-15);
     expect(Math.abs(Math.log(exact) - t.log)).toBeLessThanOrEqual(t.logError + 1e-16);
+    const c = contourTail([run(2, 1, 1, 400)], 400, 180);
+    expect(Math.abs(c.tail / exact - 1)).toBeLessThan(3e-13);
   });
 
   it('of a million fair coins agree with 34 digits of the saddle contour', () => {
-    const t = poissonBinomialTail([run(2, 1, 1, 1e6)], 499_200);
+    const t = contourTail([run(2, 1, 1, 1e6)], 1e6, 499_200);
     expect(Math.abs(t.log - -2.902054730265209518)).toBeLessThan(t.logError);
     expect(t.logError).toBeLessThan(1e-11);
+    const fair = poissonBinomialTail([run(2, 1, 1, 5e5), run(1, 2, 2, 5e5)], 499_200);
+    expect(Math.abs(fair.log - -2.902054730265209518)).toBeLessThanOrEqual(fair.logError);
+    expect(fair.logError).toBeLessThan(1e-14);
+  });
+
+  it('are correctly rounded fractions while their denominator is a double', () => {
+    let marked = 0;
+    for (const runs of [
+      [run(2, 2, 12)],
+      [run(1, 3, 18)],
+      [run(2, 1, 3, 4)],
+      [run(2, 1, 1, 20), run(1, 2, 7, 2)],
+      [run(1, 2, 4, 3), run(2, 2, 2, 5)],
+      [run(2, 2, 2, 26)],
+    ]) {
+      let law = [1n];
+      let denominator = 1n;
+      for (const { step, from, to, count } of runs) {
+        for (let j = from; j <= to; j++) {
+          for (let copy = 0; copy < count; copy++) {
+            const failure = BigInt(step * j - 1);
+            law = [...law, 0n].map((x, i) => x * failure + (i > 0 ? (law[i - 1] as bigint) : 0n));
+            denominator *= failure + 1n;
+          }
+        }
+      }
+      let below = 0n;
+      for (let k = 0; k < law.length - 1; k++) {
+        below += law[k] as bigint;
+        const t = poissonBinomialTail(runs, k);
+        const numerator = t.side === 'lower' ? below : denominator - below;
+        expect(2n * numerator <= denominator).toBe(true);
+        expect(t.tail).toBe(Number(numerator) / Number(denominator));
+        const exact = isQuotient(t.tail, numerator, denominator);
+        expect(t.logError === exactLogError(t.log)).toBe(exact);
+        if (exact) marked++;
+      }
+    }
+    expect(marked).toBeGreaterThan(30);
   });
 
   it('reach every corner of 2^53 - 1 variables without NaN', () => {

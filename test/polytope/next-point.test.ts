@@ -17,6 +17,7 @@ import {
   uniformSphere,
 } from 'hullgauge';
 import { describe, expect, it } from 'vitest';
+import { statesExact } from '../support/exactness.ts';
 
 /** Whether two probabilities agree within their stated errors, compared by their smaller tails. */
 function agree(p: Probability, q: Probability, slack = 0): boolean {
@@ -239,6 +240,48 @@ describe('nextPointInHull', () => {
     expect(ask({ law: betaPrimeLaw(1.5) })).toThrow(/law\.b/);
     expect(ask({ d: 0 })).toThrow(/d must be an integer from 1/);
     expect(ask({ queryScale: 1e-200, n: 1e200 })).toThrow(/queryScale/);
+  });
+});
+
+describe('on the line', () => {
+  it('is a matter of order, exact at ties, whatever the law', () => {
+    for (const law of [...laws, betaPrimeLaw(3)]) {
+      for (const n of [1, 2, 3, 4, 7, 15, 1000, 2 ** 40 - 1, 2 ** 53 - 1]) {
+        const p = nextPointInHull({ n, d: 1, law });
+        // the smaller tail is correctly rounded
+        if (n <= 3) expect(p.value).toBe((n - 1) / (n + 1));
+        else expect(p.complement).toBe(2 / (n + 1));
+        if (n > 1) expect(statesExact(p)).toBe([3, 7, 15, 2 ** 40 - 1, 2 ** 53 - 1].includes(n));
+      }
+      expect(smallest(nextPointInHull, 'n', { d: 1, law }, 0.75)).toMatchObject({
+        value: 7,
+        exact: true,
+      });
+    }
+    const far = nextPointInHull({ n: LogNumber.fromLog(1e4), d: 1 });
+    expect(Math.abs(far.logComplement - (Math.LN2 - 1e4))).toBeLessThanOrEqual(far.logError);
+  });
+
+  it('has n/(n + 1) for pairs, and one coin for each point of the sphere', () => {
+    for (const n of [1, 2, 3, 10, 127]) {
+      const p = nextPointInHull({ n, d: 1, hull: 'symmetric' });
+      expect([p.complement, statesExact(p)]).toEqual([1 / (n + 1), n !== 2 && n !== 10]);
+      const coins = nextPointInHull({ n, d: 1, law: uniformSphere() });
+      expect([coins.complement, statesExact(coins)]).toEqual([2 ** -n, true]);
+    }
+    for (const law of [gaussian(), uniformSphere()]) {
+      expect(nextPointInHull({ n: 0, d: 1, law }).value).toBe(0);
+    }
+    expect(nextPointInHull({ n: 0, d: 1, hull: 'symmetric' }).value).toBe(0);
+  });
+
+  it('continues queries of nearly the same scale', () => {
+    for (const hull of ['plain', 'symmetric'] as const) {
+      for (const n of [2, 5, 40]) {
+        const near = nextPointInHull({ n, d: 1, hull, queryScale: 1 + 2 ** -40 });
+        expect(agree(nextPointInHull({ n, d: 1, hull }), near, 2 ** -36)).toBe(true);
+      }
+    }
   });
 });
 

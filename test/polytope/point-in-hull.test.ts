@@ -123,6 +123,14 @@ describe('pointInHull', () => {
 });
 
 describe('queriesInHull', () => {
+  it('of equal queries is that of one, ties included', () => {
+    for (const mahalanobisDistance of [0, 1.5]) {
+      const one = pointInHull({ n: 6, d: 3, mahalanobisDistance });
+      const mahalanobisDistances = [mahalanobisDistance, mahalanobisDistance, mahalanobisDistance];
+      expect(queriesInHull({ n: 6, d: 3, mahalanobisDistances })).toEqual(one);
+    }
+  });
+
   it('is the mean of its queries, in both tails', () => {
     const args = { n: 200, d: 4 };
     const distances = [0, 1, 1, 4.5];

@@ -20,6 +20,7 @@ import { describe, expect, it } from 'vitest';
 import { BetaTail } from '../../src/numeric/beta-tail.ts';
 import { orderStatisticExpectation } from '../../src/numeric/order-statistic.ts';
 import { volumeRatioKernel } from '../../src/polytope/volume-ratio-kernel.ts';
+import { statesExact } from '../support/exactness.ts';
 import { type RowArgs, resolvedOf, rowsOf } from '../support/polytope-rows.ts';
 import { difference } from '../support/reference.ts';
 
@@ -41,6 +42,28 @@ describe('published closed forms', () => {
       const { complement: computed } = hullVolumeRatio(ask);
       expect(Math.abs(computed / complement - 1)).toBeLessThan(1e-14);
     }
+  });
+
+  it('is a quotient of whole numbers for a uniform marginal, as the integral is beside it', () => {
+    for (const k of [1, 2, 3, 6]) {
+      for (const n of [k + 1, k + 2, 20, 300]) {
+        const count = { n, log: Math.log(n) };
+        for (const hull of ['plain', 'symmetric'] as const) {
+          const p = volumeRatioKernel(k, 0, count, hull);
+          const near = volumeRatioKernel(k, 1e-13, count, hull);
+          const slack = 1e-11 + p.logError + near.logError;
+          const small = p.log <= p.logComplement ? 'log' : 'logComplement';
+          expect(Math.abs(p[small] - near[small])).toBeLessThan(slack);
+        }
+      }
+    }
+    const ties = [
+      [hullVolumeRatio({ n: 3, d: 1, law: uniformBall() }), 0.5],
+      [hullVolumeRatio({ n: 7, d: 1, law: uniformBall() }), 0.75],
+      [hullVolumeRatio({ n: 1, d: 1, law: uniformBall(), hull: 'symmetric' }), 0.5],
+      [hullIntrinsicVolumeRatio({ n: 15, d: 3, k: 1, law: uniformSphere() }), 0.875],
+    ] as const;
+    for (const [p, value] of ties) expect([p.value, statesExact(p)]).toEqual([value, true]);
   });
 
   it('is 35/(48 pi^2) for a triangle in the disk and 9/715 for a tetrahedron in the ball', () => {

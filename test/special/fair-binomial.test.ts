@@ -3,9 +3,11 @@ import fc from 'fast-check';
 import { DomainError } from 'hullgauge';
 import { binomialCdf } from 'hullgauge/special';
 import { describe, expect, it } from 'vitest';
+import { exactLogError } from '../../src/epsilon.ts';
 import { fairBinomialTail } from '../../src/special/fair-binomial.ts';
 import { TAIL_SLOTS } from '../../src/special/tail-result.ts';
 import { coinSum, dyadic } from '../support/exact-binomial.ts';
+import { isQuotient } from '../support/exactness.ts';
 import { exactDecimal, type NamedRow, readTable, relativeError } from '../support/reference.ts';
 
 const Ruler = Decimal.clone({ precision: 60, defaults: true });
@@ -59,6 +61,32 @@ describe('fairBinomialTail', () => {
         if (n <= 53) expect(t.value * 2 ** n).toBe(Number(sum));
       }
     }
+  });
+
+  it('says that it is exact only where it is, and always for n <= 53, at the middle and at the ends', () => {
+    const check = (n: number, k: number): boolean => {
+      const t = tail(n, k);
+      const marked = t.logError === exactLogError(t.log);
+      if (marked) {
+        const sum = sumTo(n, t.lower ? k : n - 1 - k);
+        expect([n, k, isQuotient(t.value, sum, 1n << BigInt(n))]).toEqual([n, k, true]);
+      }
+      return marked;
+    };
+    let beyond = 0;
+    for (const n of [1, 2, 20, 52, 53, 54, 55, 80, 105, 106, 107, 108, 300, 1021, 1022]) {
+      for (let k = 0; k < n; k++) {
+        const marked = check(n, k);
+        if (n <= 53 || k === 0 || k === n - 1 || 2 * k === n - 1) expect(marked).toBe(true);
+        else if (marked) beyond++;
+      }
+    }
+    // 1 + n + .. stays below 2^53 for a while
+    expect(beyond).toBeGreaterThan(50);
+    expect([check(1023, 0), check(54, 26), check(54, 25)]).toEqual([false, true, true]);
+    expect([check(106, 40), check(2001, 1000)]).toEqual([false, true]);
+    const half = tail(2 ** 53 - 1, 2 ** 52 - 1);
+    expect([half.value, half.logError]).toEqual([0.5, exactLogError(half.log)]);
   });
 
   it('has a correctly rounded complement for n <= 53', () => {
