@@ -13,6 +13,9 @@
  *
  * s_j = (-1)^(d - j - 1) for h > 0 and 1 otherwise (the mean over the radius is a beta integral). For
  * h <= 0 the set V_h is convex or empty, and the number is the probability that it is not empty.
+ *
+ * The power is taken by a recurrence, whose terms are all positive for n >= d - 1 and alike in sign to v;
+ * for fewer points, and h <= 0, by squaring.
  */
 import type { ResolvedCount } from '../count.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
@@ -52,6 +55,7 @@ export function logEulerCharacteristic(
       power -
       logF;
   }
+  if (negative && count.n < d - 1) return logFewPoints(logs, logF, count.n);
   // t in units of rho, so that n a_1 rho = d and the coefficients stay below e^d
   const logRho = Math.log(d) - count.log - (logs[1] as number);
   const scaled = new Float64Array(d);
@@ -77,4 +81,71 @@ export function logEulerCharacteristic(
   if (!(total > 0)) return Number.NaN;
   const logAll = tail.logTail < -30 ? -Math.exp(count.log + tail.logTail) : count.n * logF;
   return Math.LN2 + logAll - (d - 1) * logRho + Math.log(total);
+}
+
+/**
+ * The same for positive coefficients and n < d - 1. With t in units that make n variables of the law
+ * v_(d - i), i = 0 .. d - 1, have the sum d - 1 in the mean, or fewer, no coefficient that counts
+ * underflows.
+ */
+function logFewPoints(logs: Float64Array, logF: number, n: number): number {
+  const d = logs.length;
+  const law = new Float64Array(d);
+  let logRho = 0;
+  let logSum = tilt(logs, 0, law);
+  if (n * meanOf(law) > d - 1) {
+    let low = -1;
+    while (n * meanOf(law) > d - 1) {
+      low *= 2;
+      tilt(logs, low, law);
+    }
+    let high = 0;
+    while (high - low > 1e-3 * (1 - high)) {
+      logRho = 0.5 * (low + high);
+      logSum = tilt(logs, logRho, law);
+      if (n * meanOf(law) > d - 1) high = logRho;
+      else low = logRho;
+    }
+  }
+  const power = powerOf(law, n);
+  let total = 0;
+  for (let i = 0; 2 * i <= d - 1; i++) {
+    total += (power[d - 1 - 2 * i] as number) * Math.exp(2 * i * logRho);
+  }
+  return Math.LN2 + n * (logF + logSum) - (d - 1) * logRho + Math.log(total);
+}
+
+/** Writes the law in proportion to exp(logs[i] + i logRho), and returns the logarithm of the sum. */
+function tilt(logs: Float64Array, logRho: number, law: Float64Array): number {
+  let top = Number.NEGATIVE_INFINITY;
+  for (let i = 0; i < logs.length; i++) top = Math.max(top, (logs[i] as number) + i * logRho);
+  let sum = 0;
+  for (let i = 0; i < logs.length; i++) {
+    law[i] = Math.exp((logs[i] as number) + i * logRho - top);
+    sum += law[i] as number;
+  }
+  for (let i = 0; i < logs.length; i++) law[i] = (law[i] as number) / sum;
+  return top + Math.log(sum);
+}
+
+function meanOf(law: Float64Array): number {
+  return law.reduce((sum, p, i) => sum + i * p, 0);
+}
+
+/** The law of the sum of n variables, as far as the law itself reaches. */
+function powerOf(law: Float64Array, n: number): Float64Array {
+  if (n === 1) return law;
+  const half = powerOf(law, Math.floor(n / 2));
+  const even = convolve(half, half);
+  return n % 2 === 0 ? even : convolve(even, law);
+}
+
+function convolve(a: Float64Array, b: Float64Array): Float64Array {
+  const out = new Float64Array(a.length);
+  for (let k = 0; k < out.length; k++) {
+    let sum = 0;
+    for (let i = 0; i <= k; i++) sum += (a[i] as number) * (b[k - i] as number);
+    out[k] = sum;
+  }
+  return out;
 }

@@ -182,15 +182,22 @@ export function expectedFacetsBelow(args: ExpectedFacetsBelowArgs): LogNumber {
   }
   checkFinite(fn, 'height', height);
   if (d === 1) return lowEnds(law, count, height);
+  // exponents beyond doubles
+  if (law.family === 'gaussian' && d * height * height > 1e300) {
+    return height < 0 ? none : expectedFacetsKernel(law, d, count, 'plain');
+  }
   if (law.family === 'beta' && height === -1) return none;
   const model = facetModel(law, d);
-  const above = facetsBeyond(model, count, height, 1);
-  const total = facetTotal(model, count, 'line');
-  if (above.log < total.log - Math.LN2) {
-    // nearly all of them: the integral from far below would lose the digits that the total has
-    const share = Math.exp(above.log - total.log);
-    const error = (total.error + share * above.error) / (1 - share);
-    return LogNumber.fromLog(total.log + Math.log1p(-share), error);
+  // at least half of the facets are on the positive side
+  if (height > 0) {
+    const above = facetsBeyond(model, count, height, 1);
+    const total = facetTotal(model, count, 'line');
+    if (above.log < total.log - Math.LN2) {
+      // nearly all of them: the integral from far below would lose the digits that the total has
+      const share = Math.exp(above.log - total.log);
+      const error = (total.error + share * above.error) / (1 - share);
+      return LogNumber.fromLog(total.log + Math.log1p(-share), error);
+    }
   }
   const below = facetsBeyond(model, count, height, -1);
   return LogNumber.fromLog(below.log, below.error);

@@ -237,6 +237,22 @@ describe('expectedFacetsBelow', () => {
     expect(expectedFacetsBelow({ ...ask, n: 4, height: 1 }).value).toBe(0);
   });
 
+  it('has none far below and all far above, as far as doubles reach', () => {
+    for (const n of [10, 74, 1e6]) {
+      const total = expectedFacets({ n, d: 9, law: gaussian() }).log;
+      for (const size of [1e3, 1e8, 1e111, 1e160]) {
+        const [below, above] = [-size, size].map((height) =>
+          expectedFacetsBelow({ n, d: 9, height, law: gaussian() }),
+        ) as [LogNumber, LogNumber];
+        expect(above.log).toBeCloseTo(total, 12);
+        // n exponents of -h^2/2
+        const exponent = (-n / 2) * size * size;
+        if (exponent > -1e300) expect(below.log / exponent).toBeCloseTo(1, 3);
+        else expect(below.log).toBe(Number.NEGATIVE_INFINITY);
+      }
+    }
+  });
+
   it('is 2 F(h)^n on the line', () => {
     const ask = { n: 7, d: 1 };
     const uniform = expectedFacetsBelow({ ...ask, height: 0.5, law: uniformBall() }).value;

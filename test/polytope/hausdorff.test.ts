@@ -234,6 +234,27 @@ describe('the expected Euler characteristic', () => {
     const computed = logEulerCharacteristic(d, beta, { n, log: Math.log(n) }, 1 - h, false);
     expect(Math.abs(computed - log)).toBeLessThan(1e-14 * (10 + Math.abs(log)));
   });
+
+  // few points: 20 digits by squaring in 60-digit arithmetic (mpmath)
+  it.each([
+    [10, 0.5, 2, 0.25, -2.3827490347384979891],
+    [100, 0, 1, 0.25, -3.2072021853820181213e-13],
+    [257, 0, 8, 0.5, -56.233363016591822102],
+    [300, 0.5, 8, 0.25, -518.18123219144173287],
+    [200, -0.5, 50, 0.0625, -9971.187538113427908],
+    [500, 0, 50, 0.5, -2721.3461170863594014],
+    [500, 1, 3, 0.75, 1.5557538194652854268e-61],
+  ])('is a probability below the centre at d = %d, beta = %d, n = %d', (d, beta, n, gap, log) => {
+    const computed = logEulerCharacteristic(d, beta, { n, log: Math.log(n) }, gap, true);
+    expect(Math.abs(computed - log)).toBeLessThan(4e-16 * (d + Math.abs(log)));
+  });
+
+  it('leaves no hole in the exceedance of few points in many dimensions', () => {
+    const { exceedance, approxMean } = hausdorffDistance({ n: 8, d: 265, law: uniformBall() });
+    expect(exceedance(1.5).approx.log).toBeCloseTo(-57.3, 0);
+    expect(approxMean).toBeGreaterThan(1);
+    expect(approxMean).toBeLessThan(1.5);
+  });
 });
 
 describe('the largest spacing', () => {
