@@ -9,6 +9,7 @@
 
 import type { Probability } from '../probability.ts';
 import { binomialTail, checkBinomial, logBinomialPmfKernel } from './binomial.ts';
+import { rest } from './incomplete-beta.ts';
 import { normalQuantileOfLog } from './normal.ts';
 import { checkProbability } from './probability-argument.ts';
 import { TAIL_SLOTS } from './tail-result.ts';
@@ -44,7 +45,7 @@ export function binomialQuantile(
   prob: number | Probability,
   n: number,
   p: number = 0.5,
-  q: number = 1 - p,
+  q: number = rest(p),
 ): number {
   const fn = 'binomialQuantile';
   checkProbability(fn, 'prob', prob);

@@ -14,7 +14,7 @@ import { checkInteger, DomainError } from '../domain.ts';
 import type { Probability } from '../probability.ts';
 import { betaAmplitude, betaDelta, betaDeviance } from './beta-prefix.ts';
 import { fairBinomialTail } from './fair-binomial.ts';
-import { checkPair, incompleteBetaKernel } from './incomplete-beta.ts';
+import { checkPair, incompleteBetaKernel, rest } from './incomplete-beta.ts';
 import { storeZero, TAIL_SLOTS, tailProbability } from './tail-result.ts';
 
 const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
@@ -47,7 +47,12 @@ const work = /* @__PURE__ */ new Float64Array(TAIL_SLOTS);
  * binomialCdf(4e14, 1e15).log.toPrecision(12); // => '-2.01355135507e+13'
  * ```
  */
-export function binomialCdf(k: number, n: number, p: number = 0.5, q: number = 1 - p): Probability {
+export function binomialCdf(
+  k: number,
+  n: number,
+  p: number = 0.5,
+  q: number = rest(p),
+): Probability {
   const fn = 'binomialCdf';
   checkCount(fn, k);
   checkBinomial(fn, n, p, q);
@@ -79,7 +84,7 @@ export function binomialCdf(k: number, n: number, p: number = 0.5, q: number = 1
  * logBinomialPmf(11, 10); // => -Infinity
  * ```
  */
-export function logBinomialPmf(k: number, n: number, p: number = 0.5, q: number = 1 - p): number {
+export function logBinomialPmf(k: number, n: number, p: number = 0.5, q: number = rest(p)): number {
   const fn = 'logBinomialPmf';
   checkCount(fn, k);
   checkBinomial(fn, n, p, q);

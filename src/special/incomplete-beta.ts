@@ -63,12 +63,17 @@ const PAIR_TOLERANCE = 4e-16;
  * incompleteBeta(20, 0.5, 1, 1e-30).complement.toPrecision(12); // => '5.01482750478e-15'
  * ```
  */
-export function incompleteBeta(a: number, b: number, x: number, y: number = 1 - x): Probability {
+export function incompleteBeta(a: number, b: number, x: number, y: number = rest(x)): Probability {
   const fn = 'incompleteBeta';
   checkPositive(fn, 'a', a);
   checkPositive(fn, 'b', b);
   checkPair(fn, 'x', x, 'y', y);
   return incompleteBetaProbability(a, b, x, y);
+}
+
+/** 1 - x; NaN where x is no number, which is then refused by name and not by the subtraction. */
+export function rest(x: number): number {
+  return typeof x === 'number' ? 1 - x : Number.NaN;
 }
 
 /** Refuses anything but two numbers in [0, 1] whose sum is 1 to rounding. */

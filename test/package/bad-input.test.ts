@@ -84,8 +84,15 @@ describe('refuses bad arguments', () => {
       for (const [index, parameter] of call.names.entries()) {
         for (const value of badFor(call, parameter)) {
           const args = call.args.map((arg, i) => (i === index ? value : arg));
-          const refused = await refusedFor(() => fn(...args));
-          expect(`${String(value)}: ${refused}`).toMatch(new RegExp(`: ${parameter}\\b`));
+          // Also with the defaults of all that may be left out behind it.
+          const later = call.names.slice(index + 1);
+          const least = later.every((name) => call.optional?.includes(name))
+            ? index + 1
+            : args.length;
+          for (const given of new Set([args.length, least])) {
+            const refused = await refusedFor(() => fn(...args.slice(0, given)));
+            expect(`${String(value)}: ${refused}`).toMatch(new RegExp(`: ${parameter}\\b`));
+          }
         }
       }
     }
