@@ -51,7 +51,7 @@ export interface ArrangementFacesArgs extends ArrangementArgs {
  * $10^{-14}$ a few bits beyond; error of the logarithm at most $10^{-14} \max(1, |\ln x|)$.
  *
  * Source: Facing up to arrangements: face-count formulas for partitions of space by hyperplanes,
- * Memoirs of the American Mathematical Society 154 (1975).
+ * Memoirs of the American Mathematical Society 154 (1975), doi:10.1090/memo/0154.
  *
  * @param args - `n` hyperplanes (integer >= 0) in dimension `d` (integer >= 1); `central`: all
  * through the origin; `bounded`: count bounded regions only, of which a central arrangement has none

@@ -63,8 +63,9 @@ export interface OriginInHullLowerBoundArgs {
  *   exceeds 1/2 with `generalPosition`
  *
  * Source: "The exact feasibility of randomized solutions of uncertain convex programs", SIAM Journal on
- * Optimization 19 (2008) 1211-1230, for A; "A continuous analogue of the upper bound theorem", Discrete
- * and Computational Geometry 26 (2001) 205-219, for the function from which B is derived.
+ * Optimization 19 (2008) 1211-1230, doi:10.1137/07069821X, for A; "A continuous analogue of the upper
+ * bound theorem", Discrete and Computational Geometry 26 (2001) 205-219, doi:10.1007/s00454-001-0028-9,
+ * for the function from which B is derived.
  *
  * @example
  * ```ts

@@ -68,7 +68,7 @@ export interface RandomCone {
  * Accuracy: relative error of every number at most $10^{-14}$ times the size of its logarithm,
  * where that exceeds 1.
  *
- * Source: Random conical tessellations, Discrete and Computational Geometry 56 (2016).
+ * Source: Random conical tessellations, Discrete and Computational Geometry 56 (2016), arXiv:1508.07768.
  *
  * @param args - `n` hyperplanes, an integer >= 1, in dimension `d`, an integer from 1 to 1000000
  * @returns the expectations

@@ -44,7 +44,8 @@ export interface LabelArgs {
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
  * Source: "Geometrical and statistical properties of systems of linear inequalities with applications
- * in pattern recognition", IEEE Transactions on Electronic Computers EC-14 (1965) 326-334.
+ * in pattern recognition", IEEE Transactions on Electronic Computers EC-14 (1965) 326-334,
+ * doi:10.1109/PGEC.1965.264137.
  *
  * @example
  * ```ts
@@ -103,7 +104,8 @@ export function logisticFitExists(args: LabelArgs): Probability {
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
  * Source: "Geometrical and statistical properties of systems of linear inequalities with applications
- * in pattern recognition", IEEE Transactions on Electronic Computers EC-14 (1965) 326-334.
+ * in pattern recognition", IEEE Transactions on Electronic Computers EC-14 (1965) 326-334,
+ * doi:10.1109/PGEC.1965.264137.
  *
  * @example
  * ```ts

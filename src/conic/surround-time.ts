@@ -31,7 +31,8 @@ import { wendel } from './wendel.ts';
  * @throws A {@link DomainError} if `d` is missing or out of its domain; `cdf`, `quantile` and `logPdf`
  *   throw it for NaN or a probability outside [0, 1]
  *
- * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111.
+ * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111,
+ * doi:10.7146/math.scand.a-10655.
  *
  * @example
  * ```ts

@@ -44,9 +44,9 @@ export interface OriginInHullArgs {
  *   the stated assumptions; it does not replace a safety review.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
- * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111. Upper
- * bound for other laws: "A continuous analogue of the upper bound theorem", Discrete and Computational
- * Geometry 26 (2001) 205-219.
+ * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111,
+ * doi:10.7146/math.scand.a-10655. Upper bound for other laws: "A continuous analogue of the upper
+ * bound theorem", Discrete and Computational Geometry 26 (2001) 205-219, doi:10.1007/s00454-001-0028-9.
  *
  * @example
  * ```ts

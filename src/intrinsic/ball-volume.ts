@@ -12,7 +12,7 @@ import { logBallIntrinsicVolumeKernel, logBallVolumeKernel } from './ball-kernel
  *
  * $$\kappa_d r^d = \frac{\pi^{d/2}}{\Gamma(\frac d2 + 1)}\, r^d$$
  *
- * Accuracy: the logarithm is within `logError`, a few ulps of its largest term.
+ * Cost: constant. Accuracy: the logarithm is within `logError`, a few ulps of its largest term.
  *
  * Source: NIST Digital Library of Mathematical Functions, 5.19(iii), https://dlmf.nist.gov/5.19.
  *
@@ -39,7 +39,7 @@ export function ballVolume(d: number, radius = 1): LogNumber {
  *
  * $$\omega_d r^{d-1} = d \kappa_d r^{d-1} = \frac{2 \pi^{d/2}}{\Gamma(\frac d2)}\, r^{d-1}$$
  *
- * Accuracy: the logarithm is within `logError`, a few ulps of its largest term.
+ * Cost: constant. Accuracy: the logarithm is within `logError`, a few ulps of its largest term.
  *
  * Source: NIST Digital Library of Mathematical Functions, 5.19(iii), https://dlmf.nist.gov/5.19.
  *
@@ -74,7 +74,7 @@ function scaled(log: number, power: number, radius: number): LogNumber {
  * The k-th intrinsic volume of a body is this times the mean volume of its projections to uniformly
  * random k-dimensional subspaces.
  *
- * Accuracy: the logarithm is within `logError`, a few ulps of its largest term.
+ * Cost: constant. Accuracy: the logarithm is within `logError`, a few ulps of its largest term.
  *
  * Source: Introduction to Geometric Probability, Cambridge University Press (1997).
  *

@@ -92,7 +92,8 @@ export function steinerVolume(body: Body, distance: number): LogNumber {
  *
  * $$w(K) = \frac{2 \kappa_{d-1}}{d \kappa_d} V_1(K)$$
  *
- * Accuracy: relative error at most that of the logarithm of $V_1$ plus 1e-15 for d up to 1000.
+ * Cost: constant. Accuracy: relative error at most that of the logarithm of $V_1$ plus 1e-15 for d up to
+ * 1000.
  *
  * Source: Introduction to Geometric Probability, Cambridge University Press (1997).
  *

@@ -117,8 +117,10 @@ class ActiveSet {
   private readonly most: number;
   private k = 0;
   private readonly atoms: number[] = [];
+  /** Weights, not yet with sum 1, and the least-squares solution that they move to. */
   private readonly u: Float64Array;
   private readonly s: Float64Array;
+  /** The residual. */
   private readonly r: Float64Array;
   /** Orthonormal columns, one after the other. */
   private readonly q: Float64Array;

@@ -33,7 +33,7 @@ export interface CapProbabilityArgs {
  * for every unit vector u; the beta-prime tail is the same function at $w = 1/(1 + h^2)$ with
  * $b = \beta - d/2 - 1$, and the Gaussian one $\Phi(-h)$.
  *
- * Cost: below a microsecond after the first call's fraction, no loop over d. Accuracy: relative error of
+ * Cost: some microseconds, whatever d. Accuracy: relative error of
  * the smaller tail at most 1e-15 + 3e-16 |log| against 40-digit values, for any height.
  *
  * Source: NIST Digital Library of Mathematical Functions, 8.17, https://dlmf.nist.gov/8.17.

@@ -58,8 +58,8 @@ export interface ExpectedFacesArgs extends ExpectedVerticesArgs {
  *   is no formula for the combination
  *
  * Source: Random projections of regular simplices, Discrete & Computational Geometry 7 (1992)
- * 219-226; Angles of random simplices and face numbers of random polytopes, Advances in Mathematics
- * 380 (2021), arXiv:1909.13335.
+ * 219-226, doi:10.1007/BF02187839; Angles of random simplices and face numbers of random polytopes,
+ * Advances in Mathematics 380 (2021), arXiv:1909.13335.
  *
  * @example
  * ```ts

@@ -58,7 +58,7 @@ export interface ExpectedHullIntrinsicVolumeArgs extends ExpectedHullVolumeArgs 
  * up to 2^53; the error of each result is in its `logError`.
  *
  * Source: as for {@link hullVolumeRatio}; for the Gaussian law, The convex hull of a random set of points,
- * Biometrika 52 (1965).
+ * Biometrika 52 (1965), doi:10.1093/biomet/52.3-4.331.
  *
  * @param args - `n`: an integer >= 0 or a `LogNumber`; `d`: an integer from 1 to a million; `law`: any
  * law; `hull`: `'plain'`, `'symmetric'` or `'withCentre'`

@@ -65,8 +65,8 @@ export interface ProjectedFaces {
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
  * Source: Random projections of regular simplices, Discrete & Computational Geometry 7 (1992)
- * 219-226; Counting faces of randomly projected polytopes when the projection radically lowers
- * dimension, Journal of the American Mathematical Society 22 (2009), arXiv:math/0607364; Counting the
+ * 219-226, doi:10.1007/BF02187839; Counting faces of randomly projected polytopes when the projection
+ * radically lowers dimension, Journal of the American Mathematical Society 22 (2009), arXiv:math/0607364; Counting the
  * faces of randomly-projected hypercubes and orthants, with applications, Discrete & Computational
  * Geometry 43 (2010), arXiv:0807.3590.
  *

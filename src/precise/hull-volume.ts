@@ -86,7 +86,8 @@ export interface HullVolumeRatioDecimalArgs {
  *
  * Source: "Expected intrinsic volumes and facet numbers of random beta-polytopes", Mathematische
  * Nachrichten 292 (2019), arXiv:1707.02253. Quadrature: "Double exponential formulas for numerical
- * integration", Publications of the Research Institute for Mathematical Sciences 9 (1974) 721-741.
+ * integration", Publications of the Research Institute for Mathematical Sciences 9 (1974) 721-741,
+ * doi:10.2977/prims/1195192451.
  *
  * @example
  * ```ts

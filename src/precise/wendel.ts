@@ -72,7 +72,8 @@ export interface OriginInHullDecimalArgs {
  *   largest n.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
- * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111.
+ * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111,
+ * doi:10.7146/math.scand.a-10655.
  *
  * @example
  * ```ts
@@ -105,7 +106,8 @@ export function originInHullExact(args: OriginInHullExactArgs): ExactProbability
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
  * Source: "Geometrical and statistical properties of systems of linear inequalities with applications
- * in pattern recognition", IEEE Transactions on Electronic Computers EC-14 (1965) 326-334.
+ * in pattern recognition", IEEE Transactions on Electronic Computers EC-14 (1965) 326-334,
+ * doi:10.1109/PGEC.1965.264137.
  *
  * @example
  * ```ts
@@ -141,7 +143,8 @@ export function dichotomyCountExact(args: DichotomyCountExactArgs): bigint {
  *   about a second for 1,000 digits at the largest n.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain
  *
- * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111.
+ * Source: "A problem in geometric probability", Mathematica Scandinavica 11 (1962) 109-111,
+ * doi:10.7146/math.scand.a-10655.
  *
  * @example
  * ```ts
