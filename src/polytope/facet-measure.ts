@@ -200,7 +200,8 @@ export function facetsBeyond(
   const start = form.at(0);
   if (start < UNRESOLVED && !(integral.log > UNRESOLVED)) {
     // neighbouring doubles are too far apart for an integral; it is the value at the cut over a slope
-    const error = 64 - 8 * EPSILON * start;
+    const digits = 2 + Math.abs(count.log) + Math.abs(model.tail.logTail);
+    const error = 64 - 4 * EPSILON * digits * start;
     return { log: form.constant + start, error, commonError: 0, means };
   }
   if (integral.log === Number.NEGATIVE_INFINITY) {

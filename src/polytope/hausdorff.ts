@@ -10,6 +10,8 @@ import { checkProbability } from '../special/probability-argument.ts';
 import { MAX_EULER_DIMENSION } from './euler-characteristic.ts';
 import {
   circleExceedance,
+  DEEPEST,
+  distanceAt,
   EULER_ERROR,
   estimatedMean,
   type HoleEstimate,
@@ -177,19 +179,18 @@ function guarantee(d: number, beta: number, count: ResolvedCount, confidence: Pr
     const circle = d === 2 && beta === -1 ? circleExceedance(count, t) : null;
     if (circle !== null) return circle.log <= goal;
     const { log, error } = logExceedanceBound(d, beta, count, t, true);
-    return log + error <= goal;
+    return log === Number.NEGATIVE_INFINITY || log + error <= goal;
   };
   if (!holds(1)) return bisect(holds, 1, 2);
   // by the argument atanh(1 - t), so that small distances keep their digits
-  const distance = (s: number): number => 2 / (1 + Math.exp(2 * s));
   let low = 0;
   let high = 1 / Math.sqrt(beta + (d + 1) / 2);
-  while (holds(distance(high))) {
+  while (holds(distanceAt(high))) {
+    if (high === DEEPEST) return distanceAt(high);
     low = high;
-    high *= 2;
-    if (high > 350) return distance(low);
+    high = Math.min(2 * high, DEEPEST);
   }
-  return distance(-bisect((s) => holds(distance(-s)), -high, -low));
+  return distanceAt(-bisect((s) => holds(distanceAt(-s)), -high, -low));
 }
 
 /** The least x in (low, high] with a property that holds at high and, once it holds, stays. */

@@ -37,6 +37,12 @@ export function logOutside(inside: Probability): LogBound {
   return { log: logComplement, error };
 }
 
+/** What the error of one term adds to that of the logarithm of a sum; of a term that vanishes, nothing. */
+function errorShare(term: LogBound, logSum: number): number {
+  const share = Math.exp(term.log - logSum);
+  return share > 0 ? term.error * share : 0;
+}
+
 /** log of the probability that the foot of the perpendicular from 0 lies in the typical facet, d >= 2. */
 export function logFootInFacet(d: number, beta: number): number {
   const m = d - 1;
@@ -60,8 +66,7 @@ export function logHoleCount(d: number, beta: number, count: ResolvedCount, gap:
   const rounding = EPSILON * (4 + 2 * Math.abs(foot));
   if (!(below.log > negative.log)) return { log: Number.NEGATIVE_INFINITY, error: 0 };
   const log = logSubExpKernel(below.log, negative.log);
-  const lost = Math.exp(below.log - log);
-  const error = below.error * lost + negative.error * Math.exp(negative.log - log);
+  const error = errorShare(below, log) + errorShare(negative, log);
   return { log: foot + log, error: error + rounding };
 }
 
@@ -93,8 +98,7 @@ export function logUpperBound(
   if (!(log < 0)) return certain;
   if (log === Number.NEGATIVE_INFINITY) return { log, error: Number.POSITIVE_INFINITY };
   // each by its share: the difference of counts in `holes` has few digits where h is tiny
-  const error =
-    holes.error * Math.exp(holes.log - log) + outside.error * Math.exp(outside.log - log);
+  const error = errorShare(holes, log) + errorShare(outside, log);
   return { log, error: error + 4 * EPSILON + EPSILON * Math.abs(log) };
 }
 
@@ -115,9 +119,8 @@ export function logLowerBound(
   // quadrature and the rounding of n log F, which a bound from below must not exceed
   const log = Math.min(0, Math.max(...bounds));
   if (outside.log >= log) return outside;
-  const exponent = count.n * Math.abs(tail.logOther);
-  const error = 1e-8 + EPSILON * (Number.isFinite(exponent) ? 8 * exponent : 0);
-  return { log, error };
+  const digits = tail.logTail < -30 ? 8 + 2 * (count.log - tail.logTail) : 8;
+  return { log, error: 1e-8 - EPSILON * digits * logAllBelow(tail, count) };
 }
 
 /** log F^n. */

@@ -43,6 +43,25 @@ describe('hausdorffDistance', () => {
     expect(upper.log).toBeCloseTo(originInHull({ n: 800, d: 8 }).logComplement, 9);
   });
 
+  it('knows distances far below every double, and says so', () => {
+    const law = uniformSphere();
+    const args = { n: LogNumber.fromLog(1000), d: 3, law };
+    const distance = hausdorffDistance(args);
+    // all are about e^-1000, and a guarantee is on the safe side
+    for (const t of [distance.approxMean, distance.guarantee(0.5), distance.guarantee(0.99)]) {
+      expect(t).toBeGreaterThan(0);
+      expect(t).toBeLessThan(1e-322);
+    }
+    // n times a cap of probability 5e-301: e^1000 has its digits to the rounding of 1000
+    const { upper, lower } = distance.exceedance(1e-300);
+    for (const p of [upper, lower]) {
+      expect(Math.abs(p.log + 9.8503555700852349e133)).toBeLessThan(p.logError);
+      expect(p.logError).toBeLessThan(2e-12 * Math.abs(p.log));
+    }
+    const near = hausdorffDistance({ n: LogNumber.fromLog(700), d: 3, law });
+    expect(near.guarantee(0.5) / near.approxMean).toBeCloseTo(1, 2);
+  });
+
   it('orders lower bound, estimate and upper bound', () => {
     fc.assert(
       fc.property(
