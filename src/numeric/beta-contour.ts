@@ -19,6 +19,7 @@
  */
 import { EPSILON } from '../epsilon.ts';
 import type { BetaTail } from './beta-tail.ts';
+import { integrateSmooth, RULE_POINTS, ruleNode, ruleWeight } from './gauss-legendre.ts';
 import { trapezoidError } from './orthant-peak.ts';
 
 const CUT = -41;
@@ -27,23 +28,13 @@ const MAX_NODES = 20_000;
 /** Halvings of the step, which the real path needs where its peak is narrower than thought. */
 const MAX_REFINEMENTS = 5;
 
-/** From this p on sinh^p is too steep for a panel as long as a step. */
+/** From this p on sinh^p is too steep for a panel as long as a step, but its series is short. */
 const MARCH_LIMIT = 40;
+/** So it is for tanh(x)^2 below this. */
+const SERIES_LIMIT = 0.4;
 
 /** Above this e the saddle is too near the end of the interval, or does not exist. */
 const NO_SADDLE = -0.3;
-
-/** Positive half of the 20-point Gauss-Legendre rule on (-1, 1). */
-const GAUSS_NODES: readonly number[] = [
-  0.076526521133497334, 0.22778585114164508, 0.37370608871541956, 0.5108670019508271,
-  0.63605368072651503, 0.74633190646015079, 0.83911697182221882, 0.91223442825132591,
-  0.96397192727791379, 0.99312859918509492,
-];
-const GAUSS_WEIGHTS: readonly number[] = [
-  0.15275338713072585, 0.14917298647260375, 0.14209610931838205, 0.13168863844917663,
-  0.11819453196151842, 0.10193011981724044, 0.083276741576704749, 0.062672048334109064,
-  0.040601429800386941, 0.017614007139152118,
-];
 
 /**
  * Writes the logarithm of the modulus of ((p + 1) / c)^M times the integral to `out[0]`, a bound on its
@@ -126,14 +117,10 @@ function throughSaddle(
     const nextArg = Math.atan((h / cosine) * Math.tanh(next));
     let sumRe = 0;
     let sumIm = 0;
-    const half = 0.5 * (next - x);
-    const middle = x + half;
-    for (let i = 0; i < 20; i++) {
-      const node = i < 10 ? (GAUSS_NODES[i] as number) : -(GAUSS_NODES[i - 10] as number);
-      const weight = GAUSS_WEIGHTS[i < 10 ? i : i - 10] as number;
-      const t = middle + half * node;
+    for (let i = 0; i < RULE_POINTS; i++) {
+      const t = ruleNode(i, x, next);
       const s = Math.sinh(t) / cosine;
-      const modulus = weight * Math.exp(p * (0.5 * Math.log1p(s * s) - nextLog));
+      const modulus = ruleWeight(i, x, next) * Math.exp(p * (0.5 * Math.log1p(s * s) - nextLog));
       const angle = p * (Math.atan((h / cosine) * Math.tanh(t)) - nextArg);
       sumRe += modulus * Math.cos(angle);
       sumIm += modulus * Math.sin(angle);
@@ -142,8 +129,8 @@ function throughSaddle(
     const turn = p * (argCos - nextArg);
     const c = damping * Math.cos(turn);
     const d = damping * Math.sin(turn);
-    const nextRe = re * c - im * d - (sumIm * half) / R0;
-    im = re * d + im * c + (sumRe * half) / R0;
+    const nextRe = re * c - im * d - sumIm / R0;
+    im = re * d + im * c + sumRe / R0;
     re = nextRe;
     x = next;
     logCos = nextLog;
@@ -233,20 +220,12 @@ function collapsedSum(
     const next = peak * Math.exp(t - shrink);
     const nextLog = logSinhOf(next);
     const tanh = Math.tanh(next);
-    if (p >= MARCH_LIMIT || j === 0) ratio = sinhRatio(p, tanh * tanh);
+    const z = tanh * tanh;
+    if (p >= MARCH_LIMIT || z < SERIES_LIMIT || j === 0) ratio = sinhRatio(p, z);
     else {
-      const half = 0.5 * (next - x);
-      const middle = x + half;
-      let sum = 0;
-      for (let i = 0; i < 10; i++) {
-        const offset = half * (GAUSS_NODES[i] as number);
-        const pair =
-          Math.exp(p * (logSinhOf(middle + offset) - nextLog)) +
-          Math.exp(p * (logSinhOf(middle - offset) - nextLog));
-        sum += (GAUSS_WEIGHTS[i] as number) * pair;
-      }
+      const steep = (y: number): number => Math.exp(p * (logSinhOf(y) - nextLog));
       const before = ratio * Math.tanh(x) * Math.exp(p * (logSinh - nextLog));
-      ratio = (before + (p + 1) * sum * half) / tanh;
+      ratio = (before + (p + 1) * integrateSmooth(steep, x, next)) / tanh;
     }
     x = next;
     logSinh = nextLog;

@@ -18,9 +18,18 @@ export type LogTerm = (index: number, error: Float64Array) => number;
 
 const CUT = 41;
 
+/** So many terms are taken one by one before panels are tried, and where the shortest one fails. */
+const SINGLE = 24;
+/** Nodes of a panel, and the length of the shortest in terms. */
+const NODES = 13;
+const SHORTEST = 32;
+
 /**
  * Logarithm of the sum of the terms at start, start + step, .. as far as `end`, for a sequence that
  * rises at most once and then falls; writes a bound on its absolute error to `error[0]`.
+ *
+ * Beyond the first terms the logarithms are interpolated on panels that double in length, each checked
+ * at a term between its nodes.
  */
 export function logOutwardSum(
   term: LogTerm,
@@ -33,20 +42,52 @@ export function logOutwardSum(
   let sum = 0;
   let weightedError = 0;
   let count = 0;
-  for (let index = start; step > 0 ? index <= end : index >= end; index += step) {
-    const log = term(index, error);
+  /** Whether the terms have become negligible. */
+  const add = (log: number, bound: number): boolean => {
     count++;
     if (log > top) {
       const scale = Math.exp(top - log);
       sum = sum * scale + 1;
-      weightedError = weightedError * scale + (error[0] as number);
+      weightedError = weightedError * scale + bound;
       top = log;
+      return false;
+    }
+    const share = log > Number.NEGATIVE_INFINITY ? Math.exp(log - top) : 0;
+    sum += share;
+    weightedError += share * bound;
+    return log < top - CUT;
+  };
+  const terms = Math.floor((end - start) / step) + 1;
+  const nodes = new Float64Array(NODES);
+  const logs = new Float64Array(NODES);
+  let length = SHORTEST;
+  let single = SINGLE;
+  let done = false;
+  for (let j = 0; j < terms && !done; ) {
+    while (j + length >= terms && length > SHORTEST) length /= 2;
+    if (single > 0 || j + length >= terms) {
+      done = add(term(start + j * step, error), error[0] as number);
+      j++;
+      single--;
       continue;
     }
-    if (log < top - CUT) break;
-    const share = Math.exp(log - top);
-    sum += share;
-    weightedError += share * (error[0] as number);
+    let bound = 0;
+    for (let i = 0; i < NODES; i++) {
+      nodes[i] = Math.round(0.5 * length * (1 - Math.cos((Math.PI * i) / (NODES - 1))));
+      logs[i] = term(start + (j + (nodes[i] as number)) * step, error);
+      bound = Math.max(bound, error[0] as number);
+    }
+    const between = Math.round(0.28 * length);
+    const exact = term(start + (j + between) * step, error);
+    const miss = Math.abs(interpolate(nodes, logs, between) - exact);
+    if (miss <= 1e-14 + 0.2 * bound) {
+      for (let i = 0; i <= length && !done; i++) {
+        done = add(interpolate(nodes, logs, i), bound + 2 * miss);
+      }
+      j += length + 1;
+      length *= 2;
+    } else if (length > SHORTEST) length /= 2;
+    else single = SINGLE;
   }
   if (sum === 0) {
     error[0] = 0;
@@ -55,6 +96,23 @@ export function logOutwardSum(
   error[0] = weightedError / sum + EPSILON * (4 + 0.5 * count);
   return top + Math.log(sum);
 }
+
+/** The polynomial through the given values at x: Neville's scheme. */
+function interpolate(nodes: Float64Array, values: Float64Array, x: number): number {
+  const table = SCHEME;
+  table.set(values);
+  const size = nodes.length;
+  for (let k = 1; k < size; k++) {
+    for (let i = 0; i + k < size; i++) {
+      const a = nodes[i] as number;
+      const b = nodes[i + k] as number;
+      table[i] = ((x - a) * (table[i + 1] as number) + (b - x) * (table[i] as number)) / (b - a);
+    }
+  }
+  return table[0] as number;
+}
+
+const SCHEME: Float64Array = /* @__PURE__ */ new Float64Array(NODES);
 
 /**
  * The probability with value 2 (v_(d+1) + v_(d+3) + ..) and complement 2 (v_(d-1) + v_(d-3) + ..).

@@ -6,25 +6,23 @@
  *   E f = 2 (T_d + T_(d-2) + ..),  C(n, v) - E f = 2 (T_(d+2) + T_(d+4) + ..),  T_m = I_(n,m) J_(m,v),
  *
  * and the next point is outside the hull of n points with probability E f / (n + 1) at n + 1 points
- * and v = 1. The terms m <= d are positive; for the beta law those beyond m = alpha + 3 vanish or
- * alternate in sign, but fall so fast that nothing cancels.
+ * and v = 1. The terms m <= d are positive; for the beta law those beyond m = alpha + 2 vanish or
+ * alternate in sign, and near the sphere they hardly fall before they grow without bound, up to m = n.
  */
 
 import { wendel } from '../conic/wendel.ts';
 import type { ResolvedCount } from '../count.ts';
 import { EPSILON } from '../epsilon.ts';
 import { type BetaLaw, excessOf, type ResolvedBetaPrimeLaw } from '../law.ts';
+import { alternatingSum } from '../numeric/alternating-sum.ts';
 import { BetaAngles } from '../numeric/beta-angles.ts';
-import { logOutwardSum, probabilityFromSum } from '../numeric/parity-split.ts';
+import { type LogTerm, logOutwardSum, probabilityFromSum } from '../numeric/parity-split.ts';
 import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { logChoices } from './gaussian-faces.ts';
 import { membershipOnLine } from './line.ts';
 
-const CUT = 41;
 /** log 0.75: a sum above it is most of the probability, and the other side is to be summed. */
 const MOSTLY = -0.2876820724517809;
-/** The sum over m is given up beyond d + this. */
-const MAX_SPAN = 1200;
 
 /** alpha = 2b + d or 2b - d. */
 export function alphaOf(law: BetaLaw | ResolvedBetaPrimeLaw, d: number): number {
@@ -48,8 +46,10 @@ export function betaMembership(
   const rounding = EPSILON * (2 + next.log);
   if (angles.logTerm(next, d + 2, 1, error) < angles.logTerm(next, d, 1, error)) {
     const logInside = Math.LN2 + logLoss(angles, next, d, error) - next.log;
-    if ((error[0] as number) < Number.POSITIVE_INFINITY && logInside < MOSTLY) {
-      return probabilityFromSum(logInside, 'lower', (error[0] as number) + rounding);
+    const bound = (error[0] as number) + rounding;
+    // where one minus the other sum is as good, it is the safer one
+    if (logInside < MOSTLY && bound * Math.exp(logInside) < 1e-15 * (50 + 20 * d)) {
+      return probabilityFromSum(logInside, 'lower', bound);
     }
   }
   const logOutside =
@@ -63,36 +63,31 @@ export function betaMembership(
 
 /**
  * log of the sum over m = d + 2, d + 4, .. of the terms for v = 1: half of n - E f. Writes a bound on
- * its error to `error[0]`: `Infinity` if one minus the other sum would be as good, as it is for laws
- * near the sphere, whose continued terms alternate and hardly fall.
+ * its error to `error[0]`, `Infinity` if there is none.
  */
 function logLoss(angles: BetaAngles, count: ResolvedCount, d: number, error: Float64Array): number {
-  let top = Number.NEGATIVE_INFINITY;
-  let sum = 0;
-  let bound = 0;
-  let small = 0;
-  // about what the other sum leaves
-  const absolute = 1e-15 * (50 + 20 * d);
-  for (let m = d + 2; m <= count.n; m += 2) {
-    const log = angles.logTerm(count, m, 1, error);
-    if (log > top) {
-      const scale = Math.exp(top - log);
-      sum *= scale;
-      bound *= scale;
-      top = log;
-    }
-    const term = angles.sign === 0 ? 0 : Math.exp(log - top);
-    sum += angles.sign * term;
-    bound += term * (error[0] as number);
-    // A continued term may vanish by itself, so two small ones in a row end the sum.
-    small = log < top - CUT ? small + 1 : 0;
-    if (small === 2) break;
-    if (m > d + MAX_SPAN || 2 * bound * Math.exp(top - count.log) > absolute) {
-      error[0] = Number.POSITIVE_INFINITY;
-      return Number.NEGATIVE_INFINITY;
-    }
+  const { alpha, family } = angles;
+  const { n } = count;
+  const beta = family === 'beta';
+  const term: LogTerm = (m, e) => angles.logTerm(count, m, 1, e);
+  const positive = logOutwardSum(term, d + 2, 2, beta ? Math.min(n, alpha + 2) : n, error);
+  const first = d + 4 + 2 * Math.floor((alpha - d) / 2);
+  if (!beta || first > n) return positive;
+  const bound = error[0] as number;
+  const top = Math.max(positive, term(first, error));
+  if (angles.sign === 0) {
+    error[0] = bound;
+    return positive;
   }
-  error[0] = sum > 2 * bound ? -Math.log1p(-bound / sum) + 4 * EPSILON : Number.POSITIVE_INFINITY;
+  const head = Math.exp(positive - top);
+  const rest = alternatingSum((i) => {
+    const m = first + 2 * i;
+    if (m > n) return 0;
+    return Math.exp(term(m, error) - top) * angles.sign;
+  }, error);
+  const sum = head + rest;
+  const total = bound * head + (error[0] as number);
+  error[0] = sum > 2 * total ? -Math.log1p(-total / sum) + 4 * EPSILON : Number.POSITIVE_INFINITY;
   return sum > 0 ? top + Math.log(sum) : Number.NEGATIVE_INFINITY;
 }
 
