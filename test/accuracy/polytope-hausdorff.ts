@@ -10,6 +10,12 @@ const distanceOf = (args: RowArgs): number => Number((1 - Number(args.h)).toPrec
 
 const gapOf = (args: RowArgs): number => 1 - Math.abs(Number(args.h));
 
+const sampleOf = (args: RowArgs) => ({ n: countOf(args), d: args.d, law: lawOf('beta', args) });
+
+/** P(d_H <= 1 - h) on the circle, where it is exact. */
+const circle = (args: RowArgs) =>
+  hausdorffWithin({ ...sampleOf(args), d: 2, distance: distanceOf(args) });
+
 export const hausdorffChecks: readonly AccuracyCheck[] = [
   {
     name: 'hausdorffDistance, foot in facet (log)',
@@ -46,37 +52,21 @@ export const hausdorffChecks: readonly AccuracyCheck[] = [
     name: 'hausdorffDistance.exceedance.exact.log (beyond 1)',
     cases: casesOf(['beta.hausdorffExceedanceExact'], 'log', () => 'all'),
     compute: (args: RowArgs) =>
-      hausdorffDistance({
-        n: countOf(args) as number,
-        d: args.d,
-        law: lawOf('beta', args),
-      }).exceedance(1 - Number(args.h)).exact?.log ?? Number.NaN,
+      hausdorffDistance(sampleOf(args)).exceedance(1 - Number(args.h)).exact?.log ?? Number.NaN,
     measure: 'log',
     bound: 2e-15,
   },
   {
-    name: 'hausdorffWithin.logComplement (circle, exact)',
+    name: 'hausdorffWithin.complement (circle, exact)',
     cases: casesOf(['sphere.circleHausdorffExceedance'], 'value', () => 'value'),
-    compute: (args: RowArgs) =>
-      hausdorffWithin({
-        n: countOf(args),
-        d: 2,
-        distance: distanceOf(args),
-        law: lawOf('beta', args),
-      }).complement,
+    compute: (args: RowArgs) => circle(args).complement,
     measure: 'relative',
     bound: 3e-14,
   },
   {
     name: 'hausdorffWithin.value (circle, exact)',
     cases: casesOf(['sphere.circleHausdorffExceedance'], 'complement', () => 'complement'),
-    compute: (args: RowArgs) =>
-      hausdorffWithin({
-        n: countOf(args),
-        d: 2,
-        distance: distanceOf(args),
-        law: lawOf('beta', args),
-      }).value,
+    compute: (args: RowArgs) => circle(args).value,
     measure: 'relative',
     bound: 1e-13,
   },

@@ -126,14 +126,14 @@ export const inverseChecks: readonly AccuracyCheck[] = [
   },
   {
     name: 'incompleteGammaInverse, a < 0.1',
-    cases: [...cases('gammaPInvLog', value, (row) => !wellConditioned(row))],
+    cases: cases('gammaPInvLog', value, (row) => !wellConditioned(row)),
     compute: (a: number, logP: number) => incompleteGammaInverse(a, Probability.fromLog(logP)),
     measure: 'relative',
     bound: 1e-15,
   },
   {
     name: 'incompleteGammaInverse, a < 0.1, upper tail given',
-    cases: [...cases('gammaQInvLog', value, (row) => !wellConditioned(row))],
+    cases: cases('gammaQInvLog', value, (row) => !wellConditioned(row)),
     compute: (a: number, logQ: number) =>
       incompleteGammaInverse(a, Probability.fromLogComplement(logQ)),
     measure: 'relative',
