@@ -113,10 +113,13 @@ export function estimatedMean(
   estimate: HoleEstimate,
 ): number {
   const start = 0.5 * (Math.log(2 - estimate.leastGap) - Math.log(estimate.leastGap));
-  const step = 0.25 / (beta + (d + 1) / 2);
+  const steepness = beta + (d + 1) / 2;
   let total = estimate.leastGap;
-  for (let s = start; s > 0; s -= step) {
-    const from = Math.max(0, s - step);
+  let from = start;
+  for (let s = start; s > 0; s = from) {
+    // the tail of a coordinate falls by a factor over 1/steepness near the sphere, and as a normal one inside
+    const slope = steepness * Math.min(1, Math.max(Math.tanh(s), 1 / Math.sqrt(steepness)));
+    from = Math.max(0, s - 0.25 / slope);
     let piece = 0;
     for (let i = 0; i < RULE_POINTS; i++) {
       const node = ruleNode(i, from, s);
