@@ -36,13 +36,13 @@ const rows: readonly GammaRow[] = [
   ...readTable<GammaRow>('special-gamma'),
 ];
 
-type Pick = (row: GammaRow) => string | undefined;
-const value: Pick = (row) => row.exact;
-const log: Pick = (row) => row.log;
+type Field = (row: GammaRow) => string | undefined;
+const value: Field = (row) => row.exact;
+const log: Field = (row) => row.log;
 
 function cases(
   fn: string,
-  pick: Pick,
+  pick: Field,
   keep: (row: GammaRow) => boolean = () => true,
 ): readonly AccuracyCase[] {
   return rows.flatMap((row) => {
@@ -59,101 +59,81 @@ const isSmall = (row: GammaRow): boolean => Number(row.log) <= -Math.LN2;
 const isLarge = (row: GammaRow): boolean =>
   !isSmall(row) && normal(row) && -Number(row.log) > 1e-300;
 
-const P = (a: number, x: number): Probability => incompleteGamma(a, x);
+/** One field of {@link incompleteGamma}: P is tabulated for the lower tail, Q for the upper one. */
+const ofField = (
+  field: 'value' | 'complement' | 'log' | 'logComplement',
+  part: string,
+  keep: (row: GammaRow) => boolean,
+  measure: AccuracyCheck['measure'],
+  bound: number,
+): AccuracyCheck => ({
+  name: `incompleteGamma.${field}${part}`,
+  cases: cases(
+    field === 'value' || field === 'log' ? 'gammaP' : 'gammaQ',
+    field === 'value' || field === 'complement' ? value : log,
+    keep,
+  ),
+  compute: (a: number, x: number) => incompleteGamma(a, x)[field],
+  measure,
+  bound,
+});
 
 export const incompleteGammaChecks: readonly AccuracyCheck[] = [
-  {
-    name: 'incompleteGamma.value',
-    cases: cases('gammaP', value, normal),
-    compute: (a: number, x: number) => P(a, x).value,
-    measure: 'relative',
-    bound: 1.6e-15,
-  },
-  {
-    name: 'incompleteGamma.complement',
-    cases: cases('gammaQ', value, normal),
-    compute: (a: number, x: number) => P(a, x).complement,
-    measure: 'relative',
-    bound: 1.6e-15,
-  },
-  {
-    name: 'incompleteGamma.log (small tail)',
-    cases: cases('gammaP', log, isSmall),
-    compute: (a: number, x: number) => P(a, x).log,
-    measure: 'tail',
-    bound: 5e-16,
-  },
-  {
-    name: 'incompleteGamma.logComplement (small tail)',
-    cases: cases('gammaQ', log, isSmall),
-    compute: (a: number, x: number) => P(a, x).logComplement,
-    measure: 'tail',
-    bound: 5e-16,
-  },
-  {
-    name: 'incompleteGamma.log (large tail)',
-    cases: cases('gammaP', log, isLarge),
-    compute: (a: number, x: number) => P(a, x).log,
-    measure: 'relative',
-    bound: 2e-15,
-  },
-  {
-    name: 'incompleteGamma.logComplement (large tail)',
-    cases: cases('gammaQ', log, isLarge),
-    compute: (a: number, x: number) => P(a, x).logComplement,
-    measure: 'relative',
-    bound: 2e-15,
-  },
+  ofField('value', '', normal, 'relative', 1.6e-15),
+  ofField('complement', '', normal, 'relative', 1.6e-15),
+  ofField('log', ' (small tail)', isSmall, 'tail', 5e-16),
+  ofField('logComplement', ' (small tail)', isSmall, 'tail', 5e-16),
+  ofField('log', ' (large tail)', isLarge, 'relative', 2e-15),
+  ofField('logComplement', ' (large tail)', isLarge, 'relative', 2e-15),
 ];
 
 const wellConditioned = (row: GammaRow): boolean => (row.args[0] as number) >= 0.1;
+const illConditioned = (row: GammaRow): boolean => !wellConditioned(row);
+
+/** A quantile from the logarithm of one tail. */
+const ofQuantile = (
+  name: string,
+  given: 'lower' | 'upper',
+  rowsUsed: readonly AccuracyCase[],
+  quantile: (shape: number, p: Probability) => number,
+  bound: number,
+): AccuracyCheck => ({
+  name: `${name}, ${given} tail given`,
+  cases: rowsUsed,
+  compute: (shape: number, logTail: number) =>
+    quantile(
+      shape,
+      given === 'lower' ? Probability.fromLog(logTail) : Probability.fromLogComplement(logTail),
+    ),
+  measure: 'relative',
+  bound,
+});
+
+const gammaTails = {
+  lower: (keep: typeof wellConditioned) => cases('gammaPInvLog', value, keep),
+  upper: (keep: typeof wellConditioned) => cases('gammaQInvLog', value, keep),
+};
+const chiSquared = (df: number, p: Probability): number => chiSquaredQuantile(p, df);
 
 export const inverseChecks: readonly AccuracyCheck[] = [
-  {
-    name: 'incompleteGammaInverse, lower tail given',
-    cases: cases('gammaPInvLog', value, wellConditioned),
-    compute: (a: number, logP: number) => incompleteGammaInverse(a, Probability.fromLog(logP)),
-    measure: 'relative',
-    bound: 1e-15,
-  },
-  {
-    name: 'incompleteGammaInverse, upper tail given',
-    cases: cases('gammaQInvLog', value, wellConditioned),
-    compute: (a: number, logQ: number) =>
-      incompleteGammaInverse(a, Probability.fromLogComplement(logQ)),
-    measure: 'relative',
-    bound: 5e-15,
-  },
-  {
-    name: 'incompleteGammaInverse, a < 0.1',
-    cases: cases('gammaPInvLog', value, (row) => !wellConditioned(row)),
-    compute: (a: number, logP: number) => incompleteGammaInverse(a, Probability.fromLog(logP)),
-    measure: 'relative',
-    bound: 1e-15,
-  },
-  {
-    name: 'incompleteGammaInverse, a < 0.1, upper tail given',
-    cases: cases('gammaQInvLog', value, (row) => !wellConditioned(row)),
-    compute: (a: number, logQ: number) =>
-      incompleteGammaInverse(a, Probability.fromLogComplement(logQ)),
-    measure: 'relative',
-    bound: 6e-15,
-  },
-  {
-    name: 'chiSquaredQuantile, lower tail given',
-    cases: cases('chi2QuantileLogP', value),
-    compute: (df: number, logP: number) => chiSquaredQuantile(Probability.fromLog(logP), df),
-    measure: 'relative',
-    bound: 1e-15,
-  },
-  {
-    name: 'chiSquaredQuantile, upper tail given',
-    cases: cases('chi2QuantileLogQ', value),
-    compute: (df: number, logQ: number) =>
-      chiSquaredQuantile(Probability.fromLogComplement(logQ), df),
-    measure: 'relative',
-    bound: 1e-15,
-  },
+  ...(
+    [
+      ['', wellConditioned, 'lower', 1e-15],
+      ['', wellConditioned, 'upper', 5e-15],
+      [', a < 0.1', illConditioned, 'lower', 1e-15],
+      [', a < 0.1', illConditioned, 'upper', 6e-15],
+    ] as const
+  ).map(([part, keep, tail, bound]) =>
+    ofQuantile(
+      `incompleteGammaInverse${part}`,
+      tail,
+      gammaTails[tail](keep),
+      incompleteGammaInverse,
+      bound,
+    ),
+  ),
+  ofQuantile('chiSquaredQuantile', 'lower', cases('chi2QuantileLogP', value), chiSquared, 1e-15),
+  ofQuantile('chiSquaredQuantile', 'upper', cases('chi2QuantileLogQ', value), chiSquared, 1e-15),
 ];
 
 /** The real and the imaginary part of every point whose two parts are in the tables. */
@@ -176,78 +156,46 @@ function modulus(testCase: AccuracyCase): number {
   return larger * Math.sqrt((re / larger) ** 2 + (im / larger) ** 2);
 }
 const upper = (row: GammaRow): boolean => (row.args[1] as number) >= 0;
-/** Away from the zero of w that the table approaches to seven digits. */
-const awayFromZero = (row: GammaRow): boolean => bothParts(row) && row.args[0] !== 1.9914668;
+/** The table approaches a zero of w to seven digits. */
+const besideZero = (row: GammaRow): boolean => row.args[0] === 1.9914668;
+const awayFromZero = (row: GammaRow): boolean => bothParts(row) && !besideZero(row);
+
+const ofPart = (
+  part: 're' | 'im',
+  where: string,
+  keep: (row: GammaRow) => boolean,
+  errors: Pick<AccuracyCheck, 'measure' | 'bound' | 'scale'>,
+): AccuracyCheck => ({
+  name: `faddeeva.${part}${where}`,
+  cases: cases(part === 're' ? 'faddeevaRe' : 'faddeevaIm', value, keep),
+  compute: (re: number, im: number) => faddeeva(re, im)[part],
+  ...errors,
+});
+
+const overModulus = { measure: 'absolute', bound: 1e-15, scale: modulus } as const;
+const ofItself = { measure: 'relative', bound: 4e-15 } as const;
 
 export const faddeevaChecks: readonly AccuracyCheck[] = [
-  {
-    name: 'faddeeva.re, error over |w|',
-    cases: cases('faddeevaRe', value, awayFromZero),
-    compute: (re: number, im: number) => faddeeva(re, im).re,
-    measure: 'absolute',
-    bound: 1e-15,
-    scale: modulus,
-  },
-  {
-    name: 'faddeeva.im, error over |w|',
-    cases: cases('faddeevaIm', value, awayFromZero),
-    compute: (re: number, im: number) => faddeeva(re, im).im,
-    measure: 'absolute',
-    bound: 1e-15,
-    scale: modulus,
-  },
-  {
-    name: 'faddeeva.im beside a zero of w',
-    cases: cases('faddeevaIm', value, (row) => row.args[0] === 1.9914668),
-    compute: (re: number, im: number) => faddeeva(re, im).im,
-    measure: 'absolute',
-    bound: 1e-15,
-  },
-  {
-    name: 'faddeeva.re, upper half-plane',
-    cases: cases('faddeevaRe', value, upper),
-    compute: (re: number, im: number) => faddeeva(re, im).re,
-    measure: 'relative',
-    bound: 4e-15,
-  },
-  {
-    name: 'faddeeva.im, upper half-plane',
-    cases: cases('faddeevaIm', value, upper),
-    compute: (re: number, im: number) => faddeeva(re, im).im,
-    measure: 'relative',
-    bound: 4e-15,
-  },
+  ofPart('re', ', error over |w|', awayFromZero, overModulus),
+  ofPart('im', ', error over |w|', awayFromZero, overModulus),
+  ofPart('im', ' beside a zero of w', besideZero, { measure: 'absolute', bound: 1e-15 }),
+  ofPart('re', ', upper half-plane', upper, ofItself),
+  ofPart('im', ', upper half-plane', upper, ofItself),
 ];
 
 const rowable = (row: GammaRow): boolean => (row.args[0] as number) <= 2000;
 
-export const stirlingChecks: readonly AccuracyCheck[] = [
-  {
-    name: 'logStirling1',
-    cases: cases('logStirling1', log),
-    compute: logStirling1,
-    measure: 'relative',
-    bound: 1e-15,
-  },
-  {
-    name: 'logStirlingB',
-    cases: cases('logStirlingB', log),
-    compute: logStirlingB,
-    measure: 'relative',
-    bound: 1e-15,
-  },
-  {
-    name: 'logStirling1Row',
-    cases: cases('logStirling1', log, rowable),
-    compute: (n: number, k: number) => logStirling1Row(n)[k] as number,
-    measure: 'relative',
-    bound: 1e-15,
-  },
-  {
-    name: 'logStirlingBRow',
-    cases: cases('logStirlingB', log, rowable),
-    compute: (n: number, k: number) => logStirlingBRow(n)[k] as number,
-    measure: 'relative',
-    bound: 1e-15,
-  },
-];
+export const stirlingChecks: readonly AccuracyCheck[] = (
+  [
+    ['logStirling1', logStirling1, undefined],
+    ['logStirlingB', logStirlingB, undefined],
+    ['logStirling1', (n: number, k: number) => logStirling1Row(n)[k] as number, rowable],
+    ['logStirlingB', (n: number, k: number) => logStirlingBRow(n)[k] as number, rowable],
+  ] as const
+).map(([table, compute, keep]) => ({
+  name: keep === undefined ? table : `${table}Row`,
+  cases: cases(table, log, keep),
+  compute,
+  measure: 'relative',
+  bound: 1e-15,
+}));

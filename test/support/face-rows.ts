@@ -19,6 +19,7 @@ import { BetaAngles } from '../../src/numeric/beta-angles.ts';
 import { CoordinateSumTransform } from '../../src/numeric/coordinate-sum-transform.ts';
 import { FixedQuerySequence } from '../../src/numeric/fixed-query.ts';
 import { logNegativeOrthantKernel, logPositiveOrthantKernel } from '../../src/numeric/orthant.ts';
+import { complementOf } from '../../src/probability.ts';
 import { logGammaRatioKernel } from '../../src/special/log-gamma.ts';
 import { type NamedRow, readTable } from './reference.ts';
 
@@ -181,14 +182,7 @@ function toRow(row: NamedRow): FaceRow | undefined {
         // For the cube k is the number of free coordinates, the dimension of the face.
         const dimension = polytope === 'cube' ? Number(args.k) : Number(args.k) - 1;
         const { survival } = projectedFaces({ polytope, n: Number(args.N), d, k: dimension });
-        const { value, complement, log, logComplement, logError } = survival;
-        return {
-          value: complement,
-          complement: value,
-          log: logComplement,
-          logComplement: log,
-          logError,
-        } as Probability;
+        return complementOf(survival);
       });
     case 'beta_I':
     case 'beta_J':
