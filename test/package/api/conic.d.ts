@@ -39,6 +39,7 @@ export interface Cone {
     readonly variance: number;
     readonly method: 'exact' | 'simulated';
     readonly standardErrors?: readonly number[];
+    readonly symmetric?: true;
 }
 
 export interface EBarSquaredOptions {

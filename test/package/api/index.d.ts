@@ -61,6 +61,7 @@ export interface Cone {
     readonly variance: number;
     readonly method: 'exact' | 'simulated';
     readonly standardErrors?: readonly number[];
+    readonly symmetric?: true;
 }
 
 export type Count = number | LogNumber;
