@@ -195,7 +195,8 @@ export function expectedFacetsBelow(args: ExpectedFacetsBelowArgs): LogNumber {
     if (above.log < total.log - Math.LN2) {
       // nearly all of them: the integral from far below would lose the digits that the total has
       const share = Math.exp(above.log - total.log);
-      const error = (total.error + share * above.error) / (1 - share);
+      const lost = share > 0 ? share * above.error : 0;
+      const error = (total.error + lost) / (1 - share);
       return LogNumber.fromLog(total.log + Math.log1p(-share), error);
     }
   }
