@@ -19,6 +19,10 @@ import { checkDimension, resolveMarginal } from './hull-options.ts';
 
 const FAMILIES = ['beta', 'gaussian'] as const;
 const MAX_STEPS = 200;
+/** Standard deviations beyond which an integral from the far side would miss the bulk. */
+const FAR = 1e4;
+/** Beyond it exponents overflow. */
+const LARGEST_SQUARE = 1e280;
 
 /** Options of {@link facetHeight}. */
 export interface FacetHeightArgs {
@@ -91,7 +95,8 @@ export function facetHeight(args: FacetHeightArgs): FacetHeight {
     if (Math.abs(x) === Number.POSITIVE_INFINITY || (bounded && Math.abs(x) >= 1)) {
       return certainty(x >= 0);
     }
-    return heightCdf(model, count, x);
+    const offset = (x - mean) / deviation;
+    return Math.abs(offset) < FAR ? heightCdf(model, count, x) : farCdf(model, count, x, offset);
   };
   return Object.freeze({
     mean,
@@ -107,7 +112,7 @@ export function facetHeight(args: FacetHeightArgs): FacetHeight {
     },
     logPdf: (x: number): number => {
       checkNumber('facetHeight.logPdf', 'x', x);
-      if (Math.abs(x) === Number.POSITIVE_INFINITY || (bounded && Math.abs(x) >= 1)) {
+      if ((bounded && Math.abs(x) >= 1) || d * x * x > LARGEST_SQUARE) {
         return Number.NEGATIVE_INFINITY;
       }
       return logFacetDensity(model, count, x) - facetTotal(model, count, 'line').log;
@@ -146,6 +151,18 @@ function heightCdf(model: FacetModel, count: ResolvedCount, x: number): Probabil
   const log = small.log - large.log - Math.log1p(Math.exp(small.log - large.log));
   const error = small.error - small.commonError + large.error - large.commonError;
   return probabilityFromTail(Math.exp(log), log, lower ? 'lower' : 'upper', error);
+}
+
+/** The same so far from the mean that one side has all but nothing. */
+function farCdf(model: FacetModel, count: ResolvedCount, x: number, offset: number): Probability {
+  const side = offset < 0 ? 'lower' : 'upper';
+  if (!(offset * offset < LARGEST_SQUARE)) {
+    return probabilityFromTail(0, Number.NEGATIVE_INFINITY, side, Number.POSITIVE_INFINITY);
+  }
+  const beyond = facetsBeyond(model, count, x, offset < 0 ? -1 : 1);
+  const total = facetTotal(model, count, 'line');
+  const log = Math.min(0, beyond.log - total.log);
+  return probabilityFromTail(Math.exp(log), log, side, beyond.error + total.error);
 }
 
 /**

@@ -207,6 +207,24 @@ describe('facetHeight', () => {
     expect(far.mean / far.limit).toBeGreaterThan(0.999);
   });
 
+  it('keeps its tails as far out as doubles reach', () => {
+    const law = facetHeight({ n: 74, d: 9, law: gaussian() });
+    for (const x of [-1e3, -1e8, -1e111]) expect(law.cdf(x).log / (-37 * x * x)).toBeCloseTo(1, 3);
+    for (const x of [1e3, 1e8, 1e111]) {
+      expect(law.cdf(x).logComplement / (-4.5 * x * x)).toBeCloseTo(1, 3);
+    }
+    for (const x of [-1e160, 1e160]) {
+      expect(law.cdf(x).value).toBe(x < 0 ? 0 : 1);
+      expect(law.cdf(x).logError).toBe(Number.POSITIVE_INFINITY);
+      expect(law.logPdf(x)).toBe(Number.NEGATIVE_INFINITY);
+    }
+    // the two ways meet
+    const far = law.mean + 1e4 * Math.sqrt(law.variance);
+    const [before, after] = [law.cdf(far * (1 - 1e-9)), law.cdf(far * (1 + 1e-9))];
+    const slope = (before.logComplement - after.logComplement) / (9 * far * far * 2e-9);
+    expect(slope).toBeCloseTo(1, 2);
+  });
+
   it('ends at the ends', () => {
     const height = facetHeight({ n: 10, d: 3, law: uniformBall() });
     expect(height.cdf(-1).value).toBe(0);
