@@ -24,16 +24,35 @@ export function largestSpacingTail(n: number, a: number, out: Float64Array): boo
   out[1] = 0;
   if (a >= 1) return false;
   if (n * a <= 1) return true;
+  if (n * a < 2) return smallerTail(logReflected(n, a, out), out);
   const logFirst = Math.log(n) + (n - 1) * Math.log1p(-a);
-  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, logFirst, out);
-  const log = logAllShort(n, a, out);
-  if (log < -Math.LN2) {
-    out[0] = log;
-    return true;
+  if (logFirst === Number.NEGATIVE_INFINITY) {
+    out[1] = Number.POSITIVE_INFINITY;
+    return false;
   }
-  out[1] = ((out[1] as number) * Math.exp(log)) / -Math.expm1(log);
+  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, logFirst, out);
+  return smallerTail(logAllShort(n, a, out), out);
+}
+
+/** Writes the smaller tail where log P(all <= a) has the error out[1]; true when it is that. */
+function smallerTail(log: number, out: Float64Array): boolean {
+  out[0] = log;
+  if (log < -Math.LN2) return true;
+  const complement = -Math.expm1(log);
+  if (complement > 0) out[1] = ((out[1] as number) * Math.exp(log)) / complement;
   out[0] = log1mExpKernel(log);
   return false;
+}
+
+/** log P(all <= a) for n a < 2: with x -> a - x the spacings are those of a circle of length n a - 1. */
+function logReflected(n: number, a: number, out: Float64Array): number {
+  const rest = n * a - 1;
+  const short = largestSpacingTail(n, a / rest, out);
+  const inner = short ? (out[0] as number) : log1mExpKernel(out[0] as number);
+  const share = short ? 1 : Math.exp((out[0] as number) - inner);
+  const error = share > 0 ? share * (out[1] as number) : 0;
+  out[1] = error + EPSILON * n * (2 / rest + Math.abs(Math.log(rest)));
+  return (n - 1) * Math.log(rest) + inner;
 }
 
 function alternatingSum(n: number, a: number, logFirst: number, out: Float64Array): boolean {
@@ -49,10 +68,16 @@ function alternatingSum(n: number, a: number, logFirst: number, out: Float64Arra
     error += term * EPSILON * (3 + 2 * (logChoices - logEach) + k);
     if (term < 1e-20 * sum && n > FEW) break;
   }
-  const above = scale < -1 || Math.exp(scale) * sum <= 0.5;
-  const tail = above ? sum : Math.max(1 - Math.exp(scale) * sum, 0);
-  const rounding = above ? error : Math.exp(scale) * error;
-  out[0] = (above ? scale : 0) + Math.log(Math.max(tail, rounding));
+  if (scale < -1) {
+    // the first term leads, so its logarithm is known as well as its exponent
+    out[0] = scale + Math.log(sum);
+    out[1] = error / sum;
+    return false;
+  }
+  const above = Math.exp(scale) * sum <= 0.5;
+  const tail = above ? Math.exp(scale) * sum : Math.max(1 - Math.exp(scale) * sum, 0);
+  const rounding = Math.exp(scale) * error;
+  out[0] = Math.log(Math.max(tail, rounding));
   // a tail below the rounding of the terms is known to be below it, no more
   out[1] =
     tail > rounding
@@ -61,18 +86,8 @@ function alternatingSum(n: number, a: number, logFirst: number, out: Float64Arra
   return !above;
 }
 
-/** log P(all <= a), 1/n < a < 1, n > 12. */
+/** log P(all <= a), 2/n <= a < 1, n > 12. */
 function logAllShort(n: number, a: number, out: Float64Array): number {
-  if (n * a < 2) {
-    const rest = n * a - 1;
-    const log = (n - 1) * Math.log(rest) + logAllShort(n, a / rest, out);
-    out[1] = (out[1] as number) + EPSILON * n * (2 / rest + Math.abs(Math.log(rest)));
-    return log;
-  }
-  if (a >= 1) {
-    out[1] = 0;
-    return 0;
-  }
   // saddle point n x, x = 1 / (1 + q(x)) with q = n a / (e^(a n x) - 1); q falls in x: bisect, then polish
   const q = (x: number): number => (n * a) / Math.expm1(a * n * x);
   let low = 1e-12;
