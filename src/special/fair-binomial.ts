@@ -67,16 +67,7 @@ export function fairBinomialTail(n: number, k: number, out: Float64Array): boole
   const difference = n - 2 * k;
   const high = difference - 1;
   const low = sumError(n, -2 * k, difference) + sumError(difference, -1, high);
-  if (high === 0 && low === 0) {
-    storeExact(0.5, out);
-    return true;
-  }
-  if (high >= 0) {
-    smallerTail(n, k + 1, n - k, high, low, out);
-    return true;
-  }
-  smallerTail(n, n - k, k + 1, -high, -low, out);
-  return false;
+  return tailOfGap(n, k + 1, n - k, high, low, out);
 }
 
 /**
@@ -84,15 +75,23 @@ export function fairBinomialTail(n: number, k: number, out: Float64Array): boole
  */
 export function fairTailOfPoints(n: number, b: number, out: Float64Array): boolean {
   const gap = n - 2 * b;
-  const low = sumError(n, -2 * b, gap);
-  if (gap === 0 && low === 0) {
-    storeExact(0.5, out);
-    return true;
-  }
   // Above 2^53 one toss more or less is below the rounding of everything but the gap.
-  if (gap > 0) smallerTail(n - 1, b, n - b, gap, low, out);
-  else smallerTail(n - 1, n - b, b, -gap, -low, out);
-  return gap > 0;
+  return tailOfGap(n - 1, b, n - b, gap, sumError(n, -2 * b, gap), out);
+}
+
+/** The smaller one of P[X <= b - 1] and P[X >= b], where a = n + 1 - b and a - b = gap + gapTail. */
+function tailOfGap(
+  n: number,
+  b: number,
+  a: number,
+  gap: number,
+  gapTail: number,
+  out: Float64Array,
+): boolean {
+  if (gap === 0 && gapTail === 0) storeExact(0.5, out);
+  else if (gap >= 0) smallerTail(n, b, a, gap, gapTail, out);
+  else smallerTail(n, a, b, -gap, -gapTail, out);
+  return gap >= 0;
 }
 
 /** P[X <= b - 1], where a = n + 1 - b and a - b = gap + gapTail > 0. */
