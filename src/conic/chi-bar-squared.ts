@@ -141,7 +141,7 @@ function lawOf(
  * @param options - `null`: for a cone only, `'lineality'` or `'origin'`; may be left out if the cone contains
  *   no line
  * @returns the distribution, with `weights` and `pValue`. `cdf(0)` is the mass at 0, and `quantile(p)` is 0
- *   for all p up to it; `logPdf` is that of the continuous part
+ *   for all p up to it, and where it is below 1e-307; `logPdf` is that of the continuous part
  * @remarks Cost: of `cdf`, the incomplete gamma functions of the weights that matter, mostly below 60; of
  *   `quantile`, about ten times that. Accuracy for exact weights: relative error of both tails below 4e-15, of
  *   quantiles below 3e-15; `logError` adds the stated errors of a cone's volumes.

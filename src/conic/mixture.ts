@@ -46,7 +46,7 @@ const SLACK = 1e-9;
 /** Largest number of weights. */
 const MOST_WEIGHTS = 1_000_001;
 /** Sums of numbers above this have lost nothing to underflow: every term is off by 1e-323 at most. */
-const SAFE_VALUE = 1e-300;
+const SAFE_VALUE = 1e-304;
 
 /** Refuses anything but non-negative numbers with sum 1. */
 export function checkWeights(fn: string, weights: unknown): asserts weights is ArrayLike<number> {
@@ -101,8 +101,8 @@ function topOf(logs: readonly number[]): number {
   return top;
 }
 
-/** Quantiles are not told apart below it. */
-const SMALLEST = 1e-300;
+/** A quantile below it is given as 0. */
+const SMALLEST = 1e-307;
 
 /** Value, logarithm, error bound of a sum. */
 const TOTAL: Float64Array = /* @__PURE__ */ new Float64Array(3);
@@ -214,7 +214,7 @@ export function mixtureLogDensity(weights: MixtureWeights, law: Component, x: nu
   return best + Math.log(sum);
 }
 
-/** The smallest x with P(T <= x) >= target. */
+/** The smallest x with P(T <= x) >= target; 0 where that is below {@link SMALLEST}. */
 export function mixtureQuantile(
   weights: MixtureWeights,
   law: Component,
@@ -233,7 +233,7 @@ export function mixtureQuantile(
   let factor = 4;
   for (;;) {
     const x = Math.max(upper.x / factor, SMALLEST);
-    if (x >= upper.x) return upper.x;
+    if (x >= upper.x) return 0;
     const gap = gapAt(x);
     if (gap < 0) return narrow({ lower: { x, gap }, upper }, gapAt, false).upper.x;
     upper = { x, gap };

@@ -343,3 +343,29 @@ describe('simulated order-restricted fits', () => {
     }
   });
 });
+
+describe('far lower tails', () => {
+  it('keep the digits of a tiny mass at 0', () => {
+    for (const law of [
+      chiBarSquared([1e-300, 0, 1]),
+      eBarSquared([1e-300, 0, 1], { observations: 9 }),
+    ]) {
+      expect(law.cdf(0).value).toBe(1e-300);
+      expect(law.cdf(1e-320).value).toBe(1e-300);
+    }
+    // 0.3 (1 - e^(-x/2)) + 0.7 P(chi^2_3 <= x)
+    const value = chiBarSquared([0, 0, 0.3, 0.7]).cdf(1e-300).value;
+    expect(Math.abs(value / 1.5e-301 - 1)).toBeLessThan(4e-15);
+  });
+
+  it('have quantiles to 1e-307, and 0 below', () => {
+    const law = chiBarSquared([0, 0, 0.3, 0.7]);
+    for (const log of [-680, -695, -705]) {
+      // P(T <= x) = 0.3 x/2 here
+      const quantile = law.quantile(Probability.fromLog(log));
+      expect(Math.abs(Math.log(quantile * 0.15) - log)).toBeLessThan(2.3e-13);
+    }
+    expect(law.quantile(Probability.fromLog(-800))).toBe(0);
+    expect(chiBarSquared([0, 1]).quantile(Probability.fromLog(-800))).toBe(0);
+  });
+});
