@@ -10,7 +10,7 @@ import { watch } from './watch.ts';
 const { HULLGAUGE_FUZZ, HULLGAUGE_SEED = '1', HULLGAUGE_CALL, HULLGAUGE_MINUTES } = process.env;
 const long = HULLGAUGE_FUZZ !== undefined || HULLGAUGE_CALL !== undefined;
 const first = Number(HULLGAUGE_CALL ?? 0);
-const count = Number(HULLGAUGE_FUZZ ?? (HULLGAUGE_CALL === undefined ? 6000 : 1));
+const count = Number(HULLGAUGE_FUZZ ?? (HULLGAUGE_CALL === undefined ? 4000 : 1));
 const seed = Number(HULLGAUGE_SEED);
 const minutes = Number(HULLGAUGE_MINUTES ?? 120);
 
@@ -28,7 +28,7 @@ it(
     if (long) console.log(summary(report));
     expect(report.failures.slice(0, 20)).toEqual([]);
     expect(report.unconverged.length).toBeLessThan(Math.max(4, count / 500));
-    if (count < 6000) return;
+    if (count < 4000) return;
     expect(report.silent).toEqual([]);
     expect(report.answers).toBeGreaterThan(report.calls / 2);
     expect(report.comparisons).toBeGreaterThan(report.calls / 5);
@@ -41,7 +41,8 @@ function summary({ calls, answers, comparisons, ...report }: FuzzReport): string
   const unit = millionLogarithms();
   return [
     `seed ${seed}, calls ${first} to ${first + calls - 1}: ${answers} answers, ${comparisons} compared with a second one`,
-    `${report.failures.length} failures, ${report.unconverged.length} unconverged`,
+    `${report.failures.length} failures, ${report.unconverged.length} unconverged; to replay one:`,
+    'HULLGAUGE_SEED=.. HULLGAUGE_CALL=.. npx vitest run --config test/vitest.config.ts test/fuzz',
     ...report.failures.slice(0, 200),
     ...report.unconverged.slice(0, 20),
     'slowest, in times of a million logarithms:',

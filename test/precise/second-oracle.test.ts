@@ -3,18 +3,28 @@
 import process from 'node:process';
 import { Decimal } from 'decimal.js';
 import fc from 'fast-check';
-import { betaLaw, hullVolumeRatio, originInHull, type Probability } from 'hullgauge';
 import {
+  betaLaw,
+  dichotomyCount,
+  hullVolumeRatio,
+  labelSeparability,
+  originInHull,
+  type Probability,
+} from 'hullgauge';
+import {
+  dichotomyCountExact,
   hullVolumeRatioDecimal,
   incompleteBetaDecimal,
   originInHullDecimal,
 } from 'hullgauge/precise';
 import { binomialCdf, incompleteBeta } from 'hullgauge/special';
-import { expect, it } from 'vitest';
+import { expect, it, vi } from 'vitest';
 import { exactDecimal } from '../support/reference.ts';
 
 /** Generated cases of each test; more with the environment variable, as `npm run fuzz` does. */
 const CASES = Number(process.env['HULLGAUGE_CASES'] ?? 150);
+
+vi.setConfig({ testTimeout: 60_000 + 1000 * CASES });
 
 const Wide = Decimal.clone({ precision: 80, defaults: true });
 
@@ -55,6 +65,31 @@ it('originInHull', () => {
     fc.property(sizes, ([n, d]) => {
       const inside = originInHullDecimal({ n, d, digits: 40 });
       check(originInHull({ n, d }), inside, originInHullDecimal({ n, d: n - d, digits: 40 }));
+    }),
+    { numRuns: CASES },
+  );
+});
+
+it('labelSeparability and dichotomyCount', () => {
+  const sizes = fc.tuple(
+    fc.integer({ min: 1, max: 3000 }),
+    fc.double({ min: -4, max: 4, noNaN: true }),
+    fc.boolean(),
+  );
+  fc.assert(
+    fc.property(sizes, ([n, z, intercept]) => {
+      const middle = Math.round(n / 2 + (z * Math.sqrt(n)) / 2);
+      const d = Math.min(n, Math.max(1, middle)) - (intercept ? 1 : 0);
+      const count = dichotomyCountExact({ n, d, intercept });
+      const all = 2n ** BigInt(n);
+      const share = (part: bigint): Decimal => new Wide(`${part}`).div(new Wide(`${all}`));
+      check(labelSeparability({ n, d, intercept }), share(count), share(all - count));
+      const { log, logError } = dichotomyCount({ n, d, intercept });
+      const error = exactDecimal(log)
+        .minus(new Wide(`${count}`).ln())
+        .abs()
+        .toNumber();
+      expect(error).toBeLessThanOrEqual(logError);
     }),
     { numRuns: CASES },
   );
