@@ -62,10 +62,8 @@ export function poissonBinomialTail(runs: readonly BernoulliRun[], k: number): S
     // the product of 1 - 1/j telescopes
     return sumTail(storeQuotient(run.from - 1, run.to, out), out);
   }
-  const denominator = commonDenominator(parts);
-  if (denominator <= 2 ** 53) {
-    return sumTail(storeQuotient(countedTail(parts, size, k), denominator, out), out);
-  }
+  const lower = size <= MOST_COUNTED ? countedTail(parts, size, k, out) : undefined;
+  if (lower !== undefined) return sumTail(lower, out);
   return size <= ENUMERATED ? enumeratedTail(parts, k) : contourTail(parts, size, k);
 }
 
@@ -78,37 +76,38 @@ function sumTail(lower: boolean, out: Float64Array): SumTail {
   };
 }
 
-/** The product of all step j, or something above 2^53. */
-function commonDenominator(runs: readonly BernoulliRun[]): number {
-  let product = 1;
-  for (const { step, from, to, count } of runs) {
-    for (let copy = 0; copy < count; copy++) {
-      for (let j = from; j <= to && product <= 2 ** 53; j++) product *= step * j;
-      if (product > 2 ** 53) return product;
-    }
-  }
-  return product;
-}
+/** So many factors of at least 2 may stay below 2^53. */
+const MOST_COUNTED = 53;
 
-/** P(K <= k) times the product of all step j: whole numbers, from success 1 and failure step j - 1. */
-function countedTail(runs: readonly BernoulliRun[], size: number, k: number): number {
+/**
+ * Stores the smaller tail from whole numbers over the product of all step j, where success counts 1 and
+ * failure step j - 1, and returns whether it is P(K <= k); undefined if the product exceeds 2^53.
+ */
+function countedTail(
+  runs: readonly BernoulliRun[],
+  size: number,
+  k: number,
+  out: Float64Array,
+): boolean | undefined {
   const counts = new Float64Array(size + 1);
   counts[0] = 1;
-  let filled = 0;
+  let denominator = 1;
   for (const { step, from, to, count } of runs) {
     for (let copy = 0; copy < count; copy++) {
       for (let j = from; j <= to; j++) {
-        filled++;
-        for (let i = filled; i > 0; i--) {
-          counts[i] = (counts[i] as number) * (step * j - 1) + (counts[i - 1] as number);
+        denominator *= step * j;
+        if (denominator > 2 ** 53) return undefined;
+        for (let i = size; i >= 0; i--) {
+          counts[i] = (counts[i] as number) * (step * j - 1) + (counts[i - 1] ?? 0);
         }
-        counts[0] = (counts[0] as number) * (step * j - 1);
       }
     }
   }
-  let sum = 0;
-  for (let i = 0; i <= k; i++) sum += counts[i] as number;
-  return sum;
+  return storeQuotient(
+    counts.subarray(0, k + 1).reduce((sum, x) => sum + x),
+    denominator,
+    out,
+  );
 }
 
 /** The same by the recurrence; cost quadratic in the number of variables. */
