@@ -18,8 +18,10 @@ import { alternatingSum } from '../numeric/alternating-sum.ts';
 import { BetaAngles } from '../numeric/beta-angles.ts';
 import { type LogTerm, logOutwardSum, probabilityFromSum } from '../numeric/parity-split.ts';
 import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
-import { logChoices } from './gaussian-faces.ts';
+import { complementError, logChoices } from './gaussian-faces.ts';
+import type { Hull } from './hull-options.ts';
 import { membershipOnLine } from './line.ts';
+import { volumeRatioKernel } from './volume-ratio-kernel.ts';
 
 /** log 0.75: a sum above it is most of the probability, and the other side is to be summed. */
 const MOSTLY = -0.2876820724517809;
@@ -29,15 +31,21 @@ export function alphaOf(law: BetaLaw | ResolvedBetaPrimeLaw, d: number): number 
   return law.family === 'beta' ? 2 * law.b + d : 2 * excessOf(law, d);
 }
 
-/** P(the next point lies in the hull of n points). */
+/** P(the next point lies in the hull of n points); other hulls than the plain one for b = 0 and b = -1. */
 export function betaMembership(
   count: ResolvedCount,
   d: number,
   law: BetaLaw | ResolvedBetaPrimeLaw,
+  hull: Hull,
 ): Probability {
   const { n, log } = count;
-  // Points of a sphere are all vertices; the sphere of R^1 has only two points.
-  if (law.family === 'beta' && law.b === -1) return d > 1 ? certainty(false) : wendel(n + 1, 1);
+  if (law.family === 'beta' && law.b === -1) {
+    // Points of a sphere are all vertices; the sphere of R^1 has only two points.
+    if (d > 1) return certainty(false);
+    return hull === 'symmetric' ? certainty(n > 0) : wendel(n + 1, 1);
+  }
+  // the next point is uniform in the ball
+  if (law.family === 'beta' && law.b === 0) return volumeRatioKernel(d, 0.5 * (d - 1), count, hull);
   if (d === 1) return membershipOnLine(count, 'plain');
   if (n <= d) return certainty(false);
   const next = { n: n + 1, log: n < 2 ** 53 ? Math.log(n + 1) : log };
@@ -91,20 +99,36 @@ function logLoss(angles: BetaAngles, count: ResolvedCount, d: number, error: Flo
   return sum > 0 ? top + Math.log(sum) : Number.NEGATIVE_INFINITY;
 }
 
-/** log of the expected number of faces with v <= d vertices; a bound on its error in `error[0]`. */
+/**
+ * log of the expected number of faces with v <= d vertices, those at the centre left out; a bound on its
+ * error in `error[0]`. Other hulls than the plain one for v = 1, b = 0 and b = -1.
+ */
 export function logBetaFaces(
   count: ResolvedCount,
   d: number,
   v: number,
   law: BetaLaw | ResolvedBetaPrimeLaw,
+  hull: Hull,
   error: Float64Array,
 ): number {
-  const { n } = count;
-  const sphere = law.family === 'beta' && law.b === -1;
+  const { n, log } = count;
+  const { family } = law;
   error[0] = 0;
   if (n < v) return Number.NEGATIVE_INFINITY;
-  if (d === 1) return sphere ? Math.log(2 - 2 * Math.exp(-n * Math.LN2)) : Math.log(Math.min(n, 2));
-  if (n <= d + 1 || (sphere && v === 1)) return logChoices(count, v, error);
-  const angles = new BetaAngles(law.family, alphaOf(law, d));
+  const signs = hull === 'symmetric' ? Math.LN2 : 0;
+  if (family === 'beta' && law.b === -1) {
+    // the two points of the sphere of R^1 may coincide
+    if (d === 1) return Math.log(2 - 2 * Math.exp(-n * Math.LN2));
+    if (v === 1) return signs + logChoices(count, 1, error);
+  }
+  if (family === 'beta' && law.b === 0 && v === 1) {
+    const before = { n: n - 1, log: n < 2 ** 53 ? Math.log(n - 1) : log };
+    const loss = betaMembership(before, d, law, hull);
+    error[0] = EPSILON * log + complementError(loss);
+    return signs + log + loss.logComplement;
+  }
+  if (d === 1) return Math.log(Math.min(n, 2));
+  if (n <= d + 1) return logChoices(count, v, error);
+  const angles = new BetaAngles(family, alphaOf(law, d));
   return Math.LN2 + logOutwardSum((m, e) => angles.logTerm(count, m, v, e), d, -2, v, error);
 }

@@ -19,17 +19,23 @@ export function checkFaceDimension(fn: string, d: unknown): asserts d is number 
   checkInteger(fn, 'd', d, 1, MAX_FACE_DIMENSION);
 }
 
-/** Refuses a law or a kind of hull for which there is no formula; 'plain' if none is given. */
+/**
+ * Refuses a law or a kind of hull for which there is no formula; 'plain' if none is given.
+ *
+ * @param vertices - whether the question is about vertices, which the volume answers for the uniform ball
+ */
 export function checkFaceLaw(
   fn: string,
   law: unknown,
   hull: unknown,
   d: number,
+  vertices: boolean,
 ): { readonly law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw; readonly hull: Hull } {
   const checked = checkLaw(fn, law, ['gaussian', 'beta', 'betaPrime'], d);
   const kind = resolveHull(fn, hull);
   if (checked.family === 'gaussian') return { law: checked, hull: kind };
-  if (kind !== 'plain') {
+  const uniform = checked.family === 'beta' && (checked.b === 0 || checked.b === -1);
+  if (kind !== 'plain' && !(vertices && uniform)) {
     throw new DomainError(fn, 'hull', '"plain" for this law (no formula for other hulls)', kind);
   }
   const alpha = alphaOf(checked, d);

@@ -3,16 +3,15 @@
  */
 
 import { wendel } from '../conic/wendel.ts';
-import { type Count, type ResolvedCount, resolveCount } from '../count.ts';
+import { type Count, resolveCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
-import { EPSILON } from '../epsilon.ts';
-import type { BetaLaw, GaussianLaw, Law, ResolvedBetaPrimeLaw } from '../law.ts';
+import type { Law } from '../law.ts';
 import { LogNumber } from '../log-number.ts';
-import { logAddExpKernel } from '../special/log-domain.ts';
 import { logBetaFaces } from './beta-faces.ts';
 import { checkFaceDimension, checkFaceLaw } from './face-options.ts';
-import { logChoices, logGaussianFaces } from './gaussian-faces.ts';
-import type { Hull } from './hull-options.ts';
+import { expectedFacetsKernel, resolveFacetLaw, sumOfLogs } from './facets.ts';
+import { complementError, logChoices, logGaussianFaces } from './gaussian-faces.ts';
+import { type Hull, resolveHull } from './hull-options.ts';
 
 /** Arguments of {@link expectedVertices}. */
 export interface ExpectedVerticesArgs {
@@ -22,7 +21,7 @@ export interface ExpectedVerticesArgs {
   readonly d: number;
   /** Law of the points. */
   readonly law: Law;
-  /** Hull of the points ('plain', the default), of the points and their mirror images ('symmetric'), or of the points and their centre ('withCentre'). The last two are for the Gaussian law. */
+  /** Hull of the points ('plain', the default), of the points and their mirror images ('symmetric'), or of the points and their centre ('withCentre'). The last two are for the Gaussian law, for the vertices of the uniform ball and sphere, and for facets. */
   readonly hull?: Hull | undefined;
 }
 
@@ -45,12 +44,14 @@ export interface ExpectedFacesArgs extends ExpectedVerticesArgs {
  * under invertible affine maps, so mean and covariance do not matter.
  *
  * Assumptions: independent points of one of these laws. For facets {@link expectedFacets} integrates
- * directly. With `hull: 'symmetric'` the points are $\pm X_1, \dots, \pm X_n$; with 'withCentre' the
- * faces through the centre count, where it is a vertex.
+ * directly, and answers here too for the hulls that the sum does not. With `hull: 'symmetric'` the
+ * points are $\pm X_1, \dots, \pm X_n$; with 'withCentre' the faces through the centre count, where it
+ * is a vertex.
  *
  * @param args - `n`: an integer >= 0, a double above 2^53 or a `LogNumber`; `d`: an integer from 1 to 10000;
  *   `k`: an integer from 0 to d - 1; `law`: any law, beta-prime and t laws with at least 1/2 degree of
- *   freedom (2b - d); `hull`: `'plain'`, for the Gaussian law also `'symmetric'` or `'withCentre'`
+ *   freedom (2b - d); `hull`: `'plain'`, and `'symmetric'` or `'withCentre'` for the Gaussian law, for the
+ *   vertices of the uniform ball and sphere, and for the facets of any law
  * @returns the number; 0 where there are too few points for a face, binomial(n, k + 1) for n <= d + 1
  * @remarks Cost: one angle a term, at most d/2 terms; 0.1 to 10 ms up to d = 1000. Error of the
  *   logarithm, measured: 3e-14 for d <= 100, 2e-13 for d <= 500.
@@ -71,12 +72,9 @@ export interface ExpectedFacesArgs extends ExpectedVerticesArgs {
 export function expectedFaces(args: ExpectedFacesArgs): LogNumber {
   const fn = 'expectedFaces';
   checkOptions(fn, args, ['n', 'd', 'k', 'law', 'hull']);
-  const { d, k } = args;
-  const count = resolveCount(fn, 'n', args.n);
-  checkFaceDimension(fn, d);
-  checkInteger(fn, 'k', k, 0, d - 1);
-  const { law, hull } = checkFaceLaw(fn, args.law, args.hull, d);
-  return faces(count, d, k, law, hull);
+  checkFaceDimension(fn, args.d);
+  checkInteger(fn, 'k', args.k, 0, args.d - 1);
+  return faces(fn, args, args.k);
 }
 
 /**
@@ -105,44 +103,28 @@ export function expectedFaces(args: ExpectedFacesArgs): LogNumber {
 export function expectedVertices(args: ExpectedVerticesArgs): LogNumber {
   const fn = 'expectedVertices';
   checkOptions(fn, args, ['n', 'd', 'law', 'hull']);
+  checkFaceDimension(fn, args.d);
+  return faces(fn, args, 0);
+}
+
+function faces(fn: string, args: ExpectedVerticesArgs, k: number): LogNumber {
   const { d } = args;
   const count = resolveCount(fn, 'n', args.n);
-  checkFaceDimension(fn, d);
-  const { law, hull } = checkFaceLaw(fn, args.law, args.hull, d);
-  return faces(count, d, 0, law, hull);
-}
-
-function faces(
-  count: ResolvedCount,
-  d: number,
-  k: number,
-  law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw,
-  hull: Hull,
-): LogNumber {
-  const error = new Float64Array(1);
-  if (law.family !== 'gaussian') {
-    const log = logBetaFaces(count, d, k + 1, law, error);
-    return LogNumber.fromLog(log, error[0]);
+  if (k === d - 1 && resolveHull(fn, args.hull) !== 'plain') {
+    const law = resolveFacetLaw(fn, args.law, d);
+    const hull = args.hull as Hull;
+    if (law.family !== 'gaussian') return expectedFacetsKernel(law, d, count, hull);
   }
-  const log = logGaussianFaces(count, d, k + 1, hull, error);
-  if (hull !== 'withCentre' || count.n < k) return LogNumber.fromLog(log, error[0]);
-  return LogNumber.fromLog(...addCentralFaces(log, error[0] as number, count, d, k));
-}
-
-/** Adds the faces through the centre: spanned with k points, they are faces of the cone of the points. */
-function addCentralFaces(
-  log: number,
-  bound: number,
-  count: ResolvedCount,
-  d: number,
-  k: number,
-): [number, number] {
+  const { law, hull } = checkFaceLaw(fn, args.law, args.hull, d, k === 0);
   const error = new Float64Array(1);
+  const log =
+    law.family === 'gaussian'
+      ? logGaussianFaces(count, d, k + 1, hull, error)
+      : logBetaFaces(count, d, k + 1, law, hull, error);
+  if (hull !== 'withCentre' || count.n < k) return LogNumber.fromLog(log, error[0]);
+  // The faces through the centre: spanned with k points, they are faces of the cone of the points.
+  const bound = error[0] as number;
   const loss = wendel(count.n - k, d - k);
   const central = logChoices(count, k, error) + loss.logComplement;
-  const centralBound =
-    (error[0] as number) +
-    (loss.value > 0.5 ? loss.logError : (loss.logError * loss.value) / loss.complement);
-  const total = logAddExpKernel(log, central);
-  return [total, Math.max(bound, centralBound) + EPSILON * Math.abs(total)];
+  return sumOfLogs(log, bound, central, (error[0] as number) + complementError(loss));
 }

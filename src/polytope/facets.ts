@@ -113,8 +113,8 @@ export function expectedFacetsKernel(
   const { n } = count;
   if (hull === 'symmetric' ? n < d : n <= d - (hull === 'plain' ? 0 : 1)) {
     // a simplex or cross-polytope of lower dimension: itself a face when that is d - 1
-    const whole = hull === 'symmetric' || hull === 'withCentre' ? n === d - 1 : n === d;
-    return LogNumber.fromLog(whole && n > 0 ? 0 : Number.NEGATIVE_INFINITY);
+    const whole = hull === 'plain' ? n === d : n === d - 1 && (n > 0 || hull === 'withCentre');
+    return LogNumber.fromLog(whole ? 0 : Number.NEGATIVE_INFINITY);
   }
   if (d === 1) return endsOfSegment(law, count, hull);
   if (hull === 'symmetric' && n === d) return LogNumber.fromLog(d * Math.LN2, d * EPSILON);
@@ -123,11 +123,19 @@ export function expectedFacetsKernel(
     const above = facetsBeyond(model, count, 0, 1);
     const binomial = logBinomialKernel(Math.min(n, 2 ** 1000), d - 1);
     const atCentre = count.log > 30 ? Number.NEGATIVE_INFINITY : binomial + (d - n) * Math.LN2;
-    const error = above.error + EPSILON * (4 + 2 * binomial + Math.abs(n - d));
-    return LogNumber.fromLog(logAddExpKernel(above.log, atCentre), error);
+    const error = EPSILON * (4 + 2 * binomial + Math.abs(n - d));
+    return sumOfLogs(above.log, above.error, atCentre, error);
   }
   const total = facetTotal(model, count, hull === 'symmetric' ? 'folded' : 'line');
   return LogNumber.fromLog(total.log, total.error);
+}
+
+/** The sum of two numbers given by their logarithms, each with the bound of its error. */
+export function sumOfLogs(a: number, aError: number, b: number, bError: number): LogNumber {
+  const log = logAddExpKernel(a, b);
+  const share = (part: number, error: number): number =>
+    part > Number.NEGATIVE_INFINITY ? Math.exp(part - log) * error : 0;
+  return LogNumber.fromLog(log, share(a, aError) + share(b, bError) + EPSILON * Math.abs(log));
 }
 
 /** d = 1: the hull is a segment, or a single point where two points of -1 and 1 may coincide. */

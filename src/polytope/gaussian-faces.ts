@@ -38,17 +38,24 @@ export function gaussianMembership(
   scale: number,
   hull: Hull,
 ): Probability {
-  if (scale === 0) {
-    if (hull === 'plain') return wendel(count.n, d);
-    const certain = hull === 'withCentre' || count.n > 0;
-    return certainty(certain);
-  }
+  if (scale === 0) return centreMembership(count, d, hull);
   if (d === 1 && scale === 1 && hull !== 'withCentre') return membershipOnLine(count, hull);
   const sequence = SEQUENCE[hull];
   const parameters = [sequence, count.n, count.log, 1 / scale / scale] as const;
   const slope = orthantSequenceSlope(...parameters);
   const last = lastOrthantIndex(sequence, count.n);
   return paritySplit(orthantSequence(...parameters), d, 0, last, slope);
+}
+
+/** P(the centre of a symmetric law lies in the hull of n points). */
+export function centreMembership(count: ResolvedCount, d: number, hull: Hull): Probability {
+  if (hull === 'plain') return wendel(count.n, d);
+  return certainty(hull === 'withCentre' || count.n > 0);
+}
+
+/** Bound on the error of the logarithm of the complement. */
+export function complementError({ value, complement, logError }: Probability): number {
+  return value > 0.5 ? logError : (logError * value) / complement;
 }
 
 /** P(v given points do not span a face of the hull of n >= v points): the complement is survival. */
@@ -76,13 +83,14 @@ export function logGaussianFaces(
   error: Float64Array,
 ): number {
   error[0] = 0;
+  // a cross-polytope of v - 1 pairs is itself a face of its dimension
+  if (hull === 'symmetric' && count.n === v - 1 && v > 1) return 0;
   if (count.n < v) return Number.NEGATIVE_INFINITY;
   const loss = faceLoss(count, d, v, hull);
   const signs = hull === 'symmetric' ? v * Math.LN2 : 0;
   if (loss.value <= 0.5 || hull === 'withCentre') {
     const choices = logChoices(count, v, error) + signs;
-    const survivalError = loss.logError * (loss.value <= 0.5 ? loss.value / loss.complement : 1);
-    error[0] = (error[0] as number) + survivalError + EPSILON * choices;
+    error[0] = (error[0] as number) + complementError(loss) + EPSILON * choices;
     return choices + loss.logComplement;
   }
   const kind = hull === 'symmetric' ? 'absolute' : 'line';

@@ -2,14 +2,13 @@
  * Interpolation or extrapolation: the probability that the next point falls inside the hull.
  */
 
-import { wendel } from '../conic/wendel.ts';
 import { type Count, resolveCount } from '../count.ts';
 import { checkFinite, checkOptions, DomainError } from '../domain.ts';
 import { gaussian, type Law } from '../law.ts';
 import type { Probability } from '../probability.ts';
 import { betaMembership } from './beta-faces.ts';
 import { checkFaceDimension, checkFaceLaw } from './face-options.ts';
-import { gaussianMembership } from './gaussian-faces.ts';
+import { centreMembership, gaussianMembership } from './gaussian-faces.ts';
 import type { Hull } from './hull-options.ts';
 
 /** Arguments of {@link nextPointInHull}. */
@@ -22,7 +21,7 @@ export interface NextPointInHullArgs {
   readonly law?: Law | undefined;
   /** Standard deviation of the query over that of the points: from 0 to 1e100; 1 if left out. Other laws than the Gaussian take 0 and 1. */
   readonly queryScale?: number | undefined;
-  /** Hull of the points ('plain', the default), of the points and their mirror images ('symmetric'), or of the points and their centre ('withCentre'). The last two are for the Gaussian law. */
+  /** Hull of the points ('plain', the default), of the points and their mirror images ('symmetric'), or of the points and their centre ('withCentre'). The last two are for the Gaussian law, the uniform ball and the sphere. */
   readonly hull?: Hull | undefined;
 }
 
@@ -45,7 +44,8 @@ const FEW_POINTS = 1e100;
  *    b_{n,k} = \binom nk\, g_k\!\left(\tfrac{-1}{k+\kappa}\right) g_{n-k}\!\left(\tfrac{1}{k+\kappa}\right). $$
  *
  * For the other laws $P(X_{n+1} \notin P_n) = E f_0(P_{n+1})/(n+1)$, with the expected number of
- * vertices of {@link expectedVertices}. Scale 0 asks for the centre itself, which any symmetric law
+ * vertices of {@link expectedVertices}; for the uniform ball it is the share of the ball that
+ * {@link hullVolumeRatio} gives. Scale 0 asks for the centre itself, which any symmetric law
  * answers like {@link originInHull}.
  *
  * Assumptions: points and query are independent, and the query has the law of the points (times the
@@ -57,14 +57,13 @@ const FEW_POINTS = 1e100;
  * @param args - `n`: an integer >= 0, a double above 2^53 or a `LogNumber`; `d`: an integer from 1 to 10000;
  *   `law`: any law, beta-prime and t laws with at least 1/2 degree of freedom (2b - d), Gaussian if left
  *   out; `queryScale`: a number from 0 to 1e100, for other laws than the Gaussian 0 or 1, 1 if left out;
- *   `hull`: `'plain'`, for the Gaussian law also `'symmetric'` or `'withCentre'`
+ *   `hull`: `'plain'`, for the Gaussian law, the uniform ball and the sphere also `'symmetric'` or `'withCentre'`
  * @returns the probability; exactly 0 for n <= d (plain hull) and for the sphere in two or more
  *   dimensions
  * @remarks Cost grows with the number of terms that matter, a few to a few hundred: 0.1 to 2 ms for
- *   Gaussian points, up to d = 1000 and any n, and ten times that for the other laws. Error of the
- *   logarithm of the smaller tail, measured against 25-digit values: 1e-13 for d <= 100, 2e-13 for
- *   d <= 500; for laws near the sphere (-1 < b < 0), where the probability is one minus a number near
- *   1, it is as large as `logError` says. The number holds under the stated assumptions; it does not
+ *   Gaussian points, up to d = 1000 and any n, and ten times that for the other laws (0.1 ms for the
+ *   uniform ball). Error of the logarithm of the smaller tail, measured against 25-digit values: 1e-13
+ *   for d <= 100, 2e-13 for d <= 500. The number holds under the stated assumptions; it does not
  *   replace a safety review.
  * @throws A {@link DomainError} if an argument is missing, unknown or out of its domain, or if there
  *   is no formula for the combination
@@ -93,6 +92,7 @@ export function nextPointInHull(args: NextPointInHullArgs): Probability {
     args.law === undefined ? gaussian() : args.law,
     args.hull,
     d,
+    true,
   );
   checkFinite(fn, 'queryScale', queryScale, 0, LARGEST_SCALE);
   const tiny = queryScale > 0 && queryScale < LEAST_SCALE;
@@ -101,10 +101,10 @@ export function nextPointInHull(args: NextPointInHullArgs): Probability {
     throw new DomainError(fn, 'queryScale', requirement, queryScale);
   }
   if (law.family === 'gaussian') return gaussianMembership(count, d, tiny ? 0 : queryScale, hull);
-  if (queryScale === 0) return wendel(count.n, d);
+  if (queryScale === 0) return centreMembership(count, d, hull);
   if (queryScale !== 1) {
     const requirement = '0 or 1 for this law (no formula for other scales)';
     throw new DomainError(fn, 'queryScale', requirement, queryScale);
   }
-  return betaMembership(count, d, law);
+  return betaMembership(count, d, law, hull);
 }

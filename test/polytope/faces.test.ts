@@ -110,6 +110,26 @@ describe('expectedFaces', () => {
     expect(expectedVertices({ n: 3, d: 1, law: uniformSphere() }).value).toBe(1.75);
   });
 
+  it('leaves facets of other hulls to the integral over their heights, and takes the hull itself for one', () => {
+    for (const hull of ['symmetric', 'withCentre'] as const) {
+      for (const law of [betaLaw(0.7), studentT({ degreesOfFreedom: 3 }), uniformSphere()]) {
+        const faces = expectedFaces({ n: 30, d: 5, k: 4, law, hull });
+        expect(faces).toEqual(expectedFacets({ n: 30, d: 5, law, hull }));
+      }
+      for (const law of [gaussian(), betaLaw(0.7)]) {
+        for (const d of [1, 2, 4]) {
+          for (const n of [0, d - 1, d, d + 3]) {
+            const faces = expectedFaces({ n, d, k: d - 1, law, hull }).value;
+            const facets = expectedFacets({ n, d, law, hull }).value;
+            expect(Math.abs(faces - facets)).toBeLessThan(1e-13 * facets + 1e-300);
+          }
+        }
+      }
+    }
+    expect(expectedFaces({ n: 2, d: 3, k: 2, law: gaussian(), hull: 'symmetric' }).value).toBe(1);
+    expect(expectedFacets({ n: 0, d: 1, law: gaussian(), hull: 'withCentre' }).value).toBe(1);
+  });
+
   it('stays bounded for heavy tails and grows without end for light ones', () => {
     const at = (law: Law, log: number): number =>
       expectedFaces({ n: LogNumber.fromLog(log), d: 4, k: 0, law }).log;

@@ -3,6 +3,7 @@ import {
   betaLaw,
   betaPrimeLaw,
   DomainError,
+  expectedFaces,
   expectedVertices,
   gaussian,
   hullVolumeRatio,
@@ -105,7 +106,8 @@ describe('nextPointInHull', () => {
         (d, t) => {
           const n = Math.round(d + 1 + Math.expm1(t));
           const share = hullVolumeRatio({ n, d, law: uniformBall() });
-          const next = nextPointInHull({ n, d, law: uniformBall() });
+          // so near the ball that 2b + d is d, but not the ball, which is asked for its volume
+          const next = nextPointInHull({ n, d, law: betaLaw(1e-18) });
           expect(agree(share, next, 4e-14)).toBe(true);
         },
       ),
@@ -229,13 +231,47 @@ describe('nextPointInHull', () => {
     expect(p.logError).toBeLessThan(1e-6);
   });
 
+  it.each(['symmetric', 'withCentre'] as const)(
+    'answers by volume for the ball what facets say by Euler, %s hull',
+    (hull) => {
+      for (const law of [uniformBall(), uniformSphere()]) {
+        for (const n of [3, 4, 9, 50, 1e4, 1e15]) {
+          // simplicial: f_1 = f_0 in the plane, f_2 = 2 f_0 - 4 in space
+          const [plane, space] = [2, 3].map((d) => expectedVertices({ n, d, law, hull }).value);
+          const edges = expectedFaces({ n, d: 2, k: 1, law, hull }).value;
+          const facets = expectedFaces({ n, d: 3, k: 2, law, hull }).value;
+          expect(edges / (plane as number)).toBeCloseTo(1, 12);
+          expect(facets / (2 * (space as number) - 4)).toBeCloseTo(1, 12);
+        }
+      }
+      // of n + 1 points the last is a vertex as often as any other; the centre is one by Wendel's formula
+      const share = nextPointInHull({ n: 20, d: 4, law: uniformBall(), hull });
+      const vertices = expectedVertices({ n: 21, d: 4, law: uniformBall(), hull }).value;
+      const own = vertices - (hull === 'withCentre' ? originInHull({ n: 21, d: 4 }).complement : 0);
+      expect(own / (hull === 'symmetric' ? 42 : 21)).toBeCloseTo(share.complement, 13);
+    },
+  );
+
+  it('knows the hulls of few points, and of points on the line', () => {
+    const values = (d: number, law: Law, hull: 'symmetric' | 'withCentre'): number[] =>
+      [0, 1, 2, 3].map((n) => nextPointInHull({ n, d, law, hull }).value);
+    expect(values(1, uniformSphere(), 'symmetric')).toEqual([0, 1, 1, 1]);
+    expect(values(1, uniformSphere(), 'withCentre')).toEqual([0, 0.5, 0.75, 0.875]);
+    expect(values(2, uniformSphere(), 'symmetric')).toEqual([0, 0, 0, 0]);
+    expect(values(3, uniformBall(), 'withCentre').slice(0, 3)).toEqual([0, 0, 0]);
+    const centre = { n: 1, d: 3, law: uniformBall(), queryScale: 0 };
+    expect(nextPointInHull({ ...centre, hull: 'symmetric' }).value).toBe(1);
+    expect(nextPointInHull({ ...centre, n: 0, hull: 'withCentre' }).value).toBe(1);
+    expect(nextPointInHull({ ...centre, n: 0, hull: 'symmetric' }).value).toBe(0);
+  });
+
   it('refuses what has no formula', () => {
     const ask =
       (extra: object): (() => unknown) =>
       () =>
         nextPointInHull({ n: 10, d: 3, ...extra });
     expect(ask({ law: uniformBall(), queryScale: 2 })).toThrow(DomainError);
-    expect(ask({ law: uniformBall(), hull: 'symmetric' })).toThrow(/no formula for other hulls/);
+    expect(ask({ law: betaLaw(0.5), hull: 'symmetric' })).toThrow(/no formula for other hulls/);
     expect(ask({ law: studentT({ degreesOfFreedom: 0.25 }) })).toThrow(/degrees of freedom/);
     expect(ask({ law: betaPrimeLaw(1.5) })).toThrow(/law\.b/);
     expect(ask({ d: 0 })).toThrow(/d must be an integer from 1/);
