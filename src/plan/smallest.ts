@@ -20,7 +20,8 @@ export type FixedArgs<Args, Name> = Args extends unknown ? Omit<Args, Name & key
  * returns a {@link Probability} and is monotone in that argument.
  *
  * Finds the direction itself, brackets on the logarithmic scale, compares on the small side, and says
- * whether the integer is certain. Ties are exact: half is reached at exactly 2d points, not one later.
+ * whether the integer is certain. Ties are kept where a question knows its value exactly: half is reached
+ * at exactly 2d points, not one later.
  *
  * @param question - a function of one options object that returns a `Probability`
  * @param parameter - the name of the free argument; integers stay integers, and counts of points may
