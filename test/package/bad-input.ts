@@ -33,44 +33,6 @@ export const calls: Readonly<Record<string, OptionsCall | PositionalCall | Skipp
   ...dataCalls,
   ...preciseCalls,
 
-  // Conic: logistic fits with signal, order-restricted tests.
-  logisticThreshold: {
-    options: { signal: 2, offset: 0, intercept: true },
-    optional: ['offset', 'intercept'],
-  },
-  logisticSignal: { options: { ratio: 0.2, offset: 1 }, optional: ['offset'] },
-  approxSeparability: {
-    options: { ...nd, signal: 1, classShare: 0.3, intercept: true },
-    integers: ['n', 'd'],
-    optional: ['signal', 'classShare', 'intercept'],
-  },
-  chiBarSquared: { args: [[0.5, 0.5]], names: ['weights'] },
-  eBarSquared: {
-    args: [[0.5, 0.5], { observations: 10 }],
-    names: ['weights', 'options'],
-    structured: ['options'],
-  },
-  totalOrder: {
-    args: [3, [1, 2, 3]],
-    names: ['k', 'weights'],
-    integers: ['k'],
-    optional: ['weights'],
-  },
-  approxTotalOrder: {
-    args: [[1, 2, 3], { trials: 10, seed: 1 }],
-    names: ['weights', 'options'],
-    structured: ['options'],
-  },
-  simpleTree: {
-    args: [3, { control: 2, treatment: 1 }],
-    names: ['k', 'options'],
-    integers: ['k'],
-    optional: ['options'],
-    structured: ['options'],
-  },
-  reversedWeights: { args: [[0.5, 0.5]], names: ['weights'] },
-  orthantWeights: { options: { covariance: [[1]] } },
-
   // Plan.
   smallest: { skip: 'takes a function; test/plan/smallest.test.ts' },
   largest: { skip: 'takes a function; test/plan/smallest.test.ts' },
