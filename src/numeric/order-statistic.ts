@@ -11,7 +11,8 @@
  *   log Binomial(m; n, v) = const - m phi(log(n v / m)) - (n - m) phi(log((1 - v) n / (n - m))),
  *   phi(t) = e^t - 1 - t,
  *
- * which keeps its digits up to n = e^100000: beyond doubles the last term is that of Poisson's law, 0.
+ * which keeps its digits up to n = e^100000: beyond doubles the last term is the exponential of its
+ * logarithm, 0 but for v far too large.
  */
 import { EPSILON } from '../epsilon.ts';
 import { sumError } from '../special/double-double.ts';
@@ -19,9 +20,6 @@ import { expm1mxKernel } from '../special/log-domain.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 import type { Tail, TailRange } from './tail.ts';
 import { integrateUnimodal } from './unimodal-integral.ts';
-
-/** Beyond this log n the binomial law is Poisson's to double precision: m^2 / n < 1e-17. */
-const POISSON_LOG = 100;
 
 /** Which of how many; n is `Infinity` where only its logarithm is a double. */
 export interface OrderStatistic {
@@ -91,20 +89,21 @@ export interface OrderDensity {
 export function logOrderDensity(tail: Tail, order: OrderStatistic): OrderDensity {
   const { m, n, log } = order;
   const rest = n - m;
-  const poisson = log > POISSON_LOG;
+  const finite = n < Number.POSITIVE_INFINITY;
   const start = (log > 30 ? log - Math.log(m) : Math.log(n / m)) + tail.logTail;
-  const q = poisson || rest === 0 ? 0 : m > 0.5 * n ? Math.log(rest / n) : Math.log1p(-m / n);
+  const q = !finite || rest === 0 ? 0 : m > 0.5 * n ? Math.log(rest / n) : Math.log1p(-m / n);
   let constant = Math.log(m);
   if (rest > 0) {
     constant -= stirlingRemainderKernel(m) + 0.5 * (Math.log(2 * Math.PI * m) + q);
-    if (!poisson) constant += stirlingRemainderKernel(n) - stirlingRemainderKernel(rest);
+    if (finite) constant += stirlingRemainderKernel(n) - stirlingRemainderKernel(rest);
   }
   const at = (offset: number): number => {
     tail.moveTo(offset);
     const tau = start + tail.shift;
     if (rest === 0) return m * tau + tail.logHazard;
     const lower = -m * expm1mxKernel(tau);
-    const upper = poisson ? 0 : rest * expm1mxKernel(tail.logOther - q);
+    const gap = expm1mxKernel(tail.logOther - q);
+    const upper = finite ? rest * gap : Math.exp(log + Math.log(gap));
     return lower - upper + tail.logHazard;
   };
   const rounding = (peak: number, logWeight: () => number): number => {

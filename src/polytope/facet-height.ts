@@ -14,6 +14,7 @@ import {
   facetsBeyond,
   facetTotal,
   logFacetDensity,
+  UNRESOLVED,
 } from './facet-measure.ts';
 import { checkDimension, resolveMarginal } from './hull-options.ts';
 
@@ -95,8 +96,7 @@ export function facetHeight(args: FacetHeightArgs): FacetHeight {
     if (Math.abs(x) === Number.POSITIVE_INFINITY || (bounded && Math.abs(x) >= 1)) {
       return certainty(x >= 0);
     }
-    const offset = (x - mean) / deviation;
-    return Math.abs(offset) < FAR ? heightCdf(model, count, x) : farCdf(model, count, x, offset);
+    return heightCdf(model, count, x, (x - mean) / deviation);
   };
   return Object.freeze({
     mean,
@@ -142,7 +142,14 @@ function heightMoments(
   return { mean: start + middle, variance: second.means[0] as number };
 }
 
-function heightCdf(model: FacetModel, count: ResolvedCount, x: number): Probability {
+/** The cdf at x, which lies `offset` standard deviations from the mean. */
+function heightCdf(
+  model: FacetModel,
+  count: ResolvedCount,
+  x: number,
+  offset: number,
+): Probability {
+  if (!(Math.abs(offset) < FAR)) return farCdf(model, count, x, offset);
   const below = facetsBeyond(model, count, x, -1);
   const above = facetsBeyond(model, count, x, 1);
   const lower = below.log <= above.log;
@@ -150,6 +157,8 @@ function heightCdf(model: FacetModel, count: ResolvedCount, x: number): Probabil
   const large = lower ? above : below;
   const log = small.log - large.log - Math.log1p(Math.exp(small.log - large.log));
   const error = small.error - small.commonError + large.error - large.commonError;
+  // neither integral is resolved beside so many points
+  if (!(error < 1)) return farCdf(model, count, x, offset);
   return probabilityFromTail(Math.exp(log), log, lower ? 'lower' : 'upper', error);
 }
 
@@ -166,8 +175,7 @@ function farCdf(model: FacetModel, count: ResolvedCount, x: number, offset: numb
 }
 
 /**
- * Newton's rule for the logarithm of the smaller tail, which is concave in the height: after at most one
- * step past the root the iterates approach it from one side.
+ * Newton's rule for the logarithm of the smaller tail, or the logarithm of that, between brackets.
  */
 function heightQuantile(
   model: FacetModel,
@@ -185,17 +193,19 @@ function heightQuantile(
   let low = -end;
   let high = end;
   for (let i = 0; i < MAX_STEPS; i++) {
-    const p = heightCdf(model, count, x);
-    const gap = (lower ? p.log : p.logComplement) - goal;
+    const p = heightCdf(model, count, x, (x - mean) / deviation);
+    const log = lower ? p.log : p.logComplement;
+    const gap = log - goal;
     if (gap === 0) return x;
     // the cdf rises: too much of the lower tail, or too little of the upper one, means x is too high
     if (gap * sign > 0) high = x;
     else low = x;
-    const slope = Math.exp(
-      logFacetDensity(model, count, x) - total - (lower ? p.log : p.logComplement),
-    );
-    let next = x - (sign * gap) / slope;
-    if (!(next > low && next < high)) {
+    const slope = Math.exp(logFacetDensity(model, count, x) - total - log);
+    // far out the logarithm itself falls like n times a tail: Newton's rule for its logarithm
+    const change = log < -1 && goal < -1 ? log * Math.log(log / goal) : Math.min(gap, 3);
+    let next = x - (sign * change) / slope;
+    // beyond UNRESOLVED the quotient of two such small numbers is noise: bisect
+    if (!(next > low && next < high) || log < UNRESOLVED) {
       next = Number.isFinite(low + high) ? 0.5 * (low + high) : x - 2 * sign * Math.sign(gap);
     }
     if (Math.abs(next - x) <= 2.3e-16 * Math.abs(x) + 1e-17 * deviation) return next;

@@ -36,7 +36,7 @@ const HALF_LOG_TWO_PI = 0.91893853320467274;
 /** Singularities of the integrands lie at |Im s| = pi/2: no piece of Gauss-Legendre is longer. */
 const LONGEST_PIECE = 1.5;
 /** Below this a logarithm has steps of 1e-4 and more, and what lies beyond a cut cannot be summed. */
-const UNRESOLVED = -1e12;
+export const UNRESOLVED = -1e12;
 
 /** A law of points in R^d as the count of facets needs it, d >= 2. */
 export interface FacetModel {

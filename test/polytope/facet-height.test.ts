@@ -1,0 +1,29 @@
+import { capProbability, facetHeight, gaussian, Probability, uniformBall } from 'hullgauge';
+import { expect, test } from 'vitest';
+
+// log P(H <= x) is n log F(x) to leading order, and F(x) = v(-x)
+test('the wrong side of the law of very many heights', () => {
+  const height = facetHeight({ n: 1e100, d: 9999, law: uniformBall() });
+  const nearlyNone = height.cdf(-0.79898939);
+  expect(nearlyNone.complement).toBe(1);
+  // v(0.79898939) from capProbability
+  const logF = capProbability({ d: 9999, height: 0.79898939, law: uniformBall() }).log;
+  expect(nearlyNone.log / (1e100 * logF)).toBeCloseTo(1, 10);
+  expect(height.cdf(0).log / (1e100 * Math.LN2)).toBeCloseTo(-1, 10);
+  expect(nearlyNone.logError).toBeLessThan(1e-10 * -nearlyNone.log);
+  let last = Number.NEGATIVE_INFINITY;
+  for (const x of [-0.5, -0.1, 0, 0.1, 0.15, 0.2, height.mean, 0.4]) {
+    const { log } = height.cdf(x);
+    expect(log).toBeGreaterThanOrEqual(last * (1 + 1e-12));
+    last = log;
+  }
+});
+
+test.each([1e300, 1.7e308])('quantiles in the far tail of %d heights', (n) => {
+  const height = facetHeight({ n, d: 13, law: gaussian() });
+  for (const log of [-1, -50, -1e4, -1e100]) {
+    const x = height.quantile(Probability.fromLog(log));
+    // neighbouring doubles are as far apart as the slope of log F^n makes them
+    expect(Math.abs(height.cdf(x).log / log - 1)).toBeLessThan(1e-11);
+  }
+});
