@@ -105,14 +105,17 @@ function cholesky(matrix: readonly (readonly number[])[]): number[][] | undefine
   const factor: number[][] = [];
   for (const [i, row] of matrix.entries()) {
     const line: number[] = [];
-    for (let j = 0; j <= i; j++) {
+    for (let j = 0; j < i; j++) {
       let sum = row[j] as number;
-      const other = j === i ? line : (factor[j] as number[]);
+      const other = factor[j] as number[];
       for (let l = 0; l < j; l++) sum -= (line[l] as number) * (other[l] as number);
-      if (j < i) line.push(sum / (other[j] as number));
-      else if (sum < SINGULAR) return undefined;
-      else line.push(Math.sqrt(sum));
+      line.push(sum / (other[j] as number));
     }
+    // the root of 1 less the squares, each difference of squares as a product
+    let pivot = 1;
+    for (const x of line) pivot = Math.sqrt(Math.max((pivot - x) * (pivot + x), 0));
+    if (pivot * pivot < SINGULAR) return undefined;
+    line.push(pivot);
     factor.push(line);
   }
   return factor;

@@ -251,6 +251,21 @@ describe('orthantWeights', () => {
     );
   });
 
+  it('keeps the digits of small weights near correlation -1', () => {
+    for (const gap of [2 ** -7, 2 ** -20, 2 ** -30]) {
+      const r = gap - 1;
+      const weights = orthantWeights({
+        covariance: [
+          [1, r],
+          [r, 1],
+        ],
+      });
+      // acos(-r) / (2 pi), the arc cosine by its half angle
+      const exact = Math.asin(Math.sqrt(gap / 2)) / Math.PI;
+      expect((weights[2] as number) / exact).toBeCloseTo(1, 14);
+    }
+  });
+
   it('is binomial for independent estimators, whatever their variances and order', () => {
     const covariance = [1, 4, 9, 0.01].map((v, i) => [0, 1, 2, 3].map((j) => (i === j ? v : 0)));
     orthantWeights({ covariance }).forEach((w, j) => {
