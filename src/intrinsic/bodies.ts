@@ -65,7 +65,7 @@ function scaledBody(
     const value = log(k, error);
     const scale = k * logSize;
     logs.push(value + scale);
-    const rounding = scale > Number.NEGATIVE_INFINITY ? Math.abs(scale) : 0;
+    const rounding = scale > Number.NEGATIVE_INFINITY ? 2 * Math.abs(scale) : 0;
     errors.push((error[0] as number) + EPSILON * (2 + Math.abs(value) + rounding));
   }
   return bodyFromLogs(logs, errors);
@@ -106,11 +106,7 @@ function sized(
  */
 export function ball(args: BallArgs): Body {
   const { d, size } = sized('ball', args, 'radius', 1);
-  return scaledBody(d, size, (k, error) => {
-    const value = logBallIntrinsicVolumeKernel(d, k);
-    error[0] = EPSILON * (4 + 2 * Math.abs(value) + k);
-    return value;
-  });
+  return scaledBody(d, size, (k, error) => logBallIntrinsicVolumeKernel(d, k, error));
 }
 
 /**
@@ -162,12 +158,15 @@ export function box(sides: readonly number[]): Body {
     throw new DomainError('box', 'sides', `an array of 1 to ${MAX_SIDES} numbers`, sides);
   }
   for (const [i, side] of sides.entries()) checkFinite('box', `sides[${i}]`, side, 0);
-  const logs = logElementarySymmetric(sides.map((side) => Math.log(side)));
-  const d = sides.length;
+  const sideLogs = sides.map((side) => Math.log(side));
+  const logs = [...logElementarySymmetric(sideLogs)];
+  // Logarithms of long and short sides cancel.
+  let size = sides.length;
+  for (const log of sideLogs) if (log > Number.NEGATIVE_INFINITY) size += Math.abs(log);
   return bodyFromLogs(
-    [...logs],
-    [...logs].map((log) =>
-      log > Number.NEGATIVE_INFINITY ? EPSILON * (d + 2 * Math.abs(log)) : 0,
+    logs,
+    logs.map((log, k) =>
+      k > 0 && log > Number.NEGATIVE_INFINITY ? EPSILON * (size + 2 * Math.abs(log)) : 0,
     ),
   );
 }

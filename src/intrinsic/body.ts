@@ -74,16 +74,22 @@ export function steinerVolume(body: Body, distance: number): LogNumber {
   const d = body.dimension;
   const logDistance = Math.log(distance);
   const terms = new Float64Array(d + 1);
-  let error = 0;
+  const errors = new Float64Array(d + 1);
   for (let k = 0; k <= d; k++) {
-    const power = k === d ? 0 : (d - k) * logDistance + logBallVolumeKernel(d - k);
-    const log = power + logVolume(body, k);
-    terms[k] = log;
-    if (log > Number.NEGATIVE_INFINITY) {
-      error = Math.max(error, errorOf(body, k) + EPSILON * (4 + 4 * Math.abs(power)));
-    }
+    const scale = k === d ? 0 : (d - k) * logDistance;
+    const kappa = logBallVolumeKernel(d - k);
+    terms[k] = scale + kappa + logVolume(body, k);
+    errors[k] = errorOf(body, k) + EPSILON * (4 + 4 * (Math.abs(scale) + Math.abs(kappa)));
   }
-  return LogNumber.fromLog(logSumExpKernel(terms), error + 4 * EPSILON);
+  const log = logSumExpKernel(terms);
+  if (log === Number.NEGATIVE_INFINITY) return LogNumber.fromLog(log);
+  // The error of each term counts with its share.
+  let error = EPSILON * (4 + Math.abs(log));
+  for (let k = 0; k <= d; k++) {
+    const share = Math.exp((terms[k] as number) - log);
+    if (share > 0) error += share * (errors[k] as number);
+  }
+  return LogNumber.fromLog(log, error);
 }
 
 /**

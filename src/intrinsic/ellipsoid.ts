@@ -67,6 +67,8 @@ export function ellipsoid(args: EllipsoidArgs): Body {
   }
   const squares = semiAxes.map((axis) => 2 * Math.log(axis));
   const leftOut = squares.map((_, i) => logElementarySymmetric(squares, i));
+  // Logarithms of long and short axes cancel.
+  const largest = Math.max(...squares.map(Math.abs));
   const logs = [0];
   const errors = [0];
   for (let k = 1; k <= squares.length; k++) {
@@ -77,7 +79,7 @@ export function ellipsoid(args: EllipsoidArgs): Body {
     const kappa = logBallVolumeKernel(k);
     logs.push(kappa + integral.log);
     const size = Math.abs(kappa) + Math.abs(integral.log) + logSumExpKernel(weights);
-    errors.push(integral.error + EPSILON * (8 + 2 * squares.length + 2 * Math.abs(size)));
+    errors.push(integral.error + EPSILON * (8 + 2 * squares.length + 2 * Math.abs(size) + largest));
   }
   return bodyFromLogs(logs, errors);
 }

@@ -15,6 +15,7 @@ import {
   surfaceArea,
 } from 'hullgauge/intrinsic';
 import { describe, expect, it } from 'vitest';
+import { difference } from '../support/reference.ts';
 
 const values = (body: ReturnType<typeof ball>): number[] =>
   body.intrinsicVolumes.map((v) => v.value);
@@ -167,5 +168,35 @@ describe('ends of the domain', () => {
   it('works on a body that went through JSON', () => {
     const body = JSON.parse(JSON.stringify(cube({ d: 3, side: 2 })));
     expect(surfaceArea(body).value).toBe(24);
+  });
+});
+
+describe('stated errors', () => {
+  // mpmath 1.2 at 50 digits
+  it('cover the cancellation of large logarithms', () => {
+    const cases = [
+      [ball({ d: 300 }).intrinsicVolumes[93], '10.87449728381030423929749'],
+      [
+        ellipsoid({ semiAxes: [1e100, 1e-100, 1] }).intrinsicVolumes[3],
+        '1.432411958301181101582646',
+      ],
+      [cube({ d: 300, side: 1e200 }).intrinsicVolumes[287], '132219.7176580261421237933'],
+    ] as const;
+    for (const [volume, exact] of cases) {
+      const error = Math.abs(difference(volume?.log as number, exact));
+      expect(error).toBeLessThanOrEqual(volume?.logError as number);
+      expect(volume?.logError).toBeLessThan(3e-13 + 1e-15 * Number(exact));
+    }
+  });
+
+  it('of parallel bodies count terms by their share', () => {
+    expect(steinerVolume(cube({ d: 100 }), 1e-300).logError).toBeLessThan(1e-14);
+    // two large parts of the logarithm cancel: 100 log 4.5 and log Gamma(51)
+    const parallel = steinerVolume(ball({ d: 100, radius: 2 }), 2.5);
+    expect(Math.abs(difference(parallel.log, '59.16646701832438397696001'))).toBeLessThanOrEqual(
+      parallel.logError,
+    );
+    expect(parallel.logError).toBeLessThan(2e-12);
+    expect(steinerVolume(cube({ d: 3, side: 0 }), 0).log).toBe(Number.NEGATIVE_INFINITY);
   });
 });
