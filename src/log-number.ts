@@ -83,8 +83,9 @@ export class LogNumber extends Displayable {
     if (!isLogNumber(plain)) {
       throw new DomainError('LogNumber.from', 'plain', "an object of kind 'logNumber'", plain);
     }
-    const log = Number(plain.log);
-    const logError = Number(plain.logError);
+    // An infinity that was written without toJSON is null, of which Number alone would make 0.
+    const log = Number(plain.log ?? NaN);
+    const logError = Number(plain.logError ?? NaN);
     checkNumber('LogNumber.from', 'log', log);
     checkNumber('LogNumber.from', 'logError', logError, 0);
     return make(log, logError);

@@ -100,7 +100,7 @@ export class Probability extends Displayable {
    * @throws A {@link DomainError} if a field is out of range or the four contradict each other
    */
   static of(fields: ProbabilityFields): Probability {
-    return checkedFields(fields);
+    return checkedFields('Probability.of', fields);
   }
 
   /**
@@ -182,14 +182,16 @@ export class Probability extends Displayable {
    * ```
    */
   static from(plain: PlainProbability | Probability): Probability {
+    const fn = 'Probability.from';
     if (!isProbability(plain)) {
-      throw new DomainError('Probability.from', 'plain', "an object of kind 'probability'", plain);
+      throw new DomainError(fn, 'plain', "an object of kind 'probability'", plain);
     }
-    return checkedFields({
+    // An infinity that was written without toJSON is null, of which Number alone would make 0.
+    return checkedFields(fn, {
       ...plain,
-      log: Number(plain.log),
-      logComplement: Number(plain.logComplement),
-      logError: Number(plain.logError),
+      log: Number(plain.log ?? NaN),
+      logComplement: Number(plain.logComplement ?? NaN),
+      logError: Number(plain.logError ?? NaN),
     });
   }
 
@@ -230,8 +232,7 @@ export class Probability extends Displayable {
 }
 
 // Outside the class: bundlers give a class that names itself in its body a second, mangled name.
-function checkedFields(fields: ProbabilityFields): Probability {
-  const fn = 'Probability.of';
+function checkedFields(fn: string, fields: ProbabilityFields): Probability {
   // Anything but an object is refused for the value that it lacks.
   const { value, complement, log, logComplement, logError = 0 } = fields ?? {};
   if (Math.abs(value + complement - 1) > SLACK) {

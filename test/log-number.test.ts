@@ -51,6 +51,12 @@ describe('LogNumber', () => {
     expect(() => LogNumber.fromLog(Number.NaN)).toThrow(DomainError);
     expect(() => LogNumber.fromLog(1, -1)).toThrow(DomainError);
     expect(() => LogNumber.from({ kind: 'other' } as never)).toThrow(DomainError);
+    const plain = { kind: 'logNumber', log: 1, logError: 0 };
+    for (const field of ['log', 'logError']) {
+      expect(() => LogNumber.from({ ...plain, [field]: null } as never)).toThrow(
+        `LogNumber.from: ${field} must be `,
+      );
+    }
   });
 
   it('does not compile as a number', () => {

@@ -70,6 +70,12 @@ describe('construction', () => {
     expect(() => Probability.of({ ...fields, logComplement: -1 })).toThrow(DomainError);
     expect(() => Probability.of({ ...fields, logError: -1 })).toThrow(DomainError);
     expect(() => Probability.of(null as never)).toThrow(DomainError);
+    const plain = { kind: 'probability', ...fields, logError: 0 };
+    for (const field of ['log', 'logComplement', 'logError']) {
+      expect(() => Probability.from({ ...plain, [field]: null } as never)).toThrow(
+        `Probability.from: ${field} must be `,
+      );
+    }
   });
 
   it.each([Number.NaN, 1.5, -0.1, '0.5', undefined, null])('refuses %s', (bad) => {
