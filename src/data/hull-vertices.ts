@@ -70,9 +70,10 @@ export interface VertexList {
 /** {@link hullVertices} without checks. */
 export async function hullVerticesKernel(matrix: Matrix, pace: Pace): Promise<VertexList> {
   const { n, d } = matrix;
-  const { rows, allowed } = scaled(matrix);
+  const exact = allIntegers(matrix.rows);
+  const { rows, allowed } = scaled(matrix, exact);
   const { firsts, copies } = distinctRows(rows, n, d);
-  const search = new VertexSearch(rows, d, allowed, firsts, allIntegers(matrix.rows));
+  const search = new VertexSearch(rows, d, allowed, firsts, exact);
   const settledBefore = n - firsts.length;
   // Far points first: they are vertices, and the sooner those are known the fewer tests fail.
   const order = byDistance(rows, d, firsts);
@@ -95,10 +96,10 @@ export async function hullVerticesKernel(matrix: Matrix, pace: Pace): Promise<Ve
 }
 
 /** The columns scaled to about their ranges, around 0; columns that only carry rounding become 0. */
-function scaled(matrix: Matrix): { rows: Float64Array; allowed: Float64Array } {
+function scaled(matrix: Matrix, exact: boolean): { rows: Float64Array; allowed: Float64Array } {
   const { n, d } = matrix;
   const ranges = columnRanges(matrix);
-  const tolerances = columnTolerances(ranges, DEFAULT_TOLERANCE);
+  const tolerances = columnTolerances(ranges, DEFAULT_TOLERANCE, exact);
   const rows = new Float64Array(n * d);
   const allowed = new Float64Array(d);
   for (let j = 0; j < d; j++) {

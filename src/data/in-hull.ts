@@ -127,7 +127,7 @@ export function inHullKernel(
 ): HullMembership {
   const { d } = matrix;
   const ranges = columnRanges(matrix);
-  const allowed = columnTolerances(ranges, tolerance);
+  const allowed = columnTolerances(ranges, tolerance, exact);
   const scales = new Float64Array(d);
   let largest = 0;
   let smallest = Number.POSITIVE_INFINITY;

@@ -11,7 +11,14 @@ import { certainty, type Probability } from '../probability.ts';
 import { hullVerticesKernel } from './hull-vertices.ts';
 import { DEFAULT_TOLERANCE } from './in-hull.ts';
 import { type LongWorkOptions, startPace } from './long-work.ts';
-import { checkPoints, columnMeans, columnRanges, columnTolerances, type Points } from './points.ts';
+import {
+  allIntegers,
+  centreOf,
+  checkPoints,
+  columnRanges,
+  columnTolerances,
+  type Points,
+} from './points.ts';
 
 /** Options of {@link interpolationAudit}. */
 export interface InterpolationAuditOptions extends LongWorkOptions {
@@ -165,8 +172,9 @@ export async function interpolationAudit(
   checkNumber(fn, 'confidence', confidence, 1e-9, 1 - 1e-9);
   const { rows, n, d } = matrix;
   const pace = startPace(fn, n, options);
-  const tolerances = columnTolerances(columnRanges(matrix), DEFAULT_TOLERANCE);
-  const rank = matrixRank(rows, n, d, columnMeans(matrix), tolerances);
+  const exact = allIntegers(rows);
+  const tolerances = columnTolerances(columnRanges(matrix), DEFAULT_TOLERANCE, exact);
+  const rank = matrixRank(rows, n, d, centreOf(matrix, exact), tolerances);
   const { copies } = await hullVerticesKernel(matrix, pace);
   // A vertex with a twin lies in the hull of the others.
   const outside = copies.reduce((count, twins) => count + (twins === 1 ? 1 : 0), 0);

@@ -132,8 +132,9 @@ export function columnRanges({ rows, n, d }: Matrix): ColumnRanges {
   return { min, max, size };
 }
 
-/** The means of the columns. */
-export function columnMeans({ rows, n, d }: Matrix): Float64Array {
+/** A point of the flat that the rows span: their mean, or the first row where only that is exact. */
+export function centreOf({ rows, n, d }: Matrix, exact: boolean): Float64Array {
+  if (exact) return rows.slice(0, d);
   const mean = new Float64Array(d);
   for (let i = 0, at = 0; i < n; i++) {
     for (let j = 0; j < d; j++, at++) mean[j] = (mean[j] as number) + (rows[at] as number) / n;
@@ -143,13 +144,18 @@ export function columnMeans({ rows, n, d }: Matrix): Float64Array {
 
 /**
  * The difference that counts as none in each column: `tolerance` times its range, and 64 roundings of
- * its largest number, since data and means computed from them are no sharper than that.
+ * its largest number, since data and means computed from them are no sharper than that; where all
+ * numbers are integers, differences are, and the roundings are left out.
  */
-export function columnTolerances(ranges: ColumnRanges, tolerance: number): Float64Array {
+export function columnTolerances(
+  ranges: ColumnRanges,
+  tolerance: number,
+  exact: boolean,
+): Float64Array {
+  const roundings = exact ? 0 : 64 * Number.EPSILON;
   return ranges.size.map(
     (size, j) =>
-      tolerance * ((ranges.max[j] as number) - (ranges.min[j] as number)) +
-      64 * Number.EPSILON * size,
+      tolerance * ((ranges.max[j] as number) - (ranges.min[j] as number)) + roundings * size,
   );
 }
 

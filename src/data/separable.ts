@@ -13,8 +13,8 @@ import { judgeOverlap } from './overlap.ts';
 import {
   allIntegers,
   type ColumnRanges,
+  centreOf,
   checkPoints,
-  columnMeans,
   columnRanges,
   columnTolerances,
   type Matrix,
@@ -117,13 +117,14 @@ export function separableKernel(
 ): Separability {
   const { n, d, rows } = matrix;
   const ranges = intercept ? columnRanges(matrix) : symmetricRanges(columnRanges(matrix));
-  const allowed = columnTolerances(ranges, DEFAULT_TOLERANCE);
+  const exact = allIntegers(rows);
+  const allowed = columnTolerances(ranges, DEFAULT_TOLERANCE, exact);
   const middle = ranges.min.map((low, j) => low + ((ranges.max[j] as number) - low) / 2);
   const rank = matrixRank(
     rows,
     n,
     d,
-    intercept ? columnMeans(matrix) : new Float64Array(d),
+    intercept ? centreOf(matrix, exact) : new Float64Array(d),
     allowed,
   );
   const positives = signs.reduce((count, sign) => count + (sign > 0 ? 1 : 0), 0);
@@ -149,7 +150,7 @@ export function separableKernel(
     matrix,
     signs,
     intercept,
-    exact: allIntegers(rows),
+    exact,
     middle,
     allowed,
   };

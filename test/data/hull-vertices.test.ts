@@ -1,5 +1,5 @@
 import { gaussian, uniformSphere } from 'hullgauge';
-import { hullVertices, inHull, sampler } from 'hullgauge/data';
+import { hullVertices, inHull, interpolationAudit, sampler, separable } from 'hullgauge/data';
 import { describe, expect, it } from 'vitest';
 import { randomStream } from '../../src/numeric/random.ts';
 import { makeCloud } from './hull-cases.ts';
@@ -69,6 +69,25 @@ describe('hullVertices', () => {
     const vertices = await hullVertices(corner);
     expect(vertices.slice(0, 3)).toEqual([0, 1, 2]);
     expect(vertices).toHaveLength(4);
+  });
+
+  it('tells integers apart wherever they lie', async () => {
+    for (const far of [0, 2 ** 47, -(2 ** 51), 2 ** 52 - 8]) {
+      const square = [
+        [far, 0],
+        [far + 4, 0],
+        [far + 4, 4],
+        [far, 4],
+        [far + 2, 2],
+      ];
+      expect(await hullVertices(square)).toEqual([0, 1, 2, 3]);
+      expect(inHull(square, [far + 5, 2])).toMatchObject({ position: 'outside', distance: 1 });
+      expect(inHull(square, [far + 1, 2]).position).toBe('inside');
+      const { kind, margin, rank } = separable(square, [1, 0, 0, 1, 0]);
+      expect({ kind, margin, rank }).toEqual({ kind: 'complete', margin: 1, rank: 2 });
+      const { rank: flat, insideRate } = await interpolationAudit(square);
+      expect([flat, insideRate]).toEqual([2, 0.2]);
+    }
   });
 
   it('settles 2,000 points in 10 dimensions with progress on the way', async () => {

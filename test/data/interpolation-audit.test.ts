@@ -106,6 +106,32 @@ describe('interpolationAudit', () => {
     expect(audit.insideRate).toBeGreaterThan(0.6);
   });
 
+  it.each([0, 1e3, 1e6, 1e8, 1e12])('has a rank that a shift by %s does not raise', async (far) => {
+    // Begin, end and duration, as times are kept: rounding makes a third dimension of it.
+    const times = Array.from({ length: 40 }, (_, i) => {
+      const begin = far + 20 * Math.sin(i + 1) ** 2;
+      const end = begin + Math.cos(i * i);
+      return [begin, end, end - begin];
+    });
+    const line = Array.from({ length: 40 }, (_, i) => [
+      far + i / 7,
+      far - i / 3,
+      far + Math.PI * i,
+    ]);
+    expect((await interpolationAudit(times)).rank).toBe(2);
+    expect((await interpolationAudit(line)).rank).toBe(1);
+  });
+
+  it('has full rank where the last direction is short, but above rounding', async () => {
+    const draw = sampler(gaussian(), { d: 40, seed: 3 });
+    for (const n of [41, 300]) {
+      const rows = Array.from({ length: n }, () => Array.from(draw()));
+      expect((await interpolationAudit(rows)).rank).toBe(40);
+      for (const row of rows) row[7] = (row[3] as number) + 1e-8 * (row[7] as number);
+      expect((await interpolationAudit(rows)).rank).toBe(40);
+    }
+  });
+
   it('handles the degenerate ends', async () => {
     const few = await interpolationAudit(
       Array.from({ length: 40 }, sampler(gaussian(), { d: 30, seed: 1 })),
