@@ -142,7 +142,8 @@ function tailBelowMean(
     betaPower(a, x, y, out);
     return !storeTail(out[0] as number, out[1] as number, 1, out);
   }
-  if (a === 1) {
+  // the smallest doubles have no half
+  if (a === 1 && x > 1e-307) {
     betaPower(b, y, x, out);
     return storeTail(out[0] as number, out[1] as number, 1, out);
   }

@@ -271,6 +271,15 @@ describe('incompleteBeta', () => {
     expect(incompleteBeta(2, 3, -0).value).toBe(0);
   });
 
+  it('is b x for a = 1 and the smallest doubles', () => {
+    for (const x of [2 ** -1074, 2 ** -1073, 2 ** -1022, 1e-300, 1e-290, 1e-280]) {
+      const p = incompleteBeta(1, 3, x, 1);
+      expect(Math.abs(p.value - 3 * x)).toBeLessThanOrEqual(4e-16 * 3 * x + 2 ** -1074);
+      expect(Math.abs(p.log - (Math.log(3) + Math.log(x)))).toBeLessThan(3e-13);
+      expect(Object.is(p.complement, 1) && p.logComplement < 0).toBe(true);
+    }
+  });
+
   it('is never NaN, for any shapes a double can hold', () => {
     const anyShape = fc.oneof(
       scaled(1e-300, 1e300),
