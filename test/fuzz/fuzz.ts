@@ -43,6 +43,8 @@ export interface FuzzOptions {
   readonly count: number;
   /** Asked before each call; the run ends where the answer is false. */
   readonly goesOn?: (index: number, call: string) => boolean;
+  /** Told of each failure when it is found. */
+  readonly onFailure?: (failure: string) => void;
 }
 
 type Fn = (...args: unknown[]) => unknown;
@@ -80,7 +82,7 @@ async function exportedFunctions(): Promise<ReadonlyMap<string, Fn>> {
 
 /** Runs `count` calls spread over all exports. */
 export async function fuzz(options: FuzzOptions): Promise<FuzzReport> {
-  const { seed, first = 0, count, goesOn = () => true } = options;
+  const { seed, first = 0, count, goesOn = () => true, onFailure } = options;
   const functions = [...(await exportedFunctions())];
   const answered = new Map<string, number>(functions.map(([name]) => [name, 0]));
   const failures: string[] = [];
@@ -110,20 +112,26 @@ export async function fuzz(options: FuzzOptions): Promise<FuzzReport> {
         inRange(name, result) ??
         inspectMethods(typeof result === 'function' ? { sample: result } : result, random) ??
         checks[name]?.(args as [never, never, never, never], result as never);
-      if (wrong !== undefined) failures.push(`${text}: ${wrong}`);
+      if (wrong !== undefined) fail(`${text}: ${wrong}`);
       const step = await stepFrom(name, fn, args, result, random);
       if (step !== undefined) comparisons++;
-      if (step) failures.push(`${text}: ${step}`);
+      if (step) fail(`${text}: ${step}`);
     } catch (error) {
       const plain = (error as Error).constructor === Error;
       if ((error as { code?: unknown }).code !== 'HULLGAUGE_DOMAIN') {
-        (plain ? unconverged : failures).push(`${text}: ${String(error)}`);
+        if (plain) unconverged.push(`${text}: ${String(error)}`);
+        else fail(`${text}: ${String(error)}`);
       }
     }
   }
   const silent = [...answered.keys()].filter((name) => answered.get(name) === 0);
   const answers = [...answered.values()].reduce((total, value) => total + value, 0);
   return { calls: done, answers, comparisons, failures, unconverged, silent, slowest };
+
+  function fail(failure: string): void {
+    failures.push(failure);
+    onFailure?.(failure);
+  }
 
   function note(call: string, time: number): void {
     if (slowest.length === SLOWEST && time <= (slowest[SLOWEST - 1] as TimedCall).time) return;

@@ -92,8 +92,8 @@ function inspectDistribution(law: DistributionLike, random: Random): string | un
   const level = 0.01 + 0.98 * random();
   const x = law.quantile(level);
   if (Number.isNaN(x)) return `quantile(${level}) is NaN`;
-  // Where the distribution is narrower than the doubles around x, the next one has to do.
-  const at = law.cdf(x + 2 ** -52 * Math.abs(x));
+  // Where the distribution is narrower than the doubles around x, the next few have to do.
+  const at = law.cdf(x + 2 ** -51 * Math.abs(x));
   if (at.value < level - 1e-9) return `cdf(quantile(${level})) = ${at.value}`;
   const further = law.quantile(level + (1 - level) * random());
   return further < x ? `quantile falls from ${x} to ${further}` : undefined;
