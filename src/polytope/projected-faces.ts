@@ -9,7 +9,7 @@ import { LogNumber } from '../log-number.ts';
 import { certainty, complementOf, type Probability } from '../probability.ts';
 import { logAddExpKernel } from '../special/log-domain.ts';
 import { MAX_FACE_DIMENSION } from './face-options.ts';
-import { faceLoss, logChoices } from './gaussian-faces.ts';
+import { complementError, faceLoss, logChoices } from './gaussian-faces.ts';
 
 /** Arguments of {@link projectedFaces}. */
 export interface ProjectedFacesArgs {
@@ -108,19 +108,20 @@ export function projectedFaces(args: ProjectedFacesArgs): ProjectedFaces {
   const { expected, survival } = result(choices, bound, faceLoss(count, d, v, 'withCentre'));
   const central = result(logChoices(count, k, error), error[0] as number, wendel(n - k, d - k));
   const log = logAddExpKernel(expected.log, central.expected.log);
-  const rounding = log > 0 ? EPSILON * log : 0;
-  const logError = Math.max(expected.logError, central.expected.logError) + rounding;
+  const share = Math.exp(central.expected.log - log);
+  const logError =
+    (1 - share) * expected.logError +
+    (share > 0 ? share * central.expected.logError : 0) +
+    (log > 0 ? EPSILON * log : 0);
   return { expected: LogNumber.fromLog(log, logError), survival };
 }
 
 /** Number of faces times the share that survives. */
 function result(logCount: number, bound: number, loss: Probability): ProjectedFaces {
   const survival = complementOf(loss);
-  const share =
-    survival.value <= 0.5 ? loss.logError : (loss.logError * loss.value) / survival.value;
   if (survival.value === 0 && survival.log === Number.NEGATIVE_INFINITY) {
     return { expected: LogNumber.fromLog(Number.NEGATIVE_INFINITY), survival };
   }
-  const logError = bound + share + EPSILON * (1 + logCount);
+  const logError = bound + complementError(loss) + EPSILON * (1 + logCount);
   return { expected: LogNumber.fromLog(logCount + survival.log, logError), survival };
 }

@@ -171,6 +171,16 @@ describe('projectedFaces', () => {
     }
   });
 
+  it('weighs the error of the faces at the origin by their share', () => {
+    const { expected } = projectedFaces({
+      polytope: 'simplexWithOrigin',
+      n: Number.MAX_SAFE_INTEGER,
+      d: 100,
+      k: 2,
+    });
+    expect(expected.logError).toBeLessThan(1e-12);
+  });
+
   it('keeps every face in full dimension and none of the dimension of the image', () => {
     for (const polytope of ['simplex', 'simplexWithOrigin', 'crosspolytope', 'cube'] as const) {
       for (let k = 0; k < 6; k++) {
