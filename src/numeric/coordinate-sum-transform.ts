@@ -19,12 +19,23 @@ const INTERPOLATED = 48;
 
 /** Nodes of a panel for the k of a table with the given last k. */
 function degreeOf(high: number): number {
-  return high <= 12 ? 20 : high <= 24 ? 26 : 32;
+  return high <= 12 ? 20 : high <= 24 ? 22 : 26;
 }
-/** Interpolation error at which the interpolant of one k on a panel is refused. */
-const LARGEST_ERROR = 4e-14;
-/** Panels end at these Z, then go on in equal steps. */
+/** Error at which the interpolant of one k on a panel is refused. */
+const LARGEST_ERROR = 2e-13;
+/** Panels start at multiples of this, but 2.4 besides: V_k has complex zeros near the axis beyond 1.6. */
 const PANEL_WIDTH = 1.6;
+
+/** Index of the panel of Z. */
+function panelOf(Z: number): number {
+  const index = Math.floor(Z / PANEL_WIDTH);
+  return Z < 1.5 * PANEL_WIDTH ? index : index + 1;
+}
+
+/** Where a panel starts; the next one starts where it ends. */
+function panelStart(index: number): number {
+  return PANEL_WIDTH * (index < 2 ? index : index === 2 ? 1.5 : index - 1);
+}
 
 /** Coefficients of one block of k on a panel, or values at one Z, with their errors. */
 interface Block {
@@ -72,7 +83,7 @@ export class CoordinateSumTransform {
     const start = low + parity + 2 * BLOCK * Math.floor((k - low) / (2 * BLOCK));
     const at = (k - start) / 2;
     if (k <= INTERPOLATED) {
-      const index = Math.floor(Z / PANEL_WIDTH);
+      const index = panelOf(Z);
       const degree = degreeOf(high);
       const block = this.panelBlock(index, degree, start, low, high);
       this.error = block.errors[at] as number;
@@ -129,8 +140,8 @@ export class CoordinateSumTransform {
 
 /** Z^2 at the coordinate x in [-1, 1] of a panel. */
 function panelSquare(index: number, x: number): number {
-  const from = index * PANEL_WIDTH;
-  const to = from + PANEL_WIDTH;
+  const from = panelStart(index);
+  const to = panelStart(index + 1);
   return from * from + 0.5 * (to - from) * (to + from) * (1 + x);
 }
 
@@ -161,7 +172,8 @@ function interpolate(tables: readonly CoordinateSumTable[], start: number): Bloc
     let rest = 0;
     for (let i = degree - 3; i < degree; i++)
       rest += 2 * Math.abs(values[m * degree + i] as number);
-    errors[m] = rest < LARGEST_ERROR ? (errors[m] as number) + rest : Number.POSITIVE_INFINITY;
+    const bound = (errors[m] as number) + rest;
+    errors[m] = bound < LARGEST_ERROR ? bound : Number.POSITIVE_INFINITY;
   }
   return { values, errors };
 }
@@ -174,8 +186,8 @@ function evaluate(
   index: number,
   Z: number,
 ): number {
-  const from = index * PANEL_WIDTH;
-  const to = from + PANEL_WIDTH;
+  const from = panelStart(index);
+  const to = panelStart(index + 1);
   const x2 = (4 * (Z - from) * (Z + from)) / ((to - from) * (to + from)) - 2;
   const first = m * degree;
   let b1 = 0;

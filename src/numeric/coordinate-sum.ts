@@ -30,6 +30,9 @@ const DUAL = 9;
 /** Number of k, in steps of two, that one pass over the nodes yields. */
 export const BLOCK = 6;
 
+/** Numbers to a node. */
+const WIDTH = 8;
+
 const FADDEEVA: Float64Array = /* @__PURE__ */ new Float64Array(2);
 
 /** Ranges of k that share nodes: step for the largest, range for the smallest. */
@@ -48,14 +51,11 @@ export function tableClass(k: number): readonly [number, number] {
 /** The nodes of one Z for a range of k. */
 export class CoordinateSumTable {
   private count = 0;
-  private capacity = 256;
-  /** Logarithm of the modulus and argument of the base of the power. */
-  private logModulus = new Float64Array(256);
-  private argument = new Float64Array(256);
-  private aRe = new Float64Array(256);
-  private aIm = new Float64Array(256);
-  private bRe = new Float64Array(256);
-  private bIm = new Float64Array(256);
+  /**
+   * For each node the logarithm of the modulus and the argument of the base of the power, its square
+   * over e^(2 top), a and b.
+   */
+  private data = new Float64Array(WIDTH * 160);
   private top = Number.NEGATIVE_INFINITY;
   /** 1 for complex numbers, 0 for dual ones (imaginary parts to first order). */
   private square = 1;
@@ -64,8 +64,15 @@ export class CoordinateSumTable {
   private negligible = 1e-40;
 
   constructor(Z: number, kMin: number, kMax: number) {
-    if (Z < (kMax <= 12 ? 1.2 : 1.58)) this.fillLine(Z, kMin, kMax);
+    if (Z < (kMax <= 12 ? 1.2 : 1.57)) this.fillLine(Z, kMin, kMax);
     else this.fillHalfLine(Z, kMin, kMax);
+    const { data, square } = this;
+    for (let at = 0; at < WIDTH * this.count; at += WIDTH) {
+      const size = Math.exp(2 * ((data[at] as number) - this.top));
+      const angle = 2 * (data[at + 1] as number);
+      data[at + 2] = square === 1 ? size * Math.cos(angle) : size;
+      data[at + 3] = size * (square === 1 ? Math.sin(angle) : angle);
+    }
   }
 
   private push(
@@ -76,30 +83,20 @@ export class CoordinateSumTable {
     b: number,
     bi: number,
   ): void {
-    if (this.count === this.capacity) this.grow();
-    const i = this.count++;
-    this.logModulus[i] = logModulus;
-    this.argument[i] = argument;
-    this.aRe[i] = a;
-    this.aIm[i] = ai;
-    this.bRe[i] = b;
-    this.bIm[i] = bi;
+    const at = WIDTH * this.count++;
+    if (at === this.data.length) {
+      const longer = new Float64Array(2 * at);
+      longer.set(this.data);
+      this.data = longer;
+    }
+    const { data } = this;
+    data[at] = logModulus;
+    data[at + 1] = argument;
+    data[at + 4] = a;
+    data[at + 5] = ai;
+    data[at + 6] = b;
+    data[at + 7] = bi;
     if (logModulus > this.top) this.top = logModulus;
-  }
-
-  private grow(): void {
-    this.capacity *= 2;
-    const copy = (old: Float64Array): Float64Array<ArrayBuffer> => {
-      const next = new Float64Array(this.capacity);
-      next.set(old);
-      return next;
-    };
-    this.logModulus = copy(this.logModulus);
-    this.argument = copy(this.argument);
-    this.aRe = copy(this.aRe);
-    this.aIm = copy(this.aIm);
-    this.bRe = copy(this.bRe);
-    this.bIm = copy(this.bIm);
   }
 
   /** Nodes on x = tanh(v + i beta), v >= 0: the other half is the complex conjugate. */
@@ -154,7 +151,9 @@ export class CoordinateSumTable {
    * (((k-1) - k Z^2 (x^2 - 1)) (A + i E) + k z sqrt(2/pi)).
    */
   private fillHalfLine(Z: number, kMin: number, kMax: number): void {
-    const step = 0.05 * Math.min(1, Math.sqrt(32 / kMax));
+    // Near the switch the integrand oscillates, the faster the larger k.
+    const fineness = Z > 1.9 ? 0.075 : Z < 1.66 && kMax > 96 ? 0.03 : 0.05;
+    const step = fineness * Math.min(1, Math.sqrt(32 / kMax));
     const scale = 1 / (1 + (Z * Z) / 8);
     const first = kMin < 4 ? -4.6 : kMin < 40 ? -4 : -3.2;
     // (1 - 1/X)^((k-1)/2) e^(-Z^2 X / 2), X = x^2, is about the size of the integrand.
@@ -201,22 +200,20 @@ export class CoordinateSumTable {
   logBlock(k: number, out: Float64Array, errors: Float64Array, offset: number): void {
     const sums = SUMS;
     sums.fill(0);
-    const { count, top, square } = this;
+    const { count, data, top, square } = this;
     for (let i = 0; i < count; i++) {
-      const logModulus = (this.logModulus[i] as number) - top;
-      const argument = this.argument[i] as number;
-      const size = Math.exp((k - 1) * logModulus);
+      const node = WIDTH * i;
+      const size = Math.exp((k - 1) * ((data[node] as number) - top));
       if (size < this.negligible) continue;
-      const angle = (k - 1) * argument;
+      const angle = (k - 1) * (data[node + 1] as number);
       let re = square === 1 ? size * Math.cos(angle) : size;
-      let im = square === 1 ? size * Math.sin(angle) : size * angle;
-      const size2 = Math.exp(2 * logModulus);
-      const re2 = square === 1 ? size2 * Math.cos(2 * argument) : size2;
-      const im2 = square === 1 ? size2 * Math.sin(2 * argument) : size2 * 2 * argument;
-      const a = this.aRe[i] as number;
-      const aIm = this.aIm[i] as number;
-      const b = this.bRe[i] as number;
-      const bIm = this.bIm[i] as number;
+      let im = size * (square === 1 ? Math.sin(angle) : angle);
+      const re2 = data[node + 2] as number;
+      const im2 = data[node + 3] as number;
+      const a = data[node + 4] as number;
+      const aIm = data[node + 5] as number;
+      const b = data[node + 6] as number;
+      const bIm = data[node + 7] as number;
       // which of the sums at one, two and four times the step the node belongs to
       const level = i & 1 ? 1 : i & 2;
       for (let m = 0; m < BLOCK; m++) {
