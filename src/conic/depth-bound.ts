@@ -14,7 +14,7 @@
  */
 import { type Count, resolveCount } from '../count.ts';
 import { checkBoolean, checkFinite, checkInteger, checkOptions } from '../domain.ts';
-import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
+import { certainty, Probability, probabilityFromTail } from '../probability.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 import { incompleteBetaKernel, incompleteBetaProbability } from '../special/incomplete-beta.ts';
 import { wendel } from './wendel.ts';
@@ -90,8 +90,19 @@ export function originInHullLowerBound(args: OriginInHullLowerBoundArgs): Probab
   if (n === Number.POSITIVE_INFINITY) {
     return probabilityFromTail(0, Number.NEGATIVE_INFINITY, 'upper', Number.POSITIVE_INFINITY);
   }
-  if (!generalPosition) return incompleteBetaProbability(d + 1, n - d, depth, 1 - depth);
-  return depth === 0.5 ? wendel(n, d) : inGeneralPosition(n, d, depth);
+  if (generalPosition && depth === 0.5) return wendel(n, d);
+  const bound = generalPosition
+    ? inGeneralPosition(n, d, depth)
+    : incompleteBetaProbability(d + 1, n - d, depth, 1 - depth);
+  return n <= 2 ** 53 ? bound : ofRoundedCount(bound, n, d, depth);
+}
+
+/** The bound with what the rounding of n - d beyond 2^53 may add to the error of its smaller tail. */
+function ofRoundedCount(bound: Probability, n: number, d: number, depth: number): Probability {
+  const mean = n * depth;
+  const shift = (2 ** -52 * (Math.abs(d - mean) + Math.sqrt(mean))) / (1 - depth);
+  const { value, complement, log, logComplement, logError } = bound;
+  return new Probability(value, complement, log, logComplement, logError + shift);
 }
 
 /**
@@ -136,8 +147,9 @@ class TermSum {
   }
 
   private add(value: number, log: number, error: number): void {
+    // nothing to add, and its error may be infinite
+    if (log === Number.NEGATIVE_INFINITY) return;
     const largest = Math.max(this.log, log);
-    if (largest === Number.NEGATIVE_INFINITY) return;
     const before = Math.exp(this.log - largest);
     const added = Math.exp(log - largest);
     this.weightedError = (before * this.weightedError + added * error) / (before + added);

@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { DomainError, LogNumber, originInHull, originInHullLowerBound, smallest } from 'hullgauge';
 import { describe, expect, it } from 'vitest';
-import { type NamedRow, readTable, relativeError } from '../support/reference.ts';
+import { difference, type NamedRow, readTable, relativeError } from '../support/reference.ts';
 
 const cases = fc.record({
   d: fc.integer({ min: 1, max: 60 }),
@@ -131,6 +131,16 @@ describe('bound B for many points', () => {
 });
 
 describe('edges', () => {
+  it('states errors beyond 2^53 points too', () => {
+    const many = originInHullLowerBound({ n: 1e308, d: 2, depth: 1e-300, generalPosition: true });
+    expect(many.logError).toBeLessThan(1e-6);
+    // n - d + 1 is no double here; mpmath 1.2 at 90 digits
+    const args = { n: 1e17, d: 1e9, depth: 1e-8, generalPosition: true };
+    const { log, logError } = originInHullLowerBound(args);
+    expect(Math.abs(difference(log, '-0.6931387701529187072546'))).toBeLessThanOrEqual(logError);
+    expect(logError).toBeLessThan(1e-11);
+  });
+
   it('has the exact limits', () => {
     expect(originInHullLowerBound({ n: 3, d: 3, depth: 0.3 }).value).toBe(0);
     expect(originInHullLowerBound({ n: 3, d: 2, depth: 0 }).value).toBe(0);
