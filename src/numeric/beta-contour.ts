@@ -153,7 +153,7 @@ function throughSaddle(
   const total = fourth + second + odd;
   const even = fourth + second;
   const excess = M * tail.logExcess;
-  const width = e * Math.log(cosine);
+  const width = 0.5 * e * Math.log1p(-h * h);
   out[0] = Math.log(2 * step * Math.abs(total)) + width - excess;
   out[1] =
     trapezoidError(

@@ -9,8 +9,11 @@ import { faceRows } from '../support/face-rows.ts';
 const BOUNDS: Readonly<Record<string, Readonly<Record<string, number>>>> = {
   'nextPointInHull, scale 0': { 'd <= 100': 1e-14, 'd <= 500': 1e-14 },
   nextPointInHull: { 'd <= 100': 1e-13, 'd <= 500': 3e-13 },
-  'nextPointInHull, beta': { 'd <= 100': 4e-14 },
+  'nextPointInHull, beta': { 'd <= 100': 1e-13 },
   'nextPointInHull, t': { 'd <= 100': 5e-15 },
+  'nextPointInHull, betaPrime': { 'd <= 100': 5e-15 },
+  'nextPointInHull, wide query': { 'd <= 100': 3e-14 },
+  'continued angle': { 'd > 500': 2e-13 },
   pointInHull: { 'd <= 100': 3e-14 },
   expectedFaces: { 'd <= 100': 8e-14, 'd <= 500': 3e-13 },
   'expectedFaces, n = e^600': { 'd <= 100': 1e-14 },

@@ -16,6 +16,8 @@ import {
   studentT,
 } from 'hullgauge';
 import { BetaAngles } from '../../src/numeric/beta-angles.ts';
+import { betaContourKernel } from '../../src/numeric/beta-contour.ts';
+import { BetaTail } from '../../src/numeric/beta-tail.ts';
 import { CoordinateSumTransform } from '../../src/numeric/coordinate-sum-transform.ts';
 import { FixedQuerySequence } from '../../src/numeric/fixed-query.ts';
 import { logNegativeOrthantKernel, logPositiveOrthantKernel } from '../../src/numeric/orthant.ts';
@@ -244,9 +246,63 @@ function toRow(row: NamedRow): FaceRow | undefined {
   }
 }
 
-/** All rows of the table; a quantity that nobody computes is an error. */
-export const faceRows: readonly FaceRow[] = readTable<NamedRow>('faces').map((row) => {
-  const known = toRow(row);
-  if (known === undefined) throw new Error(`no function for ${row.quantity}`);
-  return known;
-});
+/** Rows of `polytope-extra.json`: laws near the sphere, heavy tails, wide queries, continued angles. */
+function extraRow({ quantity, args, log, logComplement }: ExtraRow): FaceRow {
+  const { alpha, d = 2, family, n, logn, scale, p, M, e } = args;
+  if (quantity === 'angle') {
+    const out = new Float64Array(3);
+    const compute = (): Computed => {
+      betaContourKernel(new BetaTail((Number(p) - 1) / 2), 0, Number(M), Number(e), out);
+      return { log: out[0] as number, logError: out[1] as number };
+    };
+    return { name: 'continued angle', region: 'd > 500', args, exact: log, compute };
+  }
+  const count = n ?? LogNumber.fromLog(Number(logn));
+  const half = Number(alpha);
+  const law =
+    quantity === 'wide'
+      ? gaussian()
+      : family === 'beta'
+        ? betaLaw((half - d) / 2)
+        : studentT({ degreesOfFreedom: half });
+  const queryScale = scale === undefined ? {} : { queryScale: Number(scale) };
+  const inside = Number(log) < Number(logComplement ?? 0);
+  return {
+    name: quantity === 'wide' ? 'nextPointInHull, wide query' : `nextPointInHull, ${family}`,
+    region: 'd <= 100',
+    args,
+    exact: inside || logComplement === null ? log : logComplement,
+    compute: () => {
+      const answer = nextPointInHull({ n: count, d, law, ...queryScale });
+      return { log: smallTail(answer), logError: answer.logError };
+    },
+  };
+}
+
+/** One row of that table. */
+interface ExtraRow {
+  readonly quantity: 'membership' | 'wide' | 'angle';
+  readonly args: {
+    readonly family?: 'beta' | 'betaPrime';
+    readonly alpha?: string;
+    readonly d?: number;
+    readonly n?: number;
+    readonly logn?: string;
+    readonly scale?: string;
+    readonly p?: string;
+    readonly M?: number;
+    readonly e?: string;
+  };
+  readonly log: string;
+  readonly logComplement: string | null;
+}
+
+/** All rows of both tables; a quantity that nobody computes is an error. */
+export const faceRows: readonly FaceRow[] = [
+  ...readTable<NamedRow>('faces').map((row) => {
+    const known = toRow(row);
+    if (known === undefined) throw new Error(`no function for ${row.quantity}`);
+    return known;
+  }),
+  ...readTable<ExtraRow>('polytope-extra').map(extraRow),
+];
