@@ -39,7 +39,8 @@ export function tailValue(high: number, low: number, factor: number, log: number
  * the complement was stored. The logarithm of the tail must have relative accuracy where it is near 0.
  */
 export function storeTail(high: number, low: number, factor: number, out: Float64Array): boolean {
-  const log = high + (low + Math.log(factor));
+  const logFactor = Math.log(factor);
+  const log = high + (low + logFactor);
   const value = tailValue(high, low, factor, log);
   if (value > 0.5) {
     // a tail known as a number only
@@ -48,7 +49,7 @@ export function storeTail(high: number, low: number, factor: number, out: Float6
     store(complement, logComplement, VALUE_ERROR - 2 * LOG_ROUNDING * logComplement, out);
     return true;
   }
-  store(value, log, VALUE_ERROR - LOG_ROUNDING * log, out);
+  store(value, log, VALUE_ERROR + LOG_ROUNDING * (Math.abs(logFactor) - log), out);
   return false;
 }
 

@@ -317,6 +317,13 @@ describe('incompleteBeta', () => {
     expect(Math.abs(p.value - 0.5)).toBeLessThan(1e-6);
   });
 
+  it('states the error of a logarithm that two large ones make up', () => {
+    // 60 digits
+    const exact = -312.872004370176391974;
+    const p = incompleteBeta(84.13611007846553, 4.2932215843360475e-120, 0.6624344859815715);
+    expect(Math.abs(p.log - exact)).toBeLessThanOrEqual(p.logError);
+  });
+
   it('agrees with a general package where that is right', () => {
     fc.assert(
       fc.property(scaled(0.5, 1e4), scaled(0.5, 1e4), between(-6, 6), (a, b, z) => {
