@@ -25,6 +25,12 @@ const n: Relation = { rises: ['n'] };
 const share = [0, 1] as const;
 const positive = [0, Number.POSITIVE_INFINITY] as const;
 
+/** Not without any coefficient, where no case is separated in one way and one case in none. */
+const cover: Relation = {
+  rises: ['n', 'd'],
+  where: ({ d, intercept }) => d !== 0 || intercept !== false,
+};
+
 const family = (args: Readonly<Record<string, unknown>>): string =>
   (args['law'] as { family?: string } | undefined)?.family ?? 'gaussian';
 
@@ -34,7 +40,7 @@ export const relations: Readonly<Record<string, Relation>> = {
   originInHullLowerBound: { rises: ['n', 'depth'], falls: ['d'] },
   labelSeparability: { rises: ['d'], falls: ['n'] },
   logisticFitExists: nd,
-  dichotomyCount: { rises: ['n', 'd'] },
+  dichotomyCount: cover,
   arrangementRegions: n,
   arrangementFaces: n,
   walkHull: { rises: ['steps'], falls: ['d'] },
@@ -140,7 +146,7 @@ export const relations: Readonly<Record<string, Relation>> = {
 
   originInHullExact: {},
   originInHullDecimal: nd,
-  dichotomyCountExact: { rises: ['n', 'd'] },
+  dichotomyCountExact: cover,
   hullVolumeRatioDecimal: n,
   incompleteBetaDecimal: { rises: ['b', 'x'], falls: ['a'] },
 };
