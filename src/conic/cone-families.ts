@@ -2,7 +2,7 @@
  * Circular cones and the Weyl chambers of the reflection groups A, B and D.
  */
 
-import { checkChoice, checkInteger, checkNumber } from '../domain.ts';
+import { checkChoice, checkInteger, checkNumber, DomainError } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
@@ -17,6 +17,8 @@ import {
   roundingErrors,
 } from './cone.ts';
 import { embed } from './cone-algebra.ts';
+
+const LEAST_ANGLE = 1e-150;
 
 /**
  * The circular cone of half-angle `angle` in R^n: all directions within that angle of an axis, for n
@@ -38,7 +40,7 @@ import { embed } from './cone-algebra.ts';
  * Inference 3 (2014), arXiv:1303.6672.
  *
  * @param n - ambient dimension, an integer from 2 to 1000000
- * @param angle - half-angle in radians, from 0 to $\pi/2$
+ * @param angle - half-angle in radians: 0, or a number from 1e-150 to $\pi/2$
  * @returns the cone
  * @throws A {@link DomainError} if an argument is out of its domain
  *
@@ -55,6 +57,10 @@ export function circularCone(n: number, angle: number): Cone {
   checkInteger(fn, 'n', n, 2, MAX_AMBIENT);
   checkNumber(fn, 'angle', angle, 0, Math.PI / 2);
   if (angle === 0) return embed(orthantKernel(1), n);
+  // of a smaller angle the square is no normal double
+  if (angle < LEAST_ANGLE) {
+    throw new DomainError(fn, 'angle', `0 or a number from ${LEAST_ANGLE} to pi/2`, angle);
+  }
   if (angle === Math.PI / 2) return halfspaceKernel(n);
   // As pi/2 above, the double nearest to pi/4 means pi/4, of which no engine's sine squares to 1/2.
   const symmetric = angle === Math.PI / 4;

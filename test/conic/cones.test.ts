@@ -280,6 +280,7 @@ describe('bad input', () => {
     ['circularCone', () => circularCone(1, 0.5), 'n'],
     ['circularCone', () => circularCone(4, 1.6), 'angle'],
     ['circularCone', () => circularCone(4, Number.NaN), 'angle'],
+    ['circularCone', () => circularCone(4, 1e-160), 'angle'],
     ['weylChamber', () => weylChamber('C' as never, 4), 'type'],
     ['weylChamber', () => weylChamber('D', 1), 'n'],
     ['productCone', () => productCone(orthant(2), {} as never), 'second'],
