@@ -33,6 +33,9 @@ const MARCH_LIMIT = 40;
 /** So it is for tanh(x)^2 below this. */
 const SERIES_LIMIT = 0.4;
 
+/** Turn and fall of the exponent over a panel of the rule, which would keep its digits up to twice this. */
+const LARGEST_TURN = 16;
+
 /** Above this e the saddle is too near the end of the interval, or does not exist. */
 const NO_SADDLE = -0.3;
 
@@ -117,18 +120,25 @@ function throughSaddle(
     const nextArg = Math.atan((h / cosine) * Math.tanh(next));
     let sumRe = 0;
     let sumIm = 0;
-    for (let i = 0; i < RULE_POINTS; i++) {
-      const t = ruleNode(i, x, next);
-      const s = Math.sinh(t) / cosine;
-      const modulus = ruleWeight(i, x, next) * Math.exp(p * (0.5 * Math.log1p(s * s) - nextLog));
-      const angle = p * (Math.atan((h / cosine) * Math.tanh(t)) - nextArg);
-      sumRe += modulus * Math.cos(angle);
-      sumIm += modulus * Math.sin(angle);
+    // no piece in which the exponent turns or falls by more than the rule resolves
+    const turn = Math.abs(p) * (nextArg - argCos + nextLog - logCos);
+    const pieces = Math.max(1, Math.ceil(turn / LARGEST_TURN));
+    for (let piece = 0; piece < pieces; piece++) {
+      const from = x + ((next - x) * piece) / pieces;
+      const to = x + ((next - x) * (piece + 1)) / pieces;
+      for (let i = 0; i < RULE_POINTS; i++) {
+        const t = ruleNode(i, from, to);
+        const s = Math.sinh(t) / cosine;
+        const modulus = ruleWeight(i, from, to) * Math.exp(p * (0.5 * Math.log1p(s * s) - nextLog));
+        const angle = p * (Math.atan((h / cosine) * Math.tanh(t)) - nextArg);
+        sumRe += modulus * Math.cos(angle);
+        sumIm += modulus * Math.sin(angle);
+      }
     }
     const damping = Math.exp(p * (logCos - nextLog));
-    const turn = p * (argCos - nextArg);
-    const c = damping * Math.cos(turn);
-    const d = damping * Math.sin(turn);
+    const back = p * (argCos - nextArg);
+    const c = damping * Math.cos(back);
+    const d = damping * Math.sin(back);
     const nextRe = re * c - im * d - sumIm / R0;
     im = re * d + im * c + sumRe / R0;
     re = nextRe;
@@ -160,7 +170,9 @@ function throughSaddle(
       Math.abs(even - odd) / Math.abs(total),
       (2 * Math.abs(fourth - second)) / Math.abs(total),
     ) +
-    (size / Math.abs(total)) * EPSILON * (8 + 6 * M + 2 * Math.abs(power)) +
+    (size / Math.abs(total)) *
+      EPSILON *
+      (8 + 6 * M + 2 * Math.abs(power) + (2 * Math.sqrt(Q) * h) / cosine) +
     EPSILON * (Math.abs(width) + 2 * Math.abs(excess));
   out[2] = Math.sign(total);
 }

@@ -21,6 +21,14 @@ const families: readonly (readonly [BetaFamily, number])[] = [
   ['betaPrime', 30],
 ];
 
+/** Dimension, and the logarithm of the mean share that a random simplex has of the ball. */
+const LARGE_SIMPLICES = [
+  [1000, -4370.1115451815413],
+  [2000, -9435.7286997529432],
+  [5000, -25884.166897973251],
+  [10000, -55237.231946742903],
+] as const;
+
 describe('the terms of beta polytopes', () => {
   it.each(families)('have equal sums over even and odd m: %s, alpha = %d', (family, alpha) => {
     const angles = new BetaAngles(family, alpha);
@@ -58,6 +66,18 @@ describe('the terms of beta polytopes', () => {
     expect(share(1)).toBeCloseTo(1 / 3, 14);
     expect(share(2)).toBeCloseTo(35 / (48 * Math.PI * Math.PI), 15);
     expect(share(3)).toBeCloseTo(9 / 715, 15);
+    // 2^-d C(d+1, (d+1)/2)^(d+1) / C((d+1)^2, (d+1)^2/2), mpmath with 40 digits
+    for (const [d, exact] of LARGE_SIMPLICES) {
+      const log = new BetaAngles('beta', d).logTerm(
+        { n: d + 2, log: Math.log(d + 2) },
+        d + 2,
+        1,
+        error,
+      );
+      const gap = Math.abs(log - Math.log(d / 2 + 1) - exact);
+      expect(gap).toBeLessThan(error[0] as number);
+      expect(error[0]).toBeLessThan(1e-13 * d);
+    }
   });
 
   it('know one-point and whole-simplex cases', () => {
