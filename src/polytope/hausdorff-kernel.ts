@@ -28,7 +28,9 @@ export function distanceAt(s: number): number {
 export function probabilityFromBound({ log, error }: LogBound): Probability {
   if (log <= -Math.LN2) return probabilityFromTail(Math.exp(log), log, 'lower', error);
   const complement = -Math.expm1(log) || 0;
-  const scaled = complement > 0 ? (error * Math.exp(log)) / complement : 0;
+  // what is left of 1 by rounding alone may be any number as small
+  const unknown = error > 0 ? Number.POSITIVE_INFINITY : 0;
+  const scaled = complement > 0 ? (error * Math.exp(log)) / complement : unknown;
   return probabilityFromTail(complement, Math.log(complement), 'upper', scaled);
 }
 
@@ -51,10 +53,13 @@ export function circleExceedance(count: ResolvedCount, t: number): Probability |
   if (!(count.n < Number.POSITIVE_INFINITY)) return null;
   // an empty arc of twice the angle arccos(1 - t)
   const share = (2 * Math.asin(Math.sqrt(t / 2))) / Math.PI;
+  const rest = (2 * Math.asin(Math.sqrt(1 - t / 2))) / Math.PI;
   const out = new Float64Array(2);
-  const allShort = largestSpacingTail(count.n, share, out);
+  const allShort = largestSpacingTail(count.n, share, out, rest);
   const log = out[0] as number;
-  const rounding = EPSILON * (4 + 4 * Math.abs(log) + count.n * share);
+  // too few points for the circle, or more than doubles can tell
+  const known = log === Number.NEGATIVE_INFINITY;
+  const rounding = known ? 0 : EPSILON * (4 + 4 * Math.abs(log) + count.n * share);
   const error = (out[1] as number) + rounding;
   return probabilityFromTail(Math.exp(log), log, allShort ? 'upper' : 'lower', error);
 }
