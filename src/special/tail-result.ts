@@ -44,7 +44,7 @@ export function storeTail(high: number, low: number, factor: number, out: Float6
   const value = tailValue(high, low, factor, log);
   if (value > 0.5) {
     // a tail known as a number only
-    const complement = log > -0.25 ? -Math.expm1(Math.min(log, 0)) : 1 - value;
+    const complement = log > -0.25 ? 0 - Math.expm1(Math.min(log, 0)) : 1 - value;
     const logComplement = Math.log(complement);
     store(complement, logComplement, VALUE_ERROR - 2 * LOG_ROUNDING * logComplement, out);
     return true;
