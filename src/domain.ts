@@ -40,9 +40,16 @@ export class DomainError extends RangeError {
    * @param parameter - name of the offending parameter
    * @param requirement - completes the sentence "the parameter must be ..."
    * @param received - the value that was passed
+   * @param shown - how the message shows it, if not as it is: what was counted or summed in it
    */
-  constructor(fn: string, parameter: string, requirement: string, received: unknown) {
-    super(`${fn}: ${parameter} must be ${requirement}, got ${describe(received)}`);
+  constructor(
+    fn: string,
+    parameter: string,
+    requirement: string,
+    received: unknown,
+    shown: string = describe(received),
+  ) {
+    super(`${fn}: ${parameter} must be ${requirement}, got ${shown}`);
     this.parameter = parameter;
     this.received = received;
   }

@@ -194,6 +194,7 @@ export function checkLaw(
       fn,
       'law',
       `${list} (no formula for other laws here)`,
+      law,
       describeLaw(given),
     );
   }

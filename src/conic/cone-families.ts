@@ -2,7 +2,7 @@
  * Circular cones and the Weyl chambers of the reflection groups A, B and D.
  */
 
-import { checkChoice, checkInteger, checkNumber, DomainError } from '../domain.ts';
+import { checkChoice, checkInteger, DomainError } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { logBinomialPmfKernel } from '../special/binomial.ts';
 import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
@@ -55,11 +55,11 @@ const LEAST_ANGLE = 1e-150;
 export function circularCone(n: number, angle: number): Cone {
   const fn = 'circularCone';
   checkInteger(fn, 'n', n, 2, MAX_AMBIENT);
-  checkNumber(fn, 'angle', angle, 0, Math.PI / 2);
   if (angle === 0) return embed(orthantKernel(1), n);
   // of a smaller angle the square is no normal double
-  if (angle < LEAST_ANGLE) {
-    throw new DomainError(fn, 'angle', `0 or a number from ${LEAST_ANGLE} to pi/2`, angle);
+  if (!(typeof angle === 'number' && angle >= LEAST_ANGLE && angle <= Math.PI / 2)) {
+    const requirement = `0 or a number from ${LEAST_ANGLE} to pi/2, in radians`;
+    throw new DomainError(fn, 'angle', requirement, angle);
   }
   if (angle === Math.PI / 2) return halfspaceKernel(n);
   // As pi/2 above, the double nearest to pi/4 means pi/4, of which no engine's sine squares to 1/2.

@@ -67,7 +67,7 @@ export function checkWeights(fn: string, weights: unknown): asserts weights is A
     sum += weight;
   }
   if (Math.abs(sum - 1) > SLACK) {
-    throw new DomainError(fn, parameter, 'numbers with sum 1', `numbers with sum ${sum}`);
+    throw new DomainError(fn, parameter, 'numbers with sum 1', weights, `a sum of ${sum}`);
   }
 }
 

@@ -67,7 +67,7 @@ export function polyhedralCone(generators: readonly ArrayLike<number>[]): Cone {
   const span = basis.length;
   if (span > LARGEST_SPAN) {
     const requirement = `vectors that span at most ${LARGEST_SPAN} dimensions (approxPolyhedralCone takes more)`;
-    throw new DomainError(fn, 'generators', requirement, `a span of dimension ${span}`);
+    throw new DomainError(fn, 'generators', requirement, generators, `${span} dimensions`);
   }
   if (span === 0) return subspaceKernel(0, ambient);
   const local = vectors.map((vector) => unit(coordinates(vector, basis)));

@@ -18,19 +18,29 @@ import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
 /** Up to this n the sum is used throughout; the line integral needs the decay of |z|^-n. */
 const FEW = 12;
 
-/** The smaller tail: out[0] its logarithm, out[1] a bound of its error. True when it is P(all <= a). */
-export function largestSpacingTail(n: number, a: number, out: Float64Array): boolean {
+/**
+ * The smaller tail: out[0] its logarithm, out[1] a bound of its error. True when it is P(all <= a).
+ *
+ * @param rest - 1 - a, where the caller has it with more digits
+ */
+export function largestSpacingTail(
+  n: number,
+  a: number,
+  out: Float64Array,
+  rest: number = 1 - a,
+): boolean {
   out[0] = Number.NEGATIVE_INFINITY;
   out[1] = 0;
   if (a >= 1) return false;
   if (n * a <= 1) return true;
   if (n * a < 2) return smallerTail(logReflected(n, a, out), out);
-  const logFirst = Math.log(n) + (n - 1) * Math.log1p(-a);
+  const logRest = a > 0.5 ? Math.log(rest) : Math.log1p(-a);
+  const logFirst = Math.log(n) + (n - 1) * logRest;
   if (logFirst === Number.NEGATIVE_INFINITY) {
     out[1] = Number.POSITIVE_INFINITY;
     return false;
   }
-  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, logFirst, out);
+  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, logRest, out);
   return smallerTail(logAllShort(n, a, out), out);
 }
 
@@ -55,14 +65,14 @@ function logReflected(n: number, a: number, out: Float64Array): number {
   return (n - 1) * Math.log(rest) + inner;
 }
 
-function alternatingSum(n: number, a: number, logFirst: number, out: Float64Array): boolean {
+function alternatingSum(n: number, a: number, logRest: number, out: Float64Array): boolean {
   // relative to the first term, which may be far below every double, or to 1
-  const scale = Math.min(logFirst, 0);
+  const scale = Math.min(Math.log(n) + (n - 1) * logRest, 0);
   let sum = 0;
   let error = 0;
   for (let k = 1; k <= n && k * a < 1; k++) {
     const logChoices = logBinomialKernel(n, k);
-    const logEach = (n - 1) * Math.log1p(-k * a);
+    const logEach = (n - 1) * (k === 1 ? logRest : Math.log1p(-k * a));
     const term = Math.exp(logChoices + logEach - scale);
     sum += k % 2 === 1 ? term : -term;
     error += term * EPSILON * (3 + 2 * (logChoices - logEach) + k);

@@ -30,13 +30,15 @@ export function readTarget(fn: string, target: Target): { goal: Probability; atM
     return { goal: toGoal(fn, 'target', target), atMost: false };
   }
   const forms = ['atLeast', 'atMost', 'complementAtMost'] as const;
+  if (typeof target !== 'object') return { goal: toGoal(fn, 'target', target), atMost: false };
   checkOptions(fn, target, forms, 'target');
   const keys = Object.keys(target);
   if (keys.length !== 1) {
     throw new DomainError(
       fn,
       'target',
-      `exactly one of ${forms.join(', ')}`,
+      `an object with exactly one of ${forms.join(', ')}`,
+      target,
       `${keys.length} of them`,
     );
   }

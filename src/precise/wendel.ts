@@ -214,7 +214,7 @@ class DyadicFraction implements ExactProbability {
   }
 
   toDecimal(digits: number): Decimal {
-    checkDigits('toDecimal', digits);
+    checkDigits('originInHullExact.toDecimal', digits);
     return roundQuotient(this.numerator, this.denominator, digits);
   }
 

@@ -113,15 +113,12 @@ describe('targets', () => {
     for (const [target, message] of [
       [1.5, 'smallest: target must be a number from 0 to 1, got 1.5'],
       [Number.NaN, 'smallest: target must be a number from 0 to 1, got NaN'],
-      [
-        '0.5',
-        'smallest: target must be an object (the options are atLeast, atMost, complementAtMost), got "0.5"',
-      ],
+      ['0.5', 'smallest: target must be a number from 0 to 1, got "0.5"'],
       [
         { atMost: 0.1, atLeast: 0.2 },
-        'smallest: target must be exactly one of atLeast, atMost, complementAtMost',
+        'smallest: target must be an object with exactly one of atLeast, atMost, complementAtMost, got 2 of them',
       ],
-      [{}, 'smallest: target must be exactly one of'],
+      [{}, 'smallest: target must be an object with exactly one of'],
       [
         { above: 0.1 },
         'smallest: above must be left out (the options are atLeast, atMost, complementAtMost), got 0.1',

@@ -87,7 +87,7 @@ export declare class DomainError extends RangeError {
     readonly code: string;
     readonly parameter: string;
     readonly received: unknown;
-    constructor(fn: string, parameter: string, requirement: string, received: unknown);
+    constructor(fn: string, parameter: string, requirement: string, received: unknown, shown?: string);
 }
 
 export interface EBarSquaredOptions {
