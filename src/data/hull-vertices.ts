@@ -78,8 +78,10 @@ export async function hullVerticesKernel(matrix: Matrix, pace: Pace): Promise<Ve
   // Far points first: they are vertices, and the sooner those are known the fewer tests fail.
   const order = byDistance(rows, d, firsts);
   if (pace.spend(40 * n * d)) await pace.pause(settledBefore);
-  search.seed();
-  if (pace.spend(4 * n * d * d)) await pace.pause(settledBefore);
+  for (let j = 0; j < d; j++) {
+    search.seed(j);
+    if (pace.spend(4 * n * d)) await pace.pause(settledBefore);
+  }
   for (let k = 0; k < order.length; k++) {
     let work = search.settle(order[k] as number);
     while (work < 0) {
@@ -201,15 +203,12 @@ class VertexSearch {
     return this.names.slice();
   }
 
-  /** The extremes of each column. */
-  seed(): void {
+  /** The extremes of a column. */
+  seed(column: number): void {
     const direction = new Float64Array(this.d);
-    for (let j = 0; j < this.d; j++) {
-      direction.fill(0);
-      for (const sign of [1, -1]) {
-        direction[j] = sign;
-        this.addFarthest(direction);
-      }
+    for (const sign of [1, -1]) {
+      direction[column] = sign;
+      this.addFarthest(direction);
     }
   }
 

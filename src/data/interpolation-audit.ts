@@ -175,6 +175,7 @@ export async function interpolationAudit(
   const exact = allIntegers(rows);
   const tolerances = columnTolerances(columnRanges(matrix), DEFAULT_TOLERANCE, exact);
   const rank = matrixRank(rows, n, d, centreOf(matrix, exact), tolerances);
+  if (pace.spend(2 * n * d * d)) await pace.pause(0);
   const { copies } = await hullVerticesKernel(matrix, pace);
   // A vertex with a twin lies in the hull of the others.
   const outside = copies.reduce((count, twins) => count + (twins === 1 ? 1 : 0), 0);
