@@ -53,8 +53,8 @@ export interface SizingRow {
 }
 
 /**
- * Sizes a sample in d variables: for each question that the library can answer under the law, the
- * probability at the planned number of points and the smallest numbers that reach the targets.
+ * Sizes a sample in d variables: for each question that the library can answer under the law in that
+ * dimension, the probability at the planned number of points and the smallest numbers that reach the targets.
  *
  * The limit theorem's size stands beside the exact one where there is such a theorem. A question whose
  * probability falls with n (random labels being separable) is sized so that its complement reaches the
@@ -91,6 +91,7 @@ export function sizingReport(args: SizingReportArgs): SizingReport {
   const rows = questions
     .filter(({ laws }) => laws === undefined || laws.includes(law.family))
     .filter(({ leastDimension = 1 }) => d >= leastDimension)
+    .filter(({ ask }) => inDomain(() => ask({ n: d, d, law })) !== undefined)
     .map((question) => rowFor(question, d, n, law, targets));
   return new SizingReport(d, law, n, rows);
 }
@@ -104,7 +105,8 @@ function rowFor(
 ): SizingRow {
   const { name, title, assumes, ask, limit } = question;
   const sizes = targets.map((target): SizingAnswer => {
-    const size = limit === undefined ? {} : { limit: limit.size(d, target, law) };
+    const limitSize = limit && inDomain(() => limit.size(d, target, law));
+    const size = limitSize === undefined ? {} : { limit: limitSize };
     try {
       return { target, answer: sizeFor(question, d, law, target), ...size };
     } catch (error) {
@@ -129,11 +131,16 @@ function plannedAt(
   d: number,
   law: Law,
 ): { planned?: Probability } {
-  if (n === undefined) return {};
+  const planned = n === undefined ? n : inDomain(() => ask({ n, d, law }));
+  return planned === undefined ? {} : { planned };
+}
+
+/** The result of a call, or undefined where a function refuses its arguments. */
+function inDomain<T>(call: () => T): T | undefined {
   try {
-    return { planned: ask({ n, d, law }) };
+    return call();
   } catch (error) {
-    if (error instanceof DomainError && error.parameter === 'n') return {};
+    if (error instanceof DomainError) return undefined;
     throw error;
   }
 }

@@ -37,6 +37,8 @@ const HALF_LOG_TWO_PI = 0.91893853320467274;
 const LONGEST_PIECE = 1.5;
 /** Below this a logarithm has steps of 1e-4 and more, and what lies beyond a cut cannot be summed. */
 export const UNRESOLVED = -1e12;
+/** Step of the slope of such a logarithm. */
+const SLOPE_STEP = 1e-3;
 
 /** A law of points in R^d as the count of facets needs it, d >= 2. */
 export interface FacetModel {
@@ -199,10 +201,11 @@ export function facetsBeyond(
   const { means } = integral;
   const start = form.at(0);
   if (start < UNRESOLVED && !(integral.log > UNRESOLVED)) {
-    // neighbouring doubles are too far apart for an integral; it is the value at the cut over a slope
+    // neighbouring doubles are too far apart for an integral; it is the value at the cut over the slope
     const digits = 2 + Math.abs(count.log) + Math.abs(model.tail.logTail);
-    const error = 64 - 4 * EPSILON * digits * start;
-    return { log: form.constant + start, error, commonError: 0, means };
+    const fall = (start - form.at(direction * SLOPE_STEP)) / SLOPE_STEP;
+    const log = form.constant + start - (fall > 1 ? Math.log(fall) : 0);
+    return { log, error: 1 - 4 * EPSILON * digits * start, commonError: 0, means };
   }
   if (integral.log === Number.NEGATIVE_INFINITY) {
     return { log: integral.log, error: 0, commonError: 0, means };

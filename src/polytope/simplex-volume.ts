@@ -33,7 +33,7 @@ export interface SimplexVolumeArgs {
 /** The law of a random simplex's volume, as {@link simplexVolume} gives it. */
 export interface SimplexVolume {
   /**
-   * Expected q-th power of the volume, q > -(d - r + 1).
+   * Expected q-th power of the volume, q > -(d - r + 1), for the beta law also q > -(d + 2b) - 2/(r + 1).
    *
    * @throws A {@link DomainError} if the moment does not exist
    */
@@ -54,7 +54,8 @@ export interface SimplexVolume {
  * \left[\frac{\Gamma(\frac d2 + \beta + 1)}{\Gamma(\frac{d+q}2 + \beta + 1)}\right]^{r+1}
  * \frac{\Gamma(X + 1)}{\Gamma(X - \frac q2 + 1)},$$
  *
- * for every real $q > -(d - r + 1)$; alike for the Gaussian law, and for the beta-prime law while
+ * for every real $q > -(d - r + 1)$ and $q > -(d + 2\beta) - \frac{2}{r+1}$, which is above it for points on
+ * or near the sphere; alike for the Gaussian law without the second limit, and for the beta-prime law while
  * $q < 2\beta - d$ (fewer than the degrees of freedom of a Student t). Mean and variance of the
  * logarithm are the derivatives at q = 0.
  *
@@ -93,10 +94,8 @@ export function simplexVolume(args: SimplexVolumeArgs): SimplexVolume {
   return Object.freeze({
     moment: (q: number): LogNumber => {
       checkFinite('simplexVolume.moment', 'q', q);
-      const least = -(d - r + 1);
-      if (q <= least) {
-        throw new DomainError('simplexVolume.moment', 'q', `above -(d - r + 1) = ${least}`, q);
-      }
+      const least = leastPower(law, d, r);
+      if (q <= least) throw new DomainError('simplexVolume.moment', 'q', `above ${least}`, q);
       if (law.family === 'betaPrime' && q >= 2 * excessOf(law, d)) {
         throw new DomainError('simplexVolume.moment', 'q', `below ${2 * excessOf(law, d)}`, q);
       }
@@ -105,6 +104,19 @@ export function simplexVolume(args: SimplexVolumeArgs): SimplexVolume {
     meanOfLog: mean,
     varianceOfLog: variance,
   });
+}
+
+/**
+ * The moments of powers up to this one are infinite: too many nearly degenerate simplices, of points that
+ * happen to agree or, near the boundary of the ball, have nowhere else to go.
+ */
+function leastPower(
+  law: GaussianLaw | BetaLaw | ResolvedBetaPrimeLaw,
+  d: number,
+  r: number,
+): number {
+  const degenerate = -(d - r + 1);
+  return law.family === 'beta' ? Math.max(degenerate, -(d + 2 * law.b) - 2 / (r + 1)) : degenerate;
 }
 
 /** log E Vol^q. */
@@ -126,7 +138,10 @@ function logMoment(
     add(half * (Math.log(r + 1) + r * Math.LN2));
   } else if (law.family === 'beta') {
     add(-(r + 1) * logGammaRatioKernel(d / 2 + law.b + 1, half));
-    add(logGammaRatioKernel((r + 1) * (law.b + d / 2) + r * half + 1, half));
+    const x = (r + 1) * (law.b + d / 2) + r * half + 1;
+    add(logGammaRatioKernel(x, half));
+    // near the pole the digits that cancelled in the argument are missed
+    if (x + half < 1) size += ((r + 1) * (d - half)) / (x + half);
   } else {
     const excess = excessOf(law, d);
     add((r + 1) * logGammaRatioKernel(excess, -half));

@@ -1,10 +1,15 @@
 import {
+  betaPrimeLaw,
   DomainError,
+  gaussian,
+  type Law,
   LogNumber,
   originInHull,
   sizingReport,
   smallest,
+  studentT,
   uniformBall,
+  uniformSphere,
 } from 'hullgauge';
 import { logSpaced } from 'hullgauge/plan';
 import { describe, expect, it } from 'vitest';
@@ -99,5 +104,19 @@ describe('logSpaced', () => {
   it('refuses an empty range and an endless grid', () => {
     expect(() => logSpaced(10, 1, 3)).toThrow('logSpaced: to must be >= from = 10, got 1');
     expect(() => logSpaced(1, 1e300, 1000)).toThrow(DomainError);
+  });
+
+  it('leaves out what has no formula for the law in that dimension', () => {
+    const asked = (d: number, law: Law): readonly string[] =>
+      sizingReport({ d, law, targets: [0.5] }).rows.map(({ question }) => question);
+    const always = ['originInHull', 'labelSeparability'];
+    expect(asked(20_000, gaussian())).toEqual(always);
+    expect(asked(3, studentT({ degreesOfFreedom: 0.3 }))).toEqual(always);
+    expect(asked(3, betaPrimeLaw(1.6))).toEqual(always);
+    // the phase transition has no form on the line
+    const onLine = sizingReport({ d: 1, law: uniformSphere(), targets: [0.9] }).rows[2];
+    expect(onLine?.question).toBe('hullVolumeRatio');
+    expect(onLine?.sizes[0]?.answer?.value).toBe(5);
+    expect(onLine?.sizes[0]?.limit).toBeUndefined();
   });
 });

@@ -345,6 +345,28 @@ describe('simplexVolume', () => {
     }
   });
 
+  it('ends where points near the boundary have nowhere else to go', () => {
+    const circle = uniformSphere();
+    // three points of a circle: 4 pi^2 R = abc / (4 Vol), the area falls like the cube of their spread
+    const triangle = simplexVolume({ d: 2, law: circle });
+    expect(triangle.moment(-0.666).log).toBeGreaterThan(triangle.moment(-0.6).log);
+    expect(() => triangle.moment(-0.67)).toThrow('q must be above -0.666');
+    // a chord: E length^q = 2^q Gamma((1 + q)/2) / (sqrt(pi) Gamma(1 + q/2))
+    const chord = simplexVolume({ d: 2, r: 1, law: circle });
+    expect(chord.moment(-0.5).value).toBeCloseTo(
+      (Math.SQRT1_2 * 3.6256099082219083) / (Math.sqrt(Math.PI) * 1.2254167024651776),
+      12,
+    );
+    expect(() => chord.moment(-1)).toThrow('q must be above -1');
+    expect(() => simplexVolume({ d: 4, r: 1, law: betaLaw(-0.999) }).moment(-3.75)).toThrow(
+      DomainError,
+    );
+    // two points of the line that crowd at its ends agree to within delta with probability delta^0.002
+    const crowd = simplexVolume({ d: 1, law: betaLaw(-0.999) });
+    expect(crowd.moment(-0.0019999).log).toBeGreaterThan(crowd.moment(-0.001).log);
+    expect(() => crowd.moment(-0.0021)).toThrow('q must be above -0.002');
+  });
+
   it('refuses moments that do not exist', () => {
     expect(() => simplexVolume({ d: 2, law: uniformBall() }).moment(-1)).toThrow('q must be');
     expect(() => simplexVolume({ d: 2, law: betaPrimeLaw(2) }).moment(2)).toThrow('q must be');
