@@ -120,7 +120,10 @@ export function expectedFacetsKernel(
   if (hull === 'symmetric' && n === d) return LogNumber.fromLog(d * Math.LN2, d * EPSILON);
   const model = facetModel(law, d);
   if (hull === 'withCentre') {
-    const above = facetsBeyond(model, count, 0, 1);
+    // of many points none leave the centre on the far side of a facet, to any digit; far from the centre
+    // an integral from there has fewer digits than the whole
+    const above =
+      n > 10 * d + 2000 ? facetTotal(model, count, 'line') : facetsBeyond(model, count, 0, 1);
     const binomial = logBinomialKernel(Math.min(n, 2 ** 1000), d - 1);
     const atCentre = count.log > 30 ? Number.NEGATIVE_INFINITY : binomial + (d - n) * Math.LN2;
     const error = EPSILON * (4 + 2 * binomial + Math.abs(n - d));

@@ -104,6 +104,22 @@ describe('expectedFacets', () => {
     expect(Math.abs(light.log - normal.log)).toBeLessThan(1e-6);
   });
 
+  it('is the same with the centre for many points', () => {
+    const law = studentT({ degreesOfFreedom: 0.02 });
+    for (const n of [5000, 1e6, LogNumber.fromLog(129.85), LogNumber.fromLog(130.85)]) {
+      const ask = { n, d: 63, law };
+      const [plain, centred] = [
+        expectedFacets(ask),
+        expectedFacets({ ...ask, hull: 'withCentre' }),
+      ];
+      expect(Math.abs(centred.log - plain.log)).toBeLessThanOrEqual(plain.logError);
+    }
+    // where the two ways meet
+    const near = (n: number): number =>
+      expectedFacets({ n, d: 3, law: gaussian(), hull: 'withCentre' }).log;
+    expect(near(2031) - near(2030)).toBeCloseTo(near(2030) - near(2029), 6);
+  });
+
   it('agrees between its two forms where they meet, n = 2 d', () => {
     for (const law of [uniformBall(), gaussian(), betaPrimeLaw(40)] as const) {
       for (const d of [5, 40]) {
