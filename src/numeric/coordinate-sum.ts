@@ -30,6 +30,9 @@ const DUAL = 9;
 /** Number of k, in steps of two, that one pass over the nodes yields. */
 export const BLOCK = 6;
 
+/** Nats below the peak at which the nodes on the half line end. */
+const FALL = 60;
+
 /** Numbers to a node. */
 const WIDTH = 8;
 
@@ -156,11 +159,8 @@ export class CoordinateSumTable {
     const step = fineness * Math.min(1, Math.sqrt(32 / kMax));
     const scale = 1 / (1 + (Z * Z) / 8);
     const first = kMin < 4 ? -4.6 : kMin < 40 ? -4 : -3.2;
-    // (1 - 1/X)^((k-1)/2) e^(-Z^2 X / 2), X = x^2, is about the size of the integrand.
-    const peak = 0.5 + Math.sqrt(0.25 + (kMax - 1) / (Z * Z));
-    const height = 0.5 * ((kMax - 1) * Math.log1p(-1 / peak) - Z * Z * peak);
-    const end = Math.sqrt((2 * (50 - height)) / (Z * Z)) - 1;
-    const last = Math.log(end / scale);
+    const [peak, end] = halfLineRange(Z, kMax - 1);
+    const last = Math.log(end / (1 + Math.sqrt(1 + end)) / scale);
     let reference = Number.NEGATIVE_INFINITY;
     const dual = Z > DUAL;
     this.square = dual ? 0 : 1;
@@ -175,7 +175,7 @@ export class CoordinateSumTable {
       const E = dual ? Math.exp(-0.5 * Z * Z * square) : (FADDEEVA[0] as number);
       const logModulus =
         0.5 * (Math.log(square) + (dual ? 2 * Math.log(A) : Math.log(A * A + E * E)));
-      if (1 + square <= peak) reference = logModulus;
+      if (square <= peak) reference = logModulus;
       const jacobian = (2 * step * rho * (1 + shrink)) / square;
       const pull = -Z * Z * square;
       // -i times the bracket, so that the real part is wanted
@@ -244,6 +244,21 @@ export class CoordinateSumTable {
         EPSILON * (cancellation * (8 + 3 * q) + 2 * q * Math.abs(top) + 4);
     }
   }
+}
+
+/**
+ * Where (s / (1 + s))^(m/2) e^(-Z^2 s / 2), s = x^2 - 1, about the size of the integrand, is largest, and
+ * where it has fallen by FALL nats beyond.
+ */
+function halfLineRange(Z: number, m: number): readonly [number, number] {
+  const q = m / (Z * Z);
+  const peak = q / (0.5 + Math.sqrt(0.25 + q));
+  const log = (s: number): number => -Math.log1p(1 / s);
+  let end = peak;
+  for (let i = 0; i < 20; i++) {
+    end = peak + (2 * FALL) / (Z * Z) + q * (log(end) - log(peak));
+  }
+  return [peak, end];
 }
 
 const SUMS: Float64Array = /* @__PURE__ */ new Float64Array(24);

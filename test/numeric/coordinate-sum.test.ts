@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { BLOCK, CoordinateSumTable, tableClass } from '../../src/numeric/coordinate-sum.ts';
 import { CoordinateSumTransform } from '../../src/numeric/coordinate-sum-transform.ts';
-import { logGammaRatioKernel } from '../../src/special/log-gamma.ts';
+import { logGamma, logGammaRatioKernel } from '../../src/special/log-gamma.ts';
 
 const values = new Float64Array(BLOCK);
 const errors = new Float64Array(BLOCK);
@@ -40,6 +40,20 @@ describe('the coordinate-sum transform', () => {
         Math.log(k - 1) + 0.5 * Math.log(Math.PI) - logGammaRatioKernel((k - 1) / 2, 0.5);
       expect(transform.log(k, 0)).toBe(exact);
       expect(Math.abs(direct(k, 1e-8) - exact)).toBeLessThan(2e-13);
+    }
+  });
+
+  it('is the mass at the corners for large Z', () => {
+    // near an axis c^2 - 1 is twice the sum of the other coordinates, to order k^2 / Z^2
+    for (const Z of [1e4, 1e5, 1e6]) {
+      for (const k of [2, 10, 100, 499, 767]) {
+        const logSphere = Math.LN2 + (k / 2) * Math.log(Math.PI) - logGamma(k / 2);
+        const constant = logGammaRatioKernel((k - 1) / 2, 0.5) - 0.5 * Math.log(Math.PI);
+        const corners =
+          Math.log(k * (k - 1)) + k * Math.LN2 - logSphere - (2 * k - 4) * Math.log(Z);
+        const rest = direct(k, Z) + 0.5 * Z * Z + constant - corners;
+        expect(Math.abs(rest)).toBeLessThan((2 * k * k) / (Z * Z) + 1e-15 * Z * Z);
+      }
     }
   });
 

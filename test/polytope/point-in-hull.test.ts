@@ -38,6 +38,24 @@ describe('pointInHull', () => {
     }
   });
 
+  it('falls like the normal density of the query, as far as distances go', () => {
+    for (const [n, d] of [
+      [250_000, 500],
+      [1e6, 3],
+      [LogNumber.fromLog(800), 1000],
+    ] as const) {
+      let last = 0;
+      for (const r of [1e3, 1e4, 1e5, 1e6]) {
+        const { log, logError } = pointInHull({ n, d, mahalanobisDistance: r });
+        expect(log).toBeLessThan(last);
+        // what is left grows with d log(r) only
+        expect(Math.abs(log + 0.5 * r * r)).toBeLessThan(60 * d + 1000);
+        expect(logError).toBeLessThan(1e-15 * r * r + 1e-9);
+        last = log;
+      }
+    }
+  });
+
   it('has terms of mass 1/2 on each parity', () => {
     const error = new Float64Array(1);
     for (const [n, r] of [
