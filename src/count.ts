@@ -32,7 +32,7 @@ export function resolveCount(
     return { n: value, log: Math.log(value) };
   }
   if (isLogNumber(value)) {
-    const log = Number(value.log);
+    const log = Number(value.log ?? NaN);
     if (log > EXACT_LOG && log < Infinity) return { n: Math.exp(log), log };
     const n = Math.round(Math.exp(log));
     if (n >= min && n < 1e16) return { n, log: Math.log(n) };
