@@ -361,3 +361,10 @@ describe('bad input', () => {
     expect(() => expectedHullIntrinsicVolume({ ...ask, k: -1 })).toThrow('k must be');
   });
 });
+
+it('has the complement 2/(n + 1) on the line, through 2^53', () => {
+  for (const n of [2 ** 53 - 2, 2 ** 53 - 1, 2 ** 53, 2 ** 53 + 2, 2 ** 54]) {
+    const { complement } = hullVolumeRatio({ n, d: 1, law: uniformBall() });
+    expect(complement * (n / 2)).toBeCloseTo(1, 12);
+  }
+});
