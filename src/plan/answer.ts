@@ -34,6 +34,10 @@ type At = (x: number) => Evaluation | undefined;
 export function answerAt(condition: Condition, walk: Walk, end: 'first' | 'last'): Answer {
   const evaluation = walk[end];
   const { x, probability } = evaluation;
+  if (end === 'last' && walk.logs) {
+    const value = Math.exp(x);
+    return { value, log: x, exact: false, bracket: [value, value], probability };
+  }
   const log = Math.log(Math.abs(x));
   if (condition.certain(evaluation)) {
     return { value: x, log, exact: walk.integer, bracket: [x, x], probability };
@@ -156,7 +160,7 @@ function certainSide(
   for (let reach = step; reach < limit; reach *= 4) {
     const next = at(from.x + sign * reach);
     if (next === undefined) {
-      return approachEdge(condition, last, from.x + sign * reach, false);
+      return approachEdge(condition.at, last, from.x + sign * reach, false);
     }
     const expected = end === undefined || next.gap < 0 === end.gap < 0;
     if (expected && condition.certain(next)) return next;

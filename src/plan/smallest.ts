@@ -148,8 +148,9 @@ function start(condition: Condition): Walk {
 
 function unreachable(fn: string, condition: Condition, walk: Walk, target: Target): DomainError {
   const best = walk.last.gap >= walk.first.gap ? walk.last : walk.first;
+  const x = walk.logs && best === walk.last ? `e^${best.x}` : best.x;
   const where =
-    walk.bounded || best === walk.first ? `at ${condition.parameter} = ${best.x}` : 'in the limit';
+    walk.bounded || best === walk.first ? `at ${condition.parameter} = ${x}` : 'in the limit';
   const requirement = `within reach (${condition.name} reaches ${text(best)} ${where})`;
   return new DomainError(fn, 'target', requirement, targetText(target));
 }

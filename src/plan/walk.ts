@@ -20,6 +20,8 @@ export interface Walk {
   readonly last: Evaluation;
   /** Whether `last` is the top of the domain, rather than as far as the walk went. */
   readonly bounded: boolean;
+  /** Whether `last` is the logarithm of the argument. */
+  readonly logs?: true;
 }
 
 /** Whole numbers tried in search of the low end, which may be another argument: variables, for one. */
@@ -76,7 +78,7 @@ export function walkFrom(condition: Condition, integer: boolean, first: Evaluati
     if (station <= last.x) continue;
     const next = condition.at(station);
     if (next === undefined) {
-      const edge = approachEdge(condition, last, station, integer);
+      const edge = approachEdge(condition.at, last, station, integer);
       return changed(edge)
         ? foundChange(integer, first, last, edge, false)
         : { integer, first, last: edge, bounded: true };
@@ -89,7 +91,14 @@ export function walkFrom(condition: Condition, integer: boolean, first: Evaluati
   last = { ...top, x: LOG_START };
   for (let log = 4 * LOG_START; log < LOG_END; log *= 4) {
     const next = condition.atLog(log);
-    if (next === undefined) return { integer, first, last: top, bounded: true };
+    if (next === undefined) {
+      const edge = approachEdge(condition.atLog, last, log, false);
+      // Most questions that end here take no logarithms at all.
+      if (edge.x === LOG_START) return { integer, first, last: top, bounded: true };
+      return changed(edge)
+        ? foundChange(true, first, last, edge, true)
+        : { integer, first, last: edge, bounded: true, logs: true };
+    }
     if (changed(next)) {
       for (const x of last.x === LOG_START ? [LAST_INTEGER, LAST_DOUBLE] : []) {
         const middle = condition.at(x);
@@ -125,7 +134,7 @@ function firstInteger(condition: Condition): Evaluation | undefined {
     const evaluation = condition.at(x);
     if (evaluation === undefined) continue;
     if (x <= 4) return evaluation;
-    return approachEdge(condition, evaluation, 4, true);
+    return approachEdge(condition.at, evaluation, 4, true);
   }
   return undefined;
 }
@@ -140,20 +149,22 @@ function firstReal(condition: Condition): Evaluation | undefined {
     }
     // Domains mostly start at a station; only elsewhere is a search for the edge worth its cost.
     const atEdge = condition.at(x - 1e-9 * Math.max(1, Math.abs(x))) === undefined;
-    return atEdge || x <= 1e-300 ? evaluation : approachEdge(condition, evaluation, outside, false);
+    return atEdge || x <= 1e-300
+      ? evaluation
+      : approachEdge(condition.at, evaluation, outside, false);
   }
   return undefined;
 }
 
 /** The argument inside the domain that is nearest to one outside it, by bisection. */
 export function approachEdge(
-  condition: Condition,
+  at: Condition['at'],
   inside: Evaluation,
   outside: number,
   integer: boolean,
 ): Evaluation {
   // The largest whole number is the commonest edge.
-  if (integer && outside > inside.x && condition.at(inside.x + 1) === undefined) return inside;
+  if (integer && outside > inside.x && at(inside.x + 1) === undefined) return inside;
   let last = inside;
   let out = outside;
   for (let step = 0; step < 1100; step++) {
@@ -161,7 +172,7 @@ export function approachEdge(
     if (integer) middle = out > last.x ? Math.floor(middle) : Math.ceil(middle);
     const width = Math.abs(out - last.x);
     if (integer ? width <= 1 : middle === last.x || middle === out || width < 2 ** -52) return last;
-    const next = condition.at(middle);
+    const next = at(middle);
     if (next === undefined) out = middle;
     else last = next;
   }

@@ -6,6 +6,7 @@ import {
   labelSeparability,
   largest,
   logisticFitExists,
+  nextPointInHull,
   originInHull,
   originInHullLowerBound,
   Probability,
@@ -138,6 +139,22 @@ describe('directions and ends', () => {
     });
     expect(smallest(originInHull, 'd', { n: 40 }, 0.5)).toMatchObject({ value: 0, exact: true });
     expect(smallest(originInHull, 'n', { d: 4 }, 0)).toMatchObject({ value: 0, exact: true });
+  });
+
+  it('ends among logarithms where the domain does', () => {
+    // a scale so small is refused for more than about 1e100 points
+    const { value, log, exact } = largest(
+      nextPointInHull,
+      'n',
+      { d: 20, queryScale: 5e-324 },
+      0.0108,
+    );
+    expect(exact).toBe(false);
+    expect(value / 1e100).toBeCloseTo(1, 10);
+    expect(log).toBeCloseTo(100 * Math.LN10, 10);
+    expect(() =>
+      smallest(nextPointInHull, 'n', { d: 20, queryScale: 5e-324 }, 0.0108),
+    ).not.toThrow();
   });
 
   it('refuses a largest that does not exist, and a target out of reach with the limit', () => {
