@@ -6,6 +6,9 @@
  * Z^2 on panels of unequal width, built where they are first needed; the last coefficients bound the
  * error, and a panel whose coefficients have not died down is left to direct evaluation, like all
  * larger k, whose integrands are so narrow that few values are taken.
+ *
+ * The coefficients depend on nothing but the panel and k, and making them is nine tenths of the work of a
+ * query, so the next one finds them in a store of bounded size.
  */
 import { erfKernel } from '../special/error-function.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
@@ -19,7 +22,7 @@ const INTERPOLATED = 48;
 
 /** Nodes of a panel for the k of a table with the given last k. */
 function degreeOf(high: number): number {
-  return high <= 12 ? 20 : high <= 24 ? 22 : 26;
+  return high <= 12 ? 24 : high <= 24 ? 26 : 30;
 }
 /** Error at which the interpolant of one k on a panel is refused. */
 const LARGEST_ERROR = 2e-13;
@@ -42,6 +45,10 @@ interface Block {
   readonly values: Float64Array;
   readonly errors: Float64Array;
 }
+
+/** The interpolants made so far, by panel and first k: 1.3 kB each, emptied before it holds 2 MB. */
+const INTERPOLANTS: Map<number, Block> = /* @__PURE__ */ new Map();
+const MOST_INTERPOLANTS = 1500;
 
 /** What is known at one Z, or on one panel, for all k so far. */
 class Site {
@@ -118,6 +125,10 @@ export class CoordinateSumTransform {
     low: number,
     high: number,
   ): Block {
+    // start <= INTERPOLATED
+    const blockKey = 64 * index + start;
+    const known = INTERPOLANTS.get(blockKey);
+    if (known !== undefined) return known;
     const key = 64 * index + degree;
     let panel = this.panels.get(key);
     if (panel === undefined) {
@@ -129,11 +140,9 @@ export class CoordinateSumTransform {
       panel = new Site(points);
       this.panels.set(key, panel);
     }
-    let block = panel.blocks.get(start);
-    if (block === undefined) {
-      block = interpolate(panel.tablesOf(low, high), start);
-      panel.blocks.set(start, block);
-    }
+    const block = interpolate(panel.tablesOf(low, high), start);
+    if (INTERPOLANTS.size === MOST_INTERPOLANTS) INTERPOLANTS.clear();
+    INTERPOLANTS.set(blockKey, block);
     return block;
   }
 }

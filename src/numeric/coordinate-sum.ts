@@ -155,7 +155,7 @@ export class CoordinateSumTable {
    */
   private fillHalfLine(Z: number, kMin: number, kMax: number): void {
     // Near the switch the integrand oscillates, the faster the larger k.
-    const fineness = Z > 1.9 ? 0.075 : Z < 1.66 && kMax > 96 ? 0.03 : 0.05;
+    const fineness = Z > 1.9 ? 0.06 : Z < 1.66 && kMax > 96 ? 0.03 : 0.05;
     const step = fineness * Math.min(1, Math.sqrt(32 / kMax));
     const scale = 1 / (1 + (Z * Z) / 8);
     const first = kMin < 4 ? -4.6 : kMin < 40 ? -4 : -3.2;
