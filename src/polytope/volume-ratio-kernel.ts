@@ -64,8 +64,8 @@ function uniformMarginal(k: number, n: number, hull: Hull): Probability | undefi
   for (let i = 0; i < k; i++) {
     numerator *= n - k + i;
     denominator *= n + 1 + i;
-    // 2^53 may have been rounded from 2^53 + 1
-    if (!(denominator < 2 ** 53)) return undefined;
+    // 2^53 + 1 would be rounded to 2^53
+    if (!(n + i < 2 ** 53 && denominator <= 2 ** 53)) return undefined;
   }
   return quotientProbability(numerator, denominator);
 }
