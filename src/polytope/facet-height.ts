@@ -174,6 +174,10 @@ function farCdf(model: FacetModel, count: ResolvedCount, x: number, offset: numb
   return probabilityFromTail(Math.exp(log), log, side, beyond.error + total.error);
 }
 
+/** The largest double below 1, and where heights of the unit ball come near it. */
+const LAST_BELOW_ONE = 0.99999999999999989;
+const NEARLY_ONE = 0.999999999;
+
 /**
  * Newton's rule for the logarithm of the smaller tail, or the logarithm of that, between brackets.
  */
@@ -189,13 +193,18 @@ function heightQuantile(
   const goal = lower ? target.log : target.logComplement;
   const total = facetTotal(model, count, 'line').log;
   const sign = lower ? 1 : -1;
-  let x = mean;
+  const gapAt = (x: number): number => {
+    const p = heightCdf(model, count, x, (x - mean) / deviation);
+    return (lower ? p.log : p.logComplement) - goal;
+  };
+  // between the last double below 1 and 1
+  if (end === 1 && mean > NEARLY_ONE && gapAt(LAST_BELOW_ONE) * sign < 0) return end;
+  let x = Math.min(mean, end === 1 ? LAST_BELOW_ONE : end);
   let low = -end;
   let high = end;
   for (let i = 0; i < MAX_STEPS; i++) {
-    const p = heightCdf(model, count, x, (x - mean) / deviation);
-    const log = lower ? p.log : p.logComplement;
-    const gap = log - goal;
+    const gap = gapAt(x);
+    const log = gap + goal;
     if (gap === 0) return x;
     // the cdf rises: too much of the lower tail, or too little of the upper one, means x is too high
     if (gap * sign > 0) high = x;

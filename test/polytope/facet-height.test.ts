@@ -1,4 +1,12 @@
-import { capProbability, facetHeight, gaussian, Probability, uniformBall } from 'hullgauge';
+import {
+  betaLaw,
+  capProbability,
+  facetHeight,
+  gaussian,
+  LogNumber,
+  Probability,
+  uniformBall,
+} from 'hullgauge';
 import { expect, test } from 'vitest';
 
 // log P(H <= x) is n log F(x) to leading order, and F(x) = v(-x)
@@ -26,4 +34,19 @@ test.each([1e300, 1.7e308])('quantiles in the far tail of %d heights', (n) => {
     // neighbouring doubles are as far apart as the slope of log F^n makes them
     expect(Math.abs(height.cdf(x).log / log - 1)).toBeLessThan(1e-11);
   }
+});
+
+test('heights nearer to 1 than any double below it', () => {
+  const args = { d: 7, law: betaLaw(0.6103090986962633) };
+  const near = facetHeight({ ...args, n: LogNumber.fromLog(174.91194699901186) });
+  for (const p of [1e-300, 0.01, 0.4445945710130036, 0.99]) {
+    expect(near.quantile(p)).toBe(1);
+    expect(near.cdf(1).value).toBe(1);
+  }
+  // a distance of some units in the last place
+  const units = facetHeight({ ...args, n: LogNumber.fromLog(165) });
+  const median = units.quantile(0.5);
+  expect(median).toBeLessThan(1);
+  expect(units.cdf(median).value).toBeGreaterThan(0.1);
+  expect(units.cdf(1 - 2 * (1 - median)).value).toBeLessThan(0.5);
 });
