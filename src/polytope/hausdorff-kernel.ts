@@ -124,7 +124,7 @@ export function estimatedMean(
   for (let s = start; s > 0; s = from) {
     // the tail of a coordinate falls by a factor over 1/steepness near the sphere, and as a normal one inside
     const slope = steepness * Math.min(1, Math.max(Math.tanh(s), 1 / Math.sqrt(steepness)));
-    from = Math.max(0, s - 0.03 / slope);
+    from = Math.max(0, s - 0.12 / slope);
     let piece = 0;
     for (let i = 0; i < RULE_POINTS; i++) {
       const node = ruleNode(i, from, s);
