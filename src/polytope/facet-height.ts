@@ -177,6 +177,8 @@ function farCdf(model: FacetModel, count: ResolvedCount, x: number, offset: numb
 /** The largest double below 1, and where heights of the unit ball come near it. */
 const LAST_BELOW_ONE = 0.99999999999999989;
 const NEARLY_ONE = 0.999999999;
+/** Deviation over mean below which neighbouring doubles tell heights apart too coarsely for Newton's rule. */
+const COARSE = 1e-12;
 
 /**
  * Newton's rule for the logarithm of the smaller tail, or the logarithm of that, between brackets.
@@ -202,6 +204,8 @@ function heightQuantile(
   let x = Math.min(mean, end === 1 ? LAST_BELOW_ONE : end);
   let low = -end;
   let high = end;
+  // Where the whole law lies between a few doubles the least is wanted that reaches the target.
+  const coarse = deviation < COARSE * Math.abs(mean);
   for (let i = 0; i < MAX_STEPS; i++) {
     const gap = gapAt(x);
     const log = gap + goal;
@@ -214,10 +218,11 @@ function heightQuantile(
     const change = log < -1 && goal < -1 ? log * Math.log(log / goal) : Math.min(gap, 3);
     let next = x - (sign * change) / slope;
     // beyond UNRESOLVED the quotient of two such small numbers is noise: bisect
-    if (!(next > low && next < high) || log < UNRESOLVED) {
+    if (!(next > low && next < high) || log < UNRESOLVED || coarse) {
       next = Number.isFinite(low + high) ? 0.5 * (low + high) : x - 2 * sign * Math.sign(gap);
+      if (coarse && !(next > low && next < high)) return high;
     }
-    if (Math.abs(next - x) <= 2.3e-16 * Math.abs(x) + 1e-17 * deviation) return next;
+    if (!coarse && Math.abs(next - x) <= 2.3e-16 * Math.abs(x) + 1e-17 * deviation) return next;
     x = next;
   }
   throw new Error(

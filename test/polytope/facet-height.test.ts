@@ -43,6 +43,16 @@ test('heights nearer to 1 than any double below it', () => {
     expect(near.quantile(p)).toBe(1);
     expect(near.cdf(1).value).toBe(1);
   }
+  // all between two doubles, the upper of which is the least that reaches any level
+  const between = facetHeight({
+    d: 4,
+    law: betaLaw(12.255399188372753),
+    n: LogNumber.fromLog(526.5283845129469),
+  });
+  for (const p of [0.1, 0.4641078320425004, 0.9]) {
+    expect(between.quantile(p)).toBe(1 - 2 ** -53);
+  }
+  expect(between.quantile(0.009)).toBe(1 - 2 ** -52);
   // a distance of some units in the last place
   const units = facetHeight({ ...args, n: LogNumber.fromLog(165) });
   const median = units.quantile(0.5);
