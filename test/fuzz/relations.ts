@@ -34,6 +34,10 @@ const cover: Relation = {
 const family = (args: Readonly<Record<string, unknown>>): string =>
   (args['law'] as { family?: string } | undefined)?.family ?? 'gaussian';
 
+/** Whether the law is that of the sphere on the line. */
+const isTwoPoints = ({ d, law }: Readonly<Record<string, unknown>>): boolean =>
+  d === 1 && (law as { b?: number } | undefined)?.b === -1;
+
 /** The relations by function. */
 export const relations: Readonly<Record<string, Relation>> = {
   originInHull: nd,
@@ -89,7 +93,11 @@ export const relations: Readonly<Record<string, Relation>> = {
   nextPointInHull: {
     rises: ['n', 'hull'],
     falls: ['d', 'queryScale'],
-    where: (args, parameter) => parameter !== 'd' || family(args) === 'gaussian',
+    where: (args, parameter) => {
+      if (parameter === 'd') return family(args) === 'gaussian';
+      // two points meet the next one more often than they surround the centre
+      return parameter !== 'queryScale' || !isTwoPoints(args);
+    },
   },
   pointInHull: { rises: ['n'], falls: ['d', 'mahalanobisDistance'] },
   queriesInHull: nd,
