@@ -5,6 +5,7 @@
 import { checkFinite, DomainError } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { isLogNumber, LogNumber } from '../log-number.ts';
+import { errorShare } from '../numeric/stated-error.ts';
 import { logSumExpKernel } from '../special/log-domain.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import { logBallVolumeKernel } from './ball-kernel.ts';
@@ -86,8 +87,7 @@ export function steinerVolume(body: Body, distance: number): LogNumber {
   // The error of each term counts with its share.
   let error = EPSILON * (4 + Math.abs(log));
   for (let k = 0; k <= d; k++) {
-    const share = Math.exp((terms[k] as number) - log);
-    if (share > 0) error += share * (errors[k] as number);
+    error += errorShare(terms[k] as number, errors[k] as number, log);
   }
   return LogNumber.fromLog(log, error);
 }

@@ -14,6 +14,7 @@ import { EPSILON } from '../epsilon.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { log1mExpKernel, log1pmxKernel } from '../special/log-domain.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
+import { errorShare } from './stated-error.ts';
 
 /** Up to this n the sum is used throughout; the line integral needs the decay of |z|^-n. */
 const FEW = 12;
@@ -40,7 +41,7 @@ export function largestSpacingTail(
     out[1] = Number.POSITIVE_INFINITY;
     return false;
   }
-  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, logRest, out);
+  if (logFirst < -0.5 || n <= FEW) return alternatingSum(n, a, logRest, Math.min(logFirst, 0), out);
   return smallerTail(logAllShort(n, a, out), out);
 }
 
@@ -59,15 +60,20 @@ function logReflected(n: number, a: number, out: Float64Array): number {
   const rest = n * a - 1;
   const short = largestSpacingTail(n, a / rest, out);
   const inner = short ? (out[0] as number) : log1mExpKernel(out[0] as number);
-  const share = short ? 1 : Math.exp((out[0] as number) - inner);
-  const error = share > 0 ? share * (out[1] as number) : 0;
+  // of the complement as much as the tail has of it
+  const error = errorShare(out[0] as number, out[1] as number, inner);
   out[1] = error + EPSILON * n * (2 / rest + Math.abs(Math.log(rest)));
   return (n - 1) * Math.log(rest) + inner;
 }
 
-function alternatingSum(n: number, a: number, logRest: number, out: Float64Array): boolean {
-  // relative to the first term, which may be far below every double, or to 1
-  const scale = Math.min(Math.log(n) + (n - 1) * logRest, 0);
+/** The sum relative to e^scale: to its first term, which may be far below every double, or to 1. */
+function alternatingSum(
+  n: number,
+  a: number,
+  logRest: number,
+  scale: number,
+  out: Float64Array,
+): boolean {
   let sum = 0;
   let error = 0;
   for (let k = 1; k <= n && k * a < 1; k++) {

@@ -7,10 +7,11 @@ import { type Count, resolveCount } from '../count.ts';
 import { checkInteger, checkOptions } from '../domain.ts';
 import type { Law } from '../law.ts';
 import { LogNumber } from '../log-number.ts';
+import { complementError, sumOfLogs } from '../numeric/stated-error.ts';
 import { logBetaFaces } from './beta-faces.ts';
 import { checkFaceDimension, checkFaceLaw } from './face-options.ts';
-import { expectedFacetsKernel, resolveFacetLaw, sumOfLogs } from './facets.ts';
-import { complementError, logChoices, logGaussianFaces } from './gaussian-faces.ts';
+import { expectedFacetsKernel, resolveFacetLaw } from './facets.ts';
+import { logChoices, logGaussianFaces } from './gaussian-faces.ts';
 import { type Hull, resolveHull } from './hull-options.ts';
 
 /** Arguments of {@link expectedVertices}. */

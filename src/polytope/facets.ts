@@ -9,8 +9,8 @@ import { checkLaw, excessOf, type Law } from '../law.ts';
 import { LogNumber } from '../log-number.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { NormalTail } from '../numeric/normal-tail.ts';
+import { errorShare, sumOfLogs } from '../numeric/stated-error.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
-import { logAddExpKernel } from '../special/log-domain.ts';
 import { facetModel, facetsBeyond, facetTotal } from './facet-measure.ts';
 import { checkDimension, type Hull, LEAST_MARGINAL, resolveHull } from './hull-options.ts';
 
@@ -133,14 +133,6 @@ export function expectedFacetsKernel(
   return LogNumber.fromLog(total.log, total.error);
 }
 
-/** The sum of two numbers given by their logarithms, each with the bound of its error. */
-export function sumOfLogs(a: number, aError: number, b: number, bError: number): LogNumber {
-  const log = logAddExpKernel(a, b);
-  const share = (part: number, error: number): number =>
-    part > Number.NEGATIVE_INFINITY ? Math.exp(part - log) * error : 0;
-  return LogNumber.fromLog(log, share(a, aError) + share(b, bError) + EPSILON * Math.abs(log));
-}
-
 /** d = 1: the hull is a segment, or a single point where two points of -1 and 1 may coincide. */
 function endsOfSegment(
   law: ReturnType<typeof checkLaw>,
@@ -206,8 +198,7 @@ export function expectedFacetsBelow(args: ExpectedFacetsBelowArgs): LogNumber {
     if (above.log < total.log - Math.LN2) {
       // nearly all of them: the integral from far below would lose the digits that the total has
       const share = Math.exp(above.log - total.log);
-      const lost = share > 0 ? share * above.error : 0;
-      const error = (total.error + lost) / (1 - share);
+      const error = (total.error + errorShare(above.log, above.error, total.log)) / (1 - share);
       return LogNumber.fromLog(total.log + Math.log1p(-share), error);
     }
   }

@@ -17,6 +17,7 @@ import {
   orthantSequenceSlope,
 } from '../numeric/orthant-sequences.ts';
 import { logOutwardSum, paritySplit } from '../numeric/parity-split.ts';
+import { complementError } from '../numeric/stated-error.ts';
 import { certainty, type Probability } from '../probability.ts';
 import { logBinomialKernel } from '../special/log-beta.ts';
 import { stirlingRemainderKernel } from '../special/stirling-remainder.ts';
@@ -51,11 +52,6 @@ export function gaussianMembership(
 export function centreMembership(count: ResolvedCount, d: number, hull: Hull): Probability {
   if (hull === 'plain') return wendel(count.n, d);
   return certainty(hull === 'withCentre' || count.n > 0);
-}
-
-/** Bound on the error of the logarithm of the complement. */
-export function complementError({ value, complement, logError }: Probability): number {
-  return value > 0.5 ? logError : (logError * value) / complement;
 }
 
 /** P(v given points do not span a face of the hull of n >= v points): the complement is survival. */

@@ -19,6 +19,7 @@ import { EPSILON } from '../epsilon.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { RULE_POINTS, ruleNode, ruleWeight } from '../numeric/gauss-legendre.ts';
 import { digammaKernel } from '../numeric/polygamma.ts';
+import { complementError, errorShare } from '../numeric/stated-error.ts';
 import type { Probability } from '../probability.ts';
 import { logAddExpKernel, logSubExpKernel } from '../special/log-domain.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
@@ -32,15 +33,7 @@ export interface LogBound {
 
 /** log P(0 not in the hull) from Wendel's probability that it is, with the error of that side. */
 export function logOutside(inside: Probability): LogBound {
-  const { value, complement, logComplement, logError } = inside;
-  const error = value < complement ? logError * (value / complement) : logError;
-  return { log: logComplement, error };
-}
-
-/** What the error of one term adds to that of the logarithm of a sum; of a term that vanishes, nothing. */
-function errorShare(term: LogBound, logSum: number): number {
-  const share = Math.exp(term.log - logSum);
-  return share > 0 ? term.error * share : 0;
+  return { log: inside.logComplement, error: complementError(inside) };
 }
 
 /** log of the probability that the foot of the perpendicular from 0 lies in the typical facet, d >= 2. */
@@ -66,7 +59,8 @@ export function logHoleCount(d: number, beta: number, count: ResolvedCount, gap:
   const rounding = EPSILON * (4 + 2 * Math.abs(foot));
   if (!(below.log > negative.log)) return { log: Number.NEGATIVE_INFINITY, error: 0 };
   const log = logSubExpKernel(below.log, negative.log);
-  const error = errorShare(below, log) + errorShare(negative, log);
+  const error =
+    errorShare(below.log, below.error, log) + errorShare(negative.log, negative.error, log);
   return { log: foot + log, error: error + rounding };
 }
 
@@ -98,7 +92,8 @@ export function logUpperBound(
   if (!(log < 0)) return certain;
   if (log === Number.NEGATIVE_INFINITY) return { log, error: Number.POSITIVE_INFINITY };
   // each by its share: the difference of counts in `holes` has few digits where h is tiny
-  const error = errorShare(holes, log) + errorShare(outside, log);
+  const error =
+    errorShare(holes.log, holes.error, log) + errorShare(outside.log, outside.error, log);
   return { log, error: error + 4 * EPSILON + EPSILON * Math.abs(log) };
 }
 

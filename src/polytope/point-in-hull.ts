@@ -6,7 +6,8 @@ import { type Count, type ResolvedCount, resolveCount } from '../count.ts';
 import { checkFinite, checkInteger, checkOptions, DomainError } from '../domain.ts';
 import { FixedQuerySequence } from '../numeric/fixed-query.ts';
 import { paritySplit } from '../numeric/parity-split.ts';
-import { certainty, Probability, probabilityFromTail } from '../probability.ts';
+import { complementError, errorShare } from '../numeric/stated-error.ts';
+import { certainty, complementOf, Probability, probabilityFromTail } from '../probability.ts';
 import { logSumExpKernel } from '../special/log-domain.ts';
 import { logNormalCdfKernel } from '../special/normal.ts';
 
@@ -151,13 +152,9 @@ function mean(all: readonly Probability[]): Probability {
   for (const p of all) {
     value += p.value / all.length;
     complement += p.complement / all.length;
-    // Error of this tail of one of them, as a share of the mean of the tail.
-    const own = lower ? p.log : p.logComplement;
-    const small = lower === p.log <= p.logComplement;
-    const tail = lower ? p.value : p.complement;
-    const relative = small ? p.logError : (p.logError * (1 - tail)) / tail;
-    const share = Math.exp(own - (lower ? log : logComplement) - size);
-    if (share > 0) error += share * relative;
+    const tail = lower ? complementOf(p) : p;
+    const sum = (lower ? log : logComplement) + size;
+    error += errorShare(tail.logComplement, complementError(tail), sum);
   }
   return new Probability(
     value,

@@ -6,10 +6,10 @@ import { wendel } from '../conic/wendel.ts';
 import { checkChoice, checkInteger, checkOptions } from '../domain.ts';
 import { EPSILON } from '../epsilon.ts';
 import { LogNumber } from '../log-number.ts';
+import { complementError, sumOfLogs } from '../numeric/stated-error.ts';
 import { certainty, complementOf, type Probability } from '../probability.ts';
-import { logAddExpKernel } from '../special/log-domain.ts';
 import { MAX_FACE_DIMENSION } from './face-options.ts';
-import { complementError, faceLoss, logChoices } from './gaussian-faces.ts';
+import { faceLoss, logChoices } from './gaussian-faces.ts';
 
 /** Arguments of {@link projectedFaces}. */
 export interface ProjectedFacesArgs {
@@ -107,13 +107,8 @@ export function projectedFaces(args: ProjectedFacesArgs): ProjectedFaces {
   }
   const { expected, survival } = result(choices, bound, faceLoss(count, d, v, 'withCentre'));
   const central = result(logChoices(count, k, error), error[0] as number, wendel(n - k, d - k));
-  const log = logAddExpKernel(expected.log, central.expected.log);
-  const share = Math.exp(central.expected.log - log);
-  const logError =
-    (1 - share) * expected.logError +
-    (share > 0 ? share * central.expected.logError : 0) +
-    (log > 0 ? EPSILON * log : 0);
-  return { expected: LogNumber.fromLog(log, logError), survival };
+  const { log, logError } = central.expected;
+  return { expected: sumOfLogs(expected.log, expected.logError, log, logError), survival };
 }
 
 /** Number of faces times the share that survives. */
