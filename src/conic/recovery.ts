@@ -88,16 +88,16 @@ export function recoverySuccess(args: RecoveryArgs): Probability {
   checkInteger(fn, 'n', n, 1);
   checkInteger(fn, box ? 'free' : 'sparsity', support, 0, n);
   checkInteger(fn, 'measurements', measurements, 0, n);
-  if (measurements === n) return certain();
+  if (measurements === n) return certainty(true);
   if (model === 'l1' || model === 'nonnegativeL1') {
-    if (support === 0) return certain();
+    if (support === 0) return certainty(true);
     // From here on measurements < n. With all coordinates in the support the cone is a half-space.
-    if (support === n) return complementOf(certain());
+    if (support === n) return certainty(false);
     return l1Success(model, n, support, measurements);
   }
   // The kernel misses R^s x R_+^(n - s): no positive combination of n - s random vectors in R^(m - s)
   if (measurements <= support) {
-    return measurements < support || support < n ? complementOf(certain()) : certain();
+    return certainty(measurements === support && support === n);
   }
   return complementOf(wendel(n - support, measurements - support));
 }
@@ -135,10 +135,6 @@ function l1Success(
     }
   }
   return complementOf(paritySplit(term, measurements, first, last));
-}
-
-function certain(): Probability {
-  return certainty(true);
 }
 
 /** Arguments of {@link recoveryBounds}. */
@@ -220,8 +216,8 @@ export function recoveryBounds(args: RecoveryBoundsArgs): {
     above ? 'upper' : 'lower',
     Number.isFinite(log) ? rounding : 0,
   );
-  const none = complementOf(certain());
-  return above ? { lower: bound, upper: certain() } : { lower: none, upper: bound };
+  const none = certainty(false);
+  return above ? { lower: bound, upper: certainty(true) } : { lower: none, upper: bound };
 }
 
 /** a h(x/a) with h(u) = (1 + u) log(1 + u) - u, for x >= -a; infinite below and at a = 0 < x. */

@@ -9,6 +9,7 @@ import { targetOf } from '../numeric/target.ts';
 import { certainty, type Probability, probabilityFromTail } from '../probability.ts';
 import { checkProbability } from '../special/probability-argument.ts';
 import {
+  type FacetCount,
   type FacetModel,
   facetModel,
   facetsBeyond,
@@ -89,14 +90,14 @@ export function facetHeight(args: FacetHeightArgs): FacetHeight {
   const count = resolveCount(fn, 'n', args.n, d + 1);
   const model = facetModel(law, d);
   const bounded = law.family === 'beta';
-  const { mean, variance } = heightMoments(model, count);
+  const { mean, variance, total } = heightMoments(model, count);
   const deviation = Math.sqrt(variance);
   const cdf = (x: number): Probability => {
     checkNumber('facetHeight.cdf', 'x', x);
     if (Math.abs(x) === Number.POSITIVE_INFINITY || (bounded && Math.abs(x) >= 1)) {
       return certainty(x >= 0);
     }
-    return heightCdf(model, count, x, (x - mean) / deviation);
+    return heightCdf(model, count, total, x, (x - mean) / deviation);
   };
   return Object.freeze({
     mean,
@@ -108,24 +109,24 @@ export function facetHeight(args: FacetHeightArgs): FacetHeight {
       const end = bounded ? 1 : Number.POSITIVE_INFINITY;
       if (target.log === Number.NEGATIVE_INFINITY) return -end;
       if (target.logComplement === Number.NEGATIVE_INFINITY) return end;
-      return heightQuantile(model, count, target, mean, deviation, end);
+      return heightQuantile(model, count, total, target, mean, deviation, end);
     },
     logPdf: (x: number): number => {
       checkNumber('facetHeight.logPdf', 'x', x);
       if ((bounded && Math.abs(x) >= 1) || d * x * x > LARGEST_SQUARE) {
         return Number.NEGATIVE_INFINITY;
       }
-      return logFacetDensity(model, count, x) - facetTotal(model, count, 'line').log;
+      return logFacetDensity(model, count, x) - total.log;
     },
     limit: bounded ? Math.sqrt(-Math.expm1((-2 * count.log) / d)) : Math.sqrt(2 * count.log),
   });
 }
 
-/** Mean and variance from one integral, about the height of its reference point. */
+/** Mean and variance, about the height of the reference point of the integral, and the number of facets. */
 function heightMoments(
   model: FacetModel,
   count: ResolvedCount,
-): { mean: number; variance: number } {
+): { mean: number; variance: number; total: FacetCount } {
   const { tail } = model;
   let start = Number.NaN;
   const shift = (): number => {
@@ -139,17 +140,18 @@ function heightMoments(
     return x * x;
   };
   const second = facetTotal(model, count, 'line', [square]);
-  return { mean: start + middle, variance: second.means[0] as number };
+  return { mean: start + middle, variance: second.means[0] as number, total: first };
 }
 
 /** The cdf at x, which lies `offset` standard deviations from the mean. */
 function heightCdf(
   model: FacetModel,
   count: ResolvedCount,
+  total: FacetCount,
   x: number,
   offset: number,
 ): Probability {
-  if (!(Math.abs(offset) < FAR)) return farCdf(model, count, x, offset);
+  if (!(Math.abs(offset) < FAR)) return farCdf(model, count, total, x, offset);
   const below = facetsBeyond(model, count, x, -1);
   const above = facetsBeyond(model, count, x, 1);
   const lower = below.log <= above.log;
@@ -158,18 +160,23 @@ function heightCdf(
   const log = small.log - large.log - Math.log1p(Math.exp(small.log - large.log));
   const error = small.error - small.commonError + large.error - large.commonError;
   // neither integral is resolved beside so many points
-  if (!(error < 1)) return farCdf(model, count, x, offset);
+  if (!(error < 1)) return farCdf(model, count, total, x, offset);
   return probabilityFromTail(Math.exp(log), log, lower ? 'lower' : 'upper', error);
 }
 
 /** The same so far from the mean that one side has all but nothing. */
-function farCdf(model: FacetModel, count: ResolvedCount, x: number, offset: number): Probability {
+function farCdf(
+  model: FacetModel,
+  count: ResolvedCount,
+  total: FacetCount,
+  x: number,
+  offset: number,
+): Probability {
   const side = offset < 0 ? 'lower' : 'upper';
   if (!(offset * offset < LARGEST_SQUARE)) {
     return probabilityFromTail(0, Number.NEGATIVE_INFINITY, side, Number.POSITIVE_INFINITY);
   }
   const beyond = facetsBeyond(model, count, x, offset < 0 ? -1 : 1);
-  const total = facetTotal(model, count, 'line');
   const log = Math.min(0, beyond.log - total.log);
   return probabilityFromTail(Math.exp(log), log, side, beyond.error + total.error);
 }
@@ -186,6 +193,7 @@ const COARSE = 1e-12;
 function heightQuantile(
   model: FacetModel,
   count: ResolvedCount,
+  total: FacetCount,
   target: Probability,
   mean: number,
   deviation: number,
@@ -193,10 +201,9 @@ function heightQuantile(
 ): number {
   const lower = target.log <= target.logComplement;
   const goal = lower ? target.log : target.logComplement;
-  const total = facetTotal(model, count, 'line').log;
   const sign = lower ? 1 : -1;
   const gapAt = (x: number): number => {
-    const p = heightCdf(model, count, x, (x - mean) / deviation);
+    const p = heightCdf(model, count, total, x, (x - mean) / deviation);
     return (lower ? p.log : p.logComplement) - goal;
   };
   // between the last double below 1 and 1
@@ -213,7 +220,7 @@ function heightQuantile(
     // the cdf rises: too much of the lower tail, or too little of the upper one, means x is too high
     if (gap * sign > 0) high = x;
     else low = x;
-    const slope = Math.exp(logFacetDensity(model, count, x) - total - log);
+    const slope = Math.exp(logFacetDensity(model, count, x) - total.log - log);
     // far out the logarithm itself falls like n times a tail: Newton's rule for its logarithm
     const change = log < -1 && goal < -1 ? log * Math.log(log / goal) : Math.min(gap, 3);
     let next = x - (sign * change) / slope;
