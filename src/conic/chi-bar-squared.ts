@@ -11,7 +11,7 @@ import { targetOf } from '../numeric/target.ts';
 import type { Probability } from '../probability.ts';
 import { incompleteBetaKernel } from '../special/incomplete-beta.ts';
 import { incompleteBetaInverse } from '../special/incomplete-beta-inverse.ts';
-import { gammaTailError, gammaTailKernel } from '../special/incomplete-gamma.ts';
+import { GAMMA_TAIL_SLOTS, gammaTailError, gammaTailKernel } from '../special/incomplete-gamma.ts';
 import { gammaInverseKernel } from '../special/incomplete-gamma-inverse.ts';
 import { logBetaKernel } from '../special/log-beta.ts';
 import { logGammaKernel } from '../special/log-gamma.ts';
@@ -54,7 +54,7 @@ export interface EBarSquaredOptions {
   readonly observations: number;
 }
 
-const GAMMA: Float64Array = /* @__PURE__ */ new Float64Array(4);
+const GAMMA: Float64Array = /* @__PURE__ */ new Float64Array(GAMMA_TAIL_SLOTS);
 
 const chiSquaredLaws: Component = {
   end: Infinity,

@@ -2,7 +2,7 @@
  * The logarithm of a ratio of gamma functions at a real and a complex point.
  */
 
-import { complexLog1pmx, complexRemainder } from '../special/complex-stirling.ts';
+import { complexLog1pmx, complexRemainder, logAbsOnePlus } from '../special/complex-stirling.ts';
 
 const WORK: Float64Array = /* @__PURE__ */ new Float64Array(2);
 
@@ -20,7 +20,7 @@ export function addGammaRatio(
 ): void {
   const wRe = hRe / y;
   const wIm = hIm / y;
-  const logRe = 0.5 * Math.log1p(wRe * (2 + wRe) + wIm * wIm);
+  const logRe = logAbsOnePlus(wRe, wIm);
   const logIm = Math.atan2(wIm, 1 + wRe);
   complexLog1pmx(wRe, wIm, logRe, logIm, WORK);
   const excessRe = WORK[0] as number;

@@ -261,6 +261,7 @@ function halfLineRange(Z: number, m: number): readonly [number, number] {
   return [peak, end];
 }
 
+/** Four numbers for each of the BLOCK. */
 const SUMS: Float64Array = /* @__PURE__ */ new Float64Array(24);
 
 /** log |w(Zx / sqrt 2) sech(v + i beta)| on the line. */

@@ -13,6 +13,7 @@
  * exponentially convergent trapezoidal rule, SIAM Review 56 (2014), doi 10.1137/130932132.
  */
 import { EPSILON } from '../epsilon.ts';
+import { logAbsOnePlus } from '../special/complex-stirling.ts';
 import { logGammaRatioKernel } from '../special/log-gamma.ts';
 import { addGammaRatio } from './complex-gamma-ratio.ts';
 import { fewFailures } from './few-failures.ts';
@@ -208,7 +209,7 @@ function addLogRatios(
       const wRe = hRe * inverse;
       const wIm = hIm * inverse;
       if (often) {
-        logRe += 0.5 * Math.log1p(wRe * (2 + wRe) + wIm * wIm);
+        logRe += logAbsOnePlus(wRe, wIm);
         argument += Math.atan2(wIm, 1 + wRe);
         continue;
       }

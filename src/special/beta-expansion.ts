@@ -22,6 +22,7 @@ import { millsRatioKernel } from './error-function.ts';
 
 /** Enough from V = 15, z^2 = 0.9 V on. */
 const MAX_TERMS = 32;
+/** Coefficients up to the one after MAX_TERMS. */
 const u = /* @__PURE__ */ new Float64Array(34);
 const c = /* @__PURE__ */ new Float64Array(34);
 

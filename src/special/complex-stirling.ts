@@ -1,7 +1,12 @@
 /**
- * Two pieces of the logarithm of the gamma function at a complex argument: what is left of log(1 + t)
- * and Stirling's remainder. Both write the real and the imaginary part to `out[0]` and `out[1]`.
+ * Pieces of the logarithm of the gamma function at a complex argument: log(1 + t), what is left of it
+ * beyond t, and Stirling's remainder. The last two write real and imaginary part to `out[0]` and `out[1]`.
  */
+
+/** log |1 + x + i y| */
+export function logAbsOnePlus(x: number, y: number): number {
+  return 0.5 * Math.log1p(x * (2 + x) + y * y);
+}
 
 /** log(1 + t) - t at t = x + i y, |t| < 1; the logarithm itself is given as well. */
 export function complexLog1pmx(

@@ -5,7 +5,7 @@
  * places of the array to work in. z = r e^(i theta) is the point, Q(z) = prod_{i < n} (z + c + i).
  */
 
-import { complexLog1pmx, complexRemainder } from './complex-stirling.ts';
+import { complexLog1pmx, complexRemainder, logAbsOnePlus } from './complex-stirling.ts';
 
 /** Factors of the product that are multiplied directly; the rest is a ratio of gamma functions. */
 export const DIRECT_FACTORS = 12;
@@ -103,9 +103,4 @@ export function outerTerm(
   const imaginary = n * firstY + (x * lambdaY + y * lambdaX) + (n - 0.5) * logY;
   out[0] = real + (remainderX - (out[0] as number));
   out[1] = imaginary + (remainderY - (out[1] as number)) + m * theta;
-}
-
-/** log |1 + x + i y| */
-function logAbsOnePlus(x: number, y: number): number {
-  return 0.5 * Math.log1p(x * (2 + x) + y * y);
 }
