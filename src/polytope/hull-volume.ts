@@ -11,6 +11,8 @@ import { LogNumber } from '../log-number.ts';
 import { BetaTail } from '../numeric/beta-tail.ts';
 import { NormalTail } from '../numeric/normal-tail.ts';
 import { orderStatisticExpectation } from '../numeric/order-statistic.ts';
+import { complementError } from '../numeric/stated-error.ts';
+import { complementOf } from '../probability.ts';
 import {
   checkDimension,
   type Hull,
@@ -116,11 +118,12 @@ function expectedVolume(fn: string, args: ExpectedHullVolumeArgs, k: number): Lo
   const law = checkLaw(fn, args.law, FAMILIES, d);
   const hull = resolveHull(fn, args.hull);
   const count = resolvePoints(fn, args.n);
-  const ball = logBallIntrinsicVolumeKernel(d, k);
-  const ballError = EPSILON * (2 + 2 * Math.abs(ball) + 0.5 * k);
+  const rounding = new Float64Array(1);
+  const ball = logBallIntrinsicVolumeKernel(d, k, rounding);
+  const ballError = rounding[0] as number;
   if (law.family === 'beta') {
     const ratio = volumeRatioKernel(k, resolveMarginal(fn, law, d), count, hull);
-    const error = ratio.value <= 0.5 ? ratio.logError : ratio.logError * ratio.complement + EPSILON;
+    const error = complementError(complementOf(ratio)) + EPSILON;
     return LogNumber.fromLog(ball + ratio.log, ballError + error);
   }
   if (hull === 'plain' ? count.n <= k : count.n < k) {

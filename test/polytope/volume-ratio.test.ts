@@ -368,3 +368,17 @@ it('has the complement 2/(n + 1) on the line, through 2^53', () => {
     expect(complement * (n / 2)).toBeCloseTo(1, 12);
   }
 });
+
+it('states the error of the volume of the ball itself', () => {
+  // so many points fill the ball: log C(d, k) + log kappa_d / kappa_(d - k), mpmath with 60 digits
+  for (const [d, k, exact] of [
+    [300, 93, 10.8744972838103042974892586],
+    [200, 100, -22.2718782300419561618248020023],
+    [400, 17, 32.8610998549744133798193590272],
+  ] as const) {
+    const n = LogNumber.fromLog(50_000);
+    const { log, logError } = expectedHullIntrinsicVolume({ n, d, k, law: uniformSphere() });
+    expect(Math.abs(log - exact)).toBeLessThanOrEqual(logError);
+    expect(logError).toBeLessThan(2e-13);
+  }
+});
