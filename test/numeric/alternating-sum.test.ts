@@ -27,6 +27,8 @@ describe('alternatingSum', () => {
     ['pi / 4', (i: number) => sign(i) / (2 * i + 1), Math.PI / 4, 1e-13],
     // 20 e^20 E_1(20), whose asymptotic series has a least term of 5e-9; mpmath
     ['a divergent series', (i: number) => sign(i) * scaledFactorial(i), 0.95437090991921683, 1e-12],
+    // falls faster than any power; mpmath
+    ['a theta series', (i: number) => sign(i) * Math.exp(-0.3 * i * i), 0.50086713230738451, 1e-15],
     ['a finite sum', (i: number) => (i < 3 ? sign(i) * (3 - i) : 0), 2, 1e-14],
   ] as const)('finds %s within its error', (_, term, exact, useful) => {
     const [sum, error] = sumOf(term);

@@ -6,6 +6,7 @@ import {
   LogNumber,
   Probability,
   uniformBall,
+  uniformSphere,
 } from 'hullgauge';
 import { expect, test } from 'vitest';
 
@@ -25,6 +26,18 @@ test('the wrong side of the law of very many heights', () => {
     expect(log).toBeGreaterThanOrEqual(last * (1 + 1e-12));
     last = log;
   }
+});
+
+// on the sphere of R^3 (1 + H)/2 has the law Beta(n - 1, 2); mpmath with 60 digits
+test.each([
+  [-0.9, -2995732273523.415755384733],
+  [-0.5, -1386294361091.160985429867],
+  [-0.999999999, -21416413045739.24089477705],
+])('the slope at a cut that no integral resolves, %f', (x, log) => {
+  const height = facetHeight({ n: 1e12, d: 3, law: uniformSphere() });
+  const p = height.cdf(x);
+  expect(Math.abs(p.log - log)).toBeLessThan(0.01);
+  expect(Math.abs(p.log - log)).toBeLessThan(p.logError);
 });
 
 test.each([1e300, 1.7e308])('quantiles in the far tail of %d heights', (n) => {
